@@ -1,0 +1,17 @@
+# SPDX-License-Identifier: Apache-2.0
+# whorl_stage(NAME [DIR folder] LINK what.. [PRIVATE what..]): one library from all sources of a stage's folder.
+function(whorl_stage name)
+  cmake_parse_arguments(ARG "" "DIR" "LINK;PRIVATE" ${ARGN})
+  if(NOT ARG_DIR)
+    set(ARG_DIR ${PROJECT_SOURCE_DIR}/src/${name})
+  endif()
+  file(GLOB_RECURSE sources CONFIGURE_DEPENDS ${ARG_DIR}/*.cpp)
+  list(FILTER sources EXCLUDE REGEX "/app/main\\.cpp$")
+  if(sources)
+    add_library(whorl_${name} STATIC ${sources})
+    target_link_libraries(whorl_${name} PUBLIC ${ARG_LINK} PRIVATE whorl_options ${ARG_PRIVATE})
+  else()
+    add_library(whorl_${name} INTERFACE)
+    target_link_libraries(whorl_${name} INTERFACE ${ARG_LINK})
+  endif()
+endfunction()

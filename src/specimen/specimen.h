@@ -1,0 +1,125 @@
+// SPDX-License-Identifier: Apache-2.0
+// What a scene file states, as typed values that know their place in the file (format 1).
+#pragma once
+
+#include "diagnostics/position.h"
+#include "math/vec.h"
+
+#include <optional>
+#include <string>
+#include <vector>
+
+namespace whorl::specimen {
+
+/// A value with the place where the file states it; `given` is false for a default.
+template <class T>
+struct Stated {
+  T value{};
+  diagnostics::Position where{};
+  bool given = false;
+  operator const T&() const { return value; }
+};
+
+enum class Coiling { kDextral, kSinistral };
+enum class Mineral { kAragonite, kCalcite };
+enum class WallGrowth { kProportional, kConstant };
+enum class SizeKind { kShellHeight, kShellWidth, kApertureHeight, kApertureWidth };
+enum class Background { kWhite, kBlack, kClear };
+enum class Letters { kNone, kUpper, kLower, kLowerInBrackets };
+enum class Quality { kDraft, kProof, kPrint };
+enum class ViewName { kApertural, kAbapertural, kRightLateral, kLeftLateral, kApical, kUmbilical, kAxialSection, kFree };
+
+/// sRGB as printed, 0 .. 255 a channel.
+struct Colour {
+  unsigned char red = 0, green = 0, blue = 0;
+};
+
+struct Identity {
+  Stated<std::string> name, catalogue, author, locality, note, licence;
+  Stated<Coiling> coiling;
+  Stated<Mineral> mineral;
+};
+
+/// One expansion, or several by stages; stage whorls rise strictly. Between two stages ln W runs straight.
+struct Stage {
+  double whorl = 0.0, W = 1.0;
+};
+using Stages = std::vector<Stage>;  // one entry for a constant
+
+struct Growth {
+  Stated<double> whorls;
+  Stated<Stages> W;
+  Stated<double> D, T, start;
+  std::optional<Stated<Stages>> W_distance, W_depth, W_section;
+};
+
+struct Lobe {
+  Stated<double> at_deg, reach, width_deg;
+};
+
+struct Section {
+  Stated<double> S, roll_deg;
+  std::vector<Lobe> lobes;
+};
+
+struct Size {
+  Stated<SizeKind> kind;
+  Stated<double> mm;
+};
+
+struct Wall {
+  Stated<double> thickness_mm;
+  Stated<WallGrowth> growth;
+  Stated<double> columella;  // pillar radius / aperture half-breadth
+};
+
+struct Lip {
+  Stated<double> inclination_deg, thickness_mm;
+};
+
+struct Look {
+  Stated<Colour> exterior, interior, section;
+  Stated<double> gloss;
+};
+
+struct Light {
+  Stated<double> azimuth_deg, elevation_deg, softness_deg, fill;
+};
+
+struct Lamp {
+  Stated<double> behind_lip, radius_mm, strength, temperature_k;
+};
+
+struct Panel {
+  Stated<ViewName> view;
+  double azimuth_deg = 0.0, elevation_deg = 0.0;  // for ViewName::kFree
+  Stated<double> scale;                           // relative to the plate's common scale
+};
+
+struct Plate {
+  Stated<double> width_mm, resolution_ppi;
+  Stated<Background> background;
+  Stated<int> columns;
+  Stated<double> gap_mm;
+  Stated<Letters> letters;
+  Stated<double> bar_mm;  // 0 = by the 1-2-5 rule
+  Stated<Quality> quality;
+  std::vector<Panel> panels;
+};
+
+struct Specimen {
+  std::string source;  // the file's name as given, "-" for standard input
+  std::string text;    // its bytes, as read
+  Identity identity;
+  Growth growth;
+  Section section;
+  Size size;
+  Wall wall;
+  Lip lip;
+  Look look;
+  Light light;
+  std::vector<Lamp> lamps;
+  Plate plate;
+};
+
+}  // namespace whorl::specimen

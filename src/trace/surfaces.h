@@ -1,0 +1,44 @@
+// SPDX-License-Identifier: Apache-2.0
+// What light meets: the contract between things that can be hit and the path tracer.
+#pragma once
+
+#include "math/vec.h"
+
+#include <cstdint>
+#include <limits>
+
+namespace whorl::trace {
+
+/// Lengths in millimetres, in the frame of the (dextral) solid: axis of coiling = z, pole at the origin.
+struct Ray {
+  Vec3f origin;
+  Vec3f direction;  // unit
+  float t_min = 0.0f;
+  float t_max = std::numeric_limits<float>::infinity();
+};
+
+/// What a place on the picture shows. The numbers are those of the `part` layer (scene-file contract).
+enum class Part : std::uint8_t { kNothing = 0, kExterior = 1, kInterior = 2, kCutFace = 3, kOrnament = 4, kLamp = 5 };
+
+struct Hit {
+  float t = 0.0f;
+  Vec3f position;           // on the surface
+  Vec3f normal;             // unit, out of the shell, towards the air
+  Part part = Part::kNothing;
+  float turn = 0.0f;        // whorls from the pole at this place
+  float around_deg = 0.0f;  // section angle: 0 away from the axis, 90 towards the apex
+  float safe_offset = 0.0f; // a new ray must start this far along the normal to be clear of this surface, mm
+};
+
+/// An opaque solid. Every function may be called from any thread at once.
+/// Rays start in air. A ray that finds the solid at its very start has hit it there.
+class Surfaces {
+ public:
+  virtual ~Surfaces() = default;
+  /// The first hit in [t_min, t_max]; false and `hit` untouched where there is none.
+  virtual bool closest(const Ray& ray, Hit& hit) const noexcept = 0;
+  /// Whether anything is hit in [t_min, t_max].
+  virtual bool occluded(const Ray& ray) const noexcept = 0;
+};
+
+}  // namespace whorl::trace
