@@ -1,10 +1,12 @@
 # SPDX-License-Identifier: Apache-2.0
 # Finds the third-party libraries; what differs between Debian 12 and 13 is settled here.
 find_package(Threads REQUIRED)
-find_package(Imath REQUIRED)
+# By pkg-config: Debian's CMake files of these two insist on tools and Python modules that nothing here needs.
+find_package(PkgConfig REQUIRED)
+pkg_check_modules(IMATH REQUIRED IMPORTED_TARGET Imath)
+pkg_check_modules(OIIO REQUIRED IMPORTED_TARGET OpenImageIO)
 find_package(TBB REQUIRED)
 find_package(fmt REQUIRED)
-find_package(OpenImageIO REQUIRED)
 find_package(nlohmann_json REQUIRED)
 find_package(CLI11 REQUIRED)
 find_package(OpenSSL REQUIRED COMPONENTS Crypto)
