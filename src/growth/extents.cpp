@@ -1,0 +1,128 @@
+// SPDX-License-Identifier: Apache-2.0
+// Sampled extents of the outlines. Sampling errors are of second order in the spacing: under 2e-5 of the size.
+#include "growth/extents.h"
+
+#include <algorithm>
+#include <limits>
+
+namespace whorl::growth {
+namespace {
+
+Vec3 in_space(HalfPlanePoint p, double theta) { return {p.rho * std::cos(theta), p.rho * std::sin(theta), p.z}; }
+
+HalfPlanePoint outline_point(const Exterior& shell, double theta, double psi) {
+  const double R = shell.reach.value(psi);
+  return shell.law.to_half_plane(shell.law.at(theta), {R * std::cos(psi), R * std::sin(psi)});
+}
+
+bool inside_outline(const Exterior& shell, double theta, HalfPlanePoint p) {
+  const SectionPoint q = shell.law.to_section(shell.law.at(theta), p);
+  return std::hypot(q.x, q.y) < shell.reach.value(std::atan2(q.y, q.x));
+}
+
+}  // namespace
+
+ChamberShape embryonic_chamber(const CoilingLaw& law) {
+  // Half a half-breadth beyond the first section's centre: closes the axis for every D and stays under the next whorl.
+  constexpr double kPastCentre = 0.5;
+  const Station s = law.at(law.theta_start);
+  return {s.depth, s.distance + kPastCentre * s.half_breadth, law.S * s.half_breadth};
+}
+
+double front_theta(const Exterior& shell, double psi) {
+  double theta = shell.law.theta_lip;
+  for (int round = 0; round < 50; ++round) {
+    const HalfPlanePoint p = outline_point(shell, theta, psi);
+    const double next = shell.law.theta_lip + front_lead(shell.tan_inclination, shell.law.depth, p);
+    if (std::abs(next - theta) < 1e-13) break;
+    theta = next;
+  }
+  return theta;
+}
+
+Mouth mouth(const Exterior& shell) {
+  constexpr int kSamples = 16384;
+  double z_lo = std::numeric_limits<double>::infinity(), z_hi = -z_lo, rho_lo = z_lo, rho_hi = -z_lo;
+  const auto take = [&](HalfPlanePoint p) {
+    z_lo = std::min(z_lo, p.z);
+    z_hi = std::max(z_hi, p.z);
+    rho_lo = std::min(rho_lo, p.rho);
+    rho_hi = std::max(rho_hi, p.rho);
+  };
+  const auto covered = [&](double theta, HalfPlanePoint p) {
+    for (double earlier = theta - kTwoPi; earlier > shell.law.theta_start; earlier -= kTwoPi)
+      if (inside_outline(shell, earlier, p)) return true;
+    return false;
+  };
+  for (int i = 0; i < kSamples; ++i) {
+    const double psi = kTwoPi * i / kSamples;
+    const double theta = front_theta(shell, psi);
+    const HalfPlanePoint p = outline_point(shell, theta, psi);
+    if (p.rho >= 0.0 && !covered(theta, p)) take(p);
+  }
+  // Where earlier whorls stand in the mouth, their outline bounds it too.
+  for (int turn = 1; shell.law.theta_lip - turn * kTwoPi > shell.law.theta_start; ++turn)
+    for (int i = 0; i < kSamples; ++i) {
+      const double psi = kTwoPi * i / kSamples;
+      double theta = shell.law.theta_lip;
+      HalfPlanePoint p{};
+      for (int round = 0; round < 20; ++round) {
+        p = outline_point(shell, theta - turn * kTwoPi, psi);
+        theta = shell.law.theta_lip + front_lead(shell.tan_inclination, shell.law.depth, p);
+      }
+      if (p.rho >= 0.0 && inside_outline(shell, theta, p) && !covered(theta - 1e-9, p)) take(p);
+    }
+  return {z_hi - z_lo, rho_hi - rho_lo};
+}
+
+std::vector<Vec3> surface_points(const Exterior& shell, int turn_steps, int around) {
+  std::vector<Vec3> points;
+  const ChamberShape chamber = embryonic_chamber(shell.law);
+  for (int i = 0; i <= around / 2; ++i)
+    for (int j = 0; j < around; ++j) {
+      const double polar = kTwoPi * i / around, azimuth = kTwoPi * j / around;
+      points.push_back({chamber.radius * std::sin(polar) * std::cos(azimuth),
+                        chamber.radius * std::sin(polar) * std::sin(azimuth),
+                        chamber.centre_z - chamber.half_height * std::cos(polar)});
+    }
+  for (int j = 0; j < around; ++j) {
+    const double psi = kTwoPi * j / around, end = front_theta(shell, psi);
+    const int steps = std::max(1, static_cast<int>(std::ceil((end - shell.law.theta_start) / kTwoPi * turn_steps)));
+    for (int i = 0; i <= steps; ++i) {
+      const double theta = shell.law.theta_start + (end - shell.law.theta_start) * i / steps;
+      HalfPlanePoint p = outline_point(shell, theta, psi);
+      p.rho = std::max(p.rho, 0.0);
+      points.push_back(in_space(p, theta));
+    }
+  }
+  return points;
+}
+
+double height_of(const std::vector<Vec3>& points) {
+  double lo = std::numeric_limits<double>::infinity(), hi = -lo;
+  for (const Vec3& p : points) {
+    lo = std::min(lo, p.z);
+    hi = std::max(hi, p.z);
+  }
+  return hi - lo;
+}
+
+double width_of(const std::vector<Vec3>& points) {
+  // The greatest caliper width is the greatest distance of two points of the projection onto the plane across the axis:
+  // it is reached between points that are extreme in some direction, so those are enough.
+  constexpr int kDirections = 720;
+  std::vector<const Vec3*> extreme;
+  for (int i = 0; i < kDirections; ++i) {
+    const double a = kTwoPi * i / kDirections, c = std::cos(a), s = std::sin(a);
+    const auto best = std::max_element(points.begin(), points.end(), [&](const Vec3& p, const Vec3& q) {
+      return p.x * c + p.y * s < q.x * c + q.y * s;
+    });
+    extreme.push_back(&*best);
+  }
+  double width = 0.0;
+  for (const Vec3* p : extreme)
+    for (const Vec3* q : extreme) width = std::max(width, std::hypot(p->x - q->x, p->y - q->y));
+  return width;
+}
+
+}  // namespace whorl::growth

@@ -1,0 +1,81 @@
+// SPDX-License-Identifier: Apache-2.0
+// The compiled scene: flat, immutable records linked by index. Only compile/ makes one, everything after reads it.
+#pragma once
+
+#include "growth/coiling_law.h"
+#include "growth/outline.h"
+
+#include <cstdint>
+#include <vector>
+
+namespace whorl::scene {
+
+/// Wyvill's kernel k(u) = (1 - u^2)^3 carries every density; a station's kernel reaches kSupport times the outline and
+/// the solid is where the density exceeds kLevel, which puts the surface exactly on the outline.
+inline constexpr double kSupport = 1.44;
+
+/// A station of the tube: one density primitive of the outer (additive) and one of the lumen's (subtractive) chain.
+/// Stations stand kStationSpacing of growth apart; cubic B-spline weights over four of them add up to one everywhere.
+struct Station {
+  std::uint32_t outer, hollow;  // indices of outlines
+};
+inline constexpr double kStationSpacing = kTwoPi / 48.0;
+
+/// A density primitive in space, summed with the stations of its own whorl. `to_unit` maps the offset from the centre
+/// (scaled by the support) into the unit ball; `weight` > 0 adds, < 0 cuts; `hollow` joins the lumen's chain instead.
+struct Ellipsoid {
+  Vec3 centre;
+  Vec3 to_unit[3];  // rows
+  double weight;
+  double theta;     // growth angle of its place
+  bool hollow;
+};
+
+/// The embryonic shell: a hollow ellipsoid of revolution on the axis that closes the apex; the first half whorl's lumen opens into it.
+struct Chamber {
+  double centre_z, radius, half_height;   // outer semi-axes
+  double hollow_radius, hollow_half_height;
+  bool open;                              // into the tube
+};
+
+/// The columella: a pillar on the axis. Its squared radius by depth is a spline over [top_z, bottom_z] laid on half a turn
+/// (mirrored on the other half); it is negative beyond the pillar's tapering ends.
+struct Pillar {
+  bool present = false;
+  double top_z = 0.0, bottom_z = 0.0;
+  PeriodicSpline squared_radius{-1.0};
+  double scale = 1.0;  // its radius at the base: turns squared lengths into lengths
+};
+
+/// The growth front at the lip: a surface through the section's centre at theta_lip, inclined to the axis.
+struct Front {
+  double tan_inclination = 0.0, cos_inclination = 1.0;
+  double rim_radius = 0.0;  // half of the lip's thickness; the rim stands this far beyond theta_lip
+};
+
+struct Lamp {
+  Vec3 centre;
+  double radius = 0.0, strength = 0.0, temperature_k = 6500.0;
+};
+
+struct Scene {
+  growth::CoilingLaw law;
+  std::vector<growth::Outline> outlines;
+  std::vector<Station> stations;
+  double first_station_theta = 0.0;
+  std::vector<Ellipsoid> ellipsoids;
+  double theta_begin = 0.0;  // the tube's rounded end: nothing of it before
+  double theta_end = 0.0;    // nothing of it after
+  double cap_per_radian = 0.0;         // arc / half-breadth a radian, in the rounded end of the tube
+  double hollow_cap_per_radian = 0.0;  // the same for the lumen's end
+  Chamber chamber{};
+  Pillar pillar;
+  Front front;
+  growth::WallLaw wall;
+  std::vector<Lamp> lamps;
+  Box3 bounds;              // of the solid, with a little room
+  double height_mm = 0.0;   // along the axis, from the growth law
+  bool start_raised = false;  // whorls too small to draw were left to the embryonic cap
+};
+
+}  // namespace whorl::scene
