@@ -42,6 +42,7 @@ double front_theta(const Exterior& shell, double psi) {
 
 Mouth mouth(const Exterior& shell) {
   constexpr int kSamples = 16384;
+  constexpr int kTurns = 4;  // whorls older than this lie behind younger ones
   double z_lo = std::numeric_limits<double>::infinity(), z_hi = -z_lo, rho_lo = z_lo, rho_hi = -z_lo;
   const auto take = [&](HalfPlanePoint p) {
     z_lo = std::min(z_lo, p.z);
@@ -49,19 +50,19 @@ Mouth mouth(const Exterior& shell) {
     rho_lo = std::min(rho_lo, p.rho);
     rho_hi = std::max(rho_hi, p.rho);
   };
-  const auto covered = [&](double theta, HalfPlanePoint p) {
-    for (double earlier = theta - kTwoPi; earlier > shell.law.theta_start; earlier -= kTwoPi)
-      if (inside_outline(shell, earlier, p)) return true;
+  const auto covered = [&](double theta, HalfPlanePoint p, int own_turn) {
+    for (int turn = 1; turn <= kTurns && theta - turn * kTwoPi > shell.law.theta_start; ++turn)
+      if (turn != own_turn && inside_outline(shell, theta - turn * kTwoPi, p)) return true;
     return false;
   };
   for (int i = 0; i < kSamples; ++i) {
     const double psi = kTwoPi * i / kSamples;
     const double theta = front_theta(shell, psi);
     const HalfPlanePoint p = outline_point(shell, theta, psi);
-    if (p.rho >= 0.0 && !covered(theta, p)) take(p);
+    if (p.rho >= 0.0 && !covered(theta, p, 0)) take(p);
   }
   // Where earlier whorls stand in the mouth, their outline bounds it too.
-  for (int turn = 1; shell.law.theta_lip - turn * kTwoPi > shell.law.theta_start; ++turn)
+  for (int turn = 1; turn <= kTurns && shell.law.theta_lip - turn * kTwoPi > shell.law.theta_start; ++turn)
     for (int i = 0; i < kSamples; ++i) {
       const double psi = kTwoPi * i / kSamples;
       double theta = shell.law.theta_lip;
@@ -70,7 +71,7 @@ Mouth mouth(const Exterior& shell) {
         p = outline_point(shell, theta - turn * kTwoPi, psi);
         theta = shell.law.theta_lip + front_lead(shell.tan_inclination, shell.law.depth, p);
       }
-      if (p.rho >= 0.0 && inside_outline(shell, theta, p) && !covered(theta - 1e-9, p)) take(p);
+      if (p.rho >= 0.0 && inside_outline(shell, theta, p) && !covered(theta, p, turn)) take(p);
     }
   return {z_hi - z_lo, rho_hi - rho_lo};
 }
@@ -111,10 +112,15 @@ double width_of(const std::vector<Vec3>& points) {
   // The greatest caliper width is the greatest distance of two points of the projection onto the plane across the axis:
   // it is reached between points that are extreme in some direction, so those are enough.
   constexpr int kDirections = 720;
+  double farthest = 0.0;
+  for (const Vec3& p : points) farthest = std::max(farthest, std::hypot(p.x, p.y));
+  std::vector<Vec3> outer;  // a point nearer to the axis than half of the farthest can't end the greatest width
+  for (const Vec3& p : points)
+    if (std::hypot(p.x, p.y) >= 0.5 * farthest) outer.push_back(p);
   std::vector<const Vec3*> extreme;
   for (int i = 0; i < kDirections; ++i) {
     const double a = kTwoPi * i / kDirections, c = std::cos(a), s = std::sin(a);
-    const auto best = std::max_element(points.begin(), points.end(), [&](const Vec3& p, const Vec3& q) {
+    const auto best = std::max_element(outer.begin(), outer.end(), [&](const Vec3& p, const Vec3& q) {
       return p.x * c + p.y * s < q.x * c + q.y * s;
     });
     extreme.push_back(&*best);

@@ -96,6 +96,12 @@ Interval PeriodicSpline::bounds() const {
   return {*lo, *hi};
 }
 
+bool PeriodicSpline::close_to(const PeriodicSpline& other, double tolerance) const {
+  return std::equal(coefficients_.begin(), coefficients_.end(), other.coefficients_.begin(),
+                    other.coefficients_.end(),
+                    [&](double a, double b) { return std::abs(a - b) <= tolerance * std::abs(a); });
+}
+
 double PeriodicSpline::slope_bound() const {
   double largest = 0.0;
   const std::size_t n = coefficients_.size();

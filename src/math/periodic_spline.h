@@ -31,6 +31,8 @@ class PeriodicSpline {
   /// An upper bound of the derivative's absolute value.
   double slope_bound() const;
 
+  /// Whether no coefficient differs by more than `tolerance`, times its size.
+  bool close_to(const PeriodicSpline& other, double tolerance) const;
   bool operator==(const PeriodicSpline&) const = default;
 
  private:
