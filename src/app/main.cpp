@@ -1,3 +1,5 @@
 // SPDX-License-Identifier: Apache-2.0
 // The command's entry point.
-int main() { return 0; }
+#include "app/run.h"
+
+int main(int argc, char** argv) { return whorl::app::run(argc, argv); }
