@@ -1,0 +1,103 @@
+// SPDX-License-Identifier: Apache-2.0
+// Fetches a file in bounded memory and says what is not text.
+#include "specimen/scene_bytes.h"
+
+#include "specimen/text_check.h"
+
+#include <fmt/format.h>
+
+#include <cerrno>
+#include <system_error>
+
+#include <fcntl.h>
+#include <sys/stat.h>
+#include <unistd.h>
+
+namespace whorl::specimen {
+namespace {
+
+using diagnostics::FileTrouble;
+using diagnostics::Position;
+
+std::string reason(int error_number) { return std::generic_category().message(error_number); }
+
+class OpenFile {
+ public:
+  explicit OpenFile(const std::string& path)
+      : name_(path == "-" ? "standard input" : path),
+        fd_(path == "-" ? STDIN_FILENO : open(path.c_str(), O_RDONLY | O_CLOEXEC)) {
+    if (fd_ < 0) throw FileTrouble(fmt::format("cannot open {}: {}", name_, reason(errno)));
+  }
+  ~OpenFile() {
+    if (fd_ != STDIN_FILENO) close(fd_);
+  }
+  OpenFile(const OpenFile&) = delete;
+  OpenFile& operator=(const OpenFile&) = delete;
+
+  /// Bytes read, 0 at the end.
+  std::size_t read_some(char* to, std::size_t most) {
+    for (;;) {
+      const ssize_t count = read(fd_, to, most);
+      if (count >= 0) return static_cast<std::size_t>(count);
+      if (errno == EISDIR) throw FileTrouble(fmt::format("cannot read {}: it is a folder; a scene file is wanted", name_));
+      if (errno != EINTR) throw FileTrouble(fmt::format("cannot read {}: {}", name_, reason(errno)));
+    }
+  }
+
+ private:
+  std::string name_;
+  int fd_;
+};
+
+Position position_at(std::string_view bytes, std::size_t offset) {
+  const std::string_view before = bytes.substr(0, offset);
+  const std::size_t line_start = before.rfind('\n') + 1;  // npos + 1 is 0
+  const auto line = 1 + std::count(before.begin(), before.end(), '\n');
+  return {static_cast<std::uint32_t>(line), static_cast<std::uint32_t>(1 + count_characters(before.substr(line_start)))};
+}
+
+void check_lines(std::string_view bytes, ProblemList& problems) {
+  for (std::size_t start = 0; start < bytes.size();) {
+    const std::size_t end = std::min(bytes.find('\n', start), bytes.size());
+    if (end - start > kLongestLine) {
+      problems.add(position_at(bytes, start),
+                   fmt::format("this line has {} bytes; a line may have at most {}", end - start, kLongestLine));
+    }
+    start = end + 1;
+  }
+}
+
+}  // namespace
+
+std::string fetch_bytes(const std::string& path) {
+  OpenFile file(path);
+  std::string bytes(kLargestScene + 1, '\0');
+  std::size_t length = 0;
+  while (length < bytes.size()) {
+    const std::size_t count = file.read_some(bytes.data() + length, bytes.size() - length);
+    if (count == 0) break;
+    length += count;
+  }
+  bytes.resize(length);
+  return bytes;
+}
+
+void check_bytes(std::string_view bytes, ProblemList& problems) {
+  if (bytes.size() > kLargestScene) {
+    problems.add({}, "the file is larger than 1 MiB; a scene file has a few thousand bytes, is this the right file?");
+  } else if (bytes.empty()) {
+    problems.add({}, "the file is empty; a scene begins with the line: format = 1");
+  } else if (bytes.find_first_not_of(" \t\r\n") == std::string_view::npos) {
+    problems.add({}, "the file is blank; a scene begins with the line: format = 1");
+  } else if (const std::size_t nul = bytes.find('\0'); nul != std::string_view::npos) {
+    problems.add(position_at(bytes, nul), "the file holds a NUL byte: it is binary, not a text; a scene is a text file in TOML");
+  } else if (const auto bad = first_bad_byte(bytes)) {
+    problems.add(position_at(bytes, *bad),
+                 fmt::format("byte 0x{:02x} is not UTF-8; save the file with the encoding UTF-8",
+                             static_cast<unsigned char>(bytes[*bad])));
+  } else {
+    check_lines(bytes, problems);
+  }
+}
+
+}  // namespace whorl::specimen

@@ -1,0 +1,226 @@
+// SPDX-License-Identifier: Apache-2.0
+// The specimen, table by table.
+#include "specimen/scene_reader.h"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <array>
+
+namespace whorl::specimen {
+namespace {
+
+constexpr std::int64_t kFormat = 1;
+constexpr diagnostics::Position kTop{1, 1};
+// The embryonic shell, where the file does not say: three quarters of a whorl, and a quarter left to grow.
+constexpr double kUsualStart = 0.75, kLeftToGrow = 0.25;
+
+constexpr std::size_t kMostInList = 64;
+constexpr std::array kUsualViews{ViewName::kApertural, ViewName::kAbapertural, ViewName::kRightLateral,
+                                 ViewName::kApical,    ViewName::kUmbilical,   ViewName::kAxialSection};
+
+/// "lobe" of "section.lobe".
+std::string_view last_part(std::string_view name) {
+  const std::size_t dot = name.rfind('.');
+  return dot == std::string_view::npos ? name : name.substr(dot + 1);
+}
+
+}  // namespace
+
+void SceneReader::check_format() {
+  const toml::node* node = root_.get("format");
+  if (node != nullptr && node->is_integer() && node->as_integer()->get() > kFormat) {
+    problems_.add(position_of(*node), fmt::format("format = {}: this program reads format {}; a newer program is needed for this file",
+                                                  shown_value(*node), kFormat));
+  }
+}
+
+TableReader SceneReader::table(std::string_view name) {
+  const toml::node* node = root_.get(name);
+  const toml::table* found = node != nullptr ? node->as_table() : nullptr;
+  if (node != nullptr && found == nullptr) {
+    problems_.add(position_of(*node), fmt::format("\"{}\" is {}, wanted is a table: write {} in single brackets, its keys below", name,
+                                                  kind_of(*node), written_table(name)));
+  }
+  TableReader reader(found, name, found != nullptr ? position_of(*found) : kTop, problems_);
+  reader.refuse_unknown_keys();
+  return reader;
+}
+
+std::vector<TableReader> SceneReader::list(std::string_view name, const toml::table* parent) {
+  std::vector<TableReader> readers;
+  const toml::node* node = parent != nullptr ? parent->get(last_part(name)) : nullptr;
+  if (node == nullptr) return readers;
+  const toml::array* array = node->as_array();
+  const auto refuse = [&](const toml::node& wrong) {
+    problems_.add(position_of(wrong), fmt::format("\"{}\" holds {}, wanted is a list of tables: write {} in double brackets, once for each",
+                                                  name, kind_of(wrong), written_table(name)));
+  };
+  if (array == nullptr) {
+    refuse(*node);
+    return readers;
+  }
+  if (array->size() > kMostInList) {
+    problems_.add(position_of(*node), fmt::format("{} times {}; at most {} are allowed", array->size(), written_table(name), kMostInList));
+    return readers;
+  }
+  for (const toml::node& element : *array) {
+    if (const toml::table* found = element.as_table()) {
+      readers.emplace_back(found, name, position_of(*found), problems_).refuse_unknown_keys();
+    } else {
+      refuse(element);
+    }
+  }
+  return readers;
+}
+
+Identity SceneReader::read_identity() {
+  const TableReader t = table("specimen");
+  Identity identity;
+  identity.name = t.text("name");
+  identity.coiling = t.word<Coiling>("coiling");
+  identity.catalogue = t.text("catalogue");
+  identity.author = t.text("author");
+  identity.locality = t.text("locality");
+  identity.note = t.text("note");
+  identity.licence = t.text("licence");
+  identity.mineral = t.word<Mineral>("mineral");
+  return identity;
+}
+
+Growth SceneReader::read_growth() {
+  const TableReader t = table("growth");
+  Growth growth;
+  growth.whorls = t.number("whorls");
+  growth.W = t.stages("W");
+  growth.D = t.number("D");
+  growth.T = t.number("T");
+  growth.start = t.number("start", std::min(kUsualStart, growth.whorls - kLeftToGrow));
+  growth.W_distance = t.optional_stages("W_distance");
+  growth.W_depth = t.optional_stages("W_depth");
+  growth.W_section = t.optional_stages("W_section");
+  return growth;
+}
+
+Section SceneReader::read_section() {
+  const TableReader t = table("section");
+  Section section{t.number("S"), t.number("roll"), {}};
+  for (const TableReader& lobe : list("section.lobe", t.content())) {
+    section.lobes.push_back({lobe.number("at"), lobe.number("reach"), lobe.number("width")});
+  }
+  return section;
+}
+
+Size SceneReader::read_size() {
+  const TableReader t = table("size");
+  const std::vector<std::string_view> kinds = keys_of("size");
+  Size size;
+  std::string_view first;
+  for (std::size_t i = 0; i < kinds.size(); ++i) {
+    if (!t.states(kinds[i])) continue;
+    const Stated<double> mm = t.number(kinds[i]);
+    if (first.empty()) {
+      first = kinds[i];
+      size = {{static_cast<SizeKind>(i), mm.where, true}, mm};
+    } else {
+      problems_.add(mm.where, fmt::format("[size] states {} and {}: state exactly one, the others follow from the form", first, kinds[i]));
+    }
+  }
+  if (first.empty()) {
+    problems_.add(t.where(), fmt::format("[size] is missing its measurement: state exactly one of {}, {}, {}, {}, a number {}", kinds[0], kinds[1],
+                                         kinds[2], kinds[3], written_range(*find_key("size", kinds[0]))));
+  }
+  return size;
+}
+
+Wall SceneReader::read_wall() {
+  const TableReader t = table("wall");
+  return {t.number("thickness"), t.word<WallGrowth>("growth"), t.number("columella")};
+}
+
+Lip SceneReader::read_lip(const Wall& wall) {
+  const TableReader t = table("lip");
+  return {t.number("inclination"), t.number("thickness", wall.thickness_mm)};
+}
+
+Look SceneReader::read_look() {
+  const TableReader t = table("look");
+  return {t.colour("exterior"), t.colour("interior"), t.colour("section"), t.number("gloss")};
+}
+
+Light SceneReader::read_light() {
+  const TableReader t = table("light");
+  return {t.number("azimuth"), t.number("elevation"), t.number("softness"), t.number("fill")};
+}
+
+std::vector<Lamp> SceneReader::read_lamps() {
+  std::vector<Lamp> lamps;
+  for (const TableReader& t : list("lamp", &root_)) {
+    lamps.push_back({t.number("behind_lip"), t.number("radius"), t.number("strength"), t.number("temperature")});
+  }
+  return lamps;
+}
+
+Plate SceneReader::read_plate() {
+  const TableReader t = table("plate");
+  Plate plate;
+  plate.width_mm = t.number("width");
+  plate.resolution_ppi = t.number("resolution");
+  plate.background = t.word<Background>("background");
+  plate.columns = t.whole("columns");
+  plate.gap_mm = t.number("gap");
+  plate.letters = t.word<Letters>("letters");
+  plate.bar_mm = t.bar("bar");
+  plate.quality = t.word<Quality>("quality");
+  plate.panels = read_panels();
+  return plate;
+}
+
+Panel SceneReader::read_panel(const TableReader& t) {
+  Panel panel;
+  if (const toml::table* free_view = t.inner_table("view")) {
+    const TableReader v(free_view, "panel.view", position_of(*free_view), problems_);
+    v.refuse_unknown_keys();
+    panel.view = {ViewName::kFree, position_of(*free_view), true};
+    panel.azimuth_deg = v.number("azimuth");
+    panel.elevation_deg = v.number("elevation");
+  } else {
+    panel.view = t.word<ViewName>("view");
+  }
+  panel.scale = t.number("scale");
+  return panel;
+}
+
+std::vector<Panel> SceneReader::read_panels() {
+  std::vector<Panel> panels;
+  for (const TableReader& t : list("panel", &root_)) panels.push_back(read_panel(t));
+  if (panels.empty()) {
+    for (const ViewName view : kUsualViews) {
+      Panel panel;
+      panel.view.value = view;
+      panel.scale.value = 1.0;
+      panels.push_back(panel);
+    }
+  }
+  return panels;
+}
+
+Specimen SceneReader::read() {
+  const TableReader top(&root_, "", kTop, problems_);
+  top.refuse_unknown_keys();
+  top.whole("format");
+  Specimen specimen;
+  specimen.identity = read_identity();
+  specimen.growth = read_growth();
+  specimen.section = read_section();
+  specimen.size = read_size();
+  specimen.wall = read_wall();
+  specimen.lip = read_lip(specimen.wall);
+  specimen.look = read_look();
+  specimen.light = read_light();
+  specimen.lamps = read_lamps();
+  specimen.plate = read_plate();
+  return specimen;
+}
+
+}  // namespace whorl::specimen
