@@ -13,8 +13,8 @@ namespace whorl::transport {
 /// Layers that are no light, one value a pixel: of the sample nearest to the pixel's centre, never filtered.
 struct PixelFacts {
   float depth_mm = 0.0f;     // below the view's front plane
-  Vec3f normal;              // in the view's frame: x right, y up, z towards the reader
-  Vec3f albedo;
+  Vec3f normal{0.0f};        // in the view's frame: x right, y up, z towards the reader
+  Vec3f albedo{0.0f};
   float turn = 0.0f;         // whorls from the pole
   float around_deg = 0.0f;   // section angle
   std::uint8_t part = 0;     // trace::Part
@@ -35,7 +35,7 @@ struct Film {
 
   Film() = default;
   Film(int w, int h)
-      : width(w), height(h), radiance(size()), coverage(size()), facts(size()) {}
+      : width(w), height(h), radiance(size(), Vec3f(0.0f)), coverage(size()), facts(size()) {}
   std::size_t size() const { return static_cast<std::size_t>(width) * static_cast<std::size_t>(height); }
   std::size_t index(int x, int y) const {
     return static_cast<std::size_t>(y) * static_cast<std::size_t>(width) + static_cast<std::size_t>(x);

@@ -1,0 +1,50 @@
+// SPDX-License-Identifier: Apache-2.0
+// One light path, followed backwards from the eye.
+#pragma once
+
+#include "math/sobol.h"
+#include "trace/surfaces.h"
+#include "transport/lighting.h"
+#include "transport/materials.h"
+
+#include <cstdint>
+
+namespace whorl::transport {
+
+struct RayCounts {
+  std::uint64_t camera = 0, scattered = 0, shadow = 0;
+};
+
+/// Paths are cut by chance alone (Russian roulette); this bound only ends a walk in a closed white cavity, which would
+/// have no end. Of a cavity with mean path length M a bound of 10 M loses about 1e-4.
+inline constexpr int kMaxBounces = 100000;
+
+struct Glimpse {
+  Vec3f radiance{0.0f};
+  bool hit = false;  // shell or lamp; the sky is not part of the picture
+};
+
+/// Unidirectional path tracing with next-event estimation to key, dome and lamps, joined with BSDF sampling by multiple
+/// importance sampling (power heuristic, exponent 2; Veach & Guibas 1995, SIGGRAPH). Unbiased. Keeps references: shell,
+/// lighting and materials must outlive it.
+class PathTracer {
+ public:
+  PathTracer(const trace::Surfaces& shell, const Lighting& lighting, const Materials& materials);
+
+  /// Radiance that comes back along a camera ray. Draws the blocks of `stream` from `first_block` on.
+  Glimpse look(const trace::Ray& ray, const SobolStream& stream, std::uint32_t first_block,
+               RayCounts& counts) const noexcept;
+
+ private:
+  struct Vertex;
+  Vec3f direct(const Vertex& v, const SobolStream& stream, std::uint32_t block, RayCounts& counts) const noexcept;
+  Vec3f sky(const Vec3f& direction, float cosine, float scatter_pdf) const noexcept;
+
+  const trace::Surfaces& shell_;
+  const Lighting& lighting_;
+  const Materials& materials_;
+  Vec3f section_radiance_;
+  std::uint32_t blocks_per_bounce_;
+};
+
+}  // namespace whorl::transport
