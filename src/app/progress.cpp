@@ -86,7 +86,7 @@ void Progress::update(double fraction) {
   const std::lock_guard lock(mutex_);
   const double now_s = clock_().count();
   if (bar_shown_ && now_s - drawn_s_ < kRedrawSeconds) return;
-  draw(std::clamp(fraction, 0.0, 1.0), now_s);
+  draw(fraction > 0.0 ? std::min(fraction, 1.0) : 0.0, now_s);  // no number counts as nothing done
 }
 
 void Progress::note(std::string_view text) {
