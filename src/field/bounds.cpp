@@ -1,0 +1,255 @@
+// SPDX-License-Identifier: Apache-2.0
+// Bounds of the signed lengths over a box, and of how steep they are in it.
+#include "field/field.h"
+#include "field/stations.h"
+
+#include <algorithm>
+#include <cmath>
+
+namespace whorl::field {
+namespace {
+
+constexpr double kS2 = scene::kSupport * scene::kSupport;
+constexpr double kFrontReach = 2.6;  // as in field.cpp
+
+struct Polar {
+  Interval rho, theta;
+};
+
+// Distance from the axis, and growth angle of the passage nearest to `theta`, over a box.
+Polar polar(const Box3& box, double theta) {
+  const double nx = std::clamp(0.0, box.min.x, box.max.x), ny = std::clamp(0.0, box.min.y, box.max.y);
+  const double fx = std::max(std::abs(box.min.x), std::abs(box.max.x));
+  const double fy = std::max(std::abs(box.min.y), std::abs(box.max.y));
+  const Interval rho(std::hypot(nx, ny), std::hypot(fx, fy));
+  if (rho.lo == 0.0) return {rho, {theta - kPi, theta + kPi}};
+  const double centre = std::atan2(0.5 * (box.min.y + box.max.y), 0.5 * (box.min.x + box.max.x));
+  double lo = 0.0, hi = 0.0;
+  for (const double x : {box.min.x, box.max.x})
+    for (const double y : {box.min.y, box.max.y}) {
+      const double d = std::remainder(std::atan2(y, x) - centre, kTwoPi);
+      lo = std::min(lo, d);
+      hi = std::max(hi, d);
+    }
+  const double middle = theta + std::remainder(centre - theta, kTwoPi);
+  return {rho, {middle + lo, middle + hi}};
+}
+
+struct SectionBox {
+  Polar at;
+  Interval d, h, r, x, y, q2;
+  double psi_from = 0.0, psi_span = kTwoPi;
+};
+
+SectionBox section_box(const growth::CoilingLaw& law, const Box3& box, double theta) {
+  SectionBox s;
+  s.at = polar(box, theta);
+  const growth::Station a = law.at(s.at.theta.lo), b = law.at(s.at.theta.hi);
+  s.d = {a.distance, b.distance};
+  s.h = {a.depth, b.depth};
+  s.r = {a.half_breadth, b.half_breadth};
+  const Interval u = s.at.rho - s.d, v = s.h - Interval(box.min.z, box.max.z);
+  s.x = over_positive(law.roll_cos * u - law.roll_sin * v, s.r);
+  s.y = over_positive(law.roll_sin * u + law.roll_cos * v, law.S * s.r);
+  s.q2 = square(s.x) + square(s.y);
+  if (!(s.x.contains(0.0) && s.y.contains(0.0))) {
+    const double middle = std::atan2(0.5 * (s.y.lo + s.y.hi), 0.5 * (s.x.lo + s.x.hi));
+    double lo = 0.0, hi = 0.0;
+    for (const double x : {s.x.lo, s.x.hi})
+      for (const double y : {s.y.lo, s.y.hi}) {
+        const double d = std::remainder(std::atan2(y, x) - middle, kTwoPi);
+        lo = std::min(lo, d);
+        hi = std::max(hi, d);
+      }
+    s.psi_from = middle + lo;
+    s.psi_span = hi - lo;
+  }
+  return s;
+}
+
+// Bounds over the outlines that can be active in a range of growth.
+struct OutlineBounds {
+  Interval reach, normal_scale;
+  double reach_slope = 0.0, scale_slope = 0.0;
+};
+
+OutlineBounds outline_bounds(const scene::Scene& scene, const SectionBox& s, bool hollow, bool slopes) {
+  const std::ptrdiff_t from = stations_at(scene, s.at.theta.lo).first, to = stations_at(scene, s.at.theta.hi).first + 3;
+  OutlineBounds result;
+  std::uint32_t last = ~0u;
+  for (std::ptrdiff_t i = from; i <= to; ++i) {
+    const scene::Station& station = scene.stations[static_cast<std::size_t>(i)];
+    const std::uint32_t index = hollow ? station.hollow : station.outer;
+    if (index == last) continue;
+    const growth::Outline& outline = scene.outlines[index];
+    const Interval reach = outline.reach.bounds(s.psi_from, s.psi_span);
+    const Interval scale = outline.normal_scale.bounds(s.psi_from, s.psi_span);
+    result.reach = last == ~0u ? reach : hull(result.reach, reach);
+    result.normal_scale = last == ~0u ? scale : hull(result.normal_scale, scale);
+    if (slopes) {
+      result.reach_slope = std::max(result.reach_slope, outline.reach.slope_bound());
+      result.scale_slope = std::max(result.scale_slope, outline.normal_scale.slope_bound());
+    }
+    last = index;
+  }
+  return result;
+}
+
+// Range of t^2 over the box.
+Interval t2_range(const scene::Scene& scene, const SectionBox& s, const OutlineBounds& o, bool hollow, const Box3& box) {
+  const double per_radian = hollow ? scene.hollow_cap_per_radian : scene.cap_per_radian;
+  const double cap_hi = per_radian * std::max(0.0, scene.law.theta_start - s.at.theta.lo);
+  const double cap_lo = per_radian * std::max(0.0, scene.law.theta_start - s.at.theta.hi);
+  Interval t2(std::min(kS2, s.q2.lo / (o.reach.hi * o.reach.hi) + cap_lo * cap_lo),
+              std::min(kS2, s.q2.hi / (o.reach.lo * o.reach.lo) + cap_hi * cap_hi));
+  if (scene.ellipsoids.empty()) return t2;
+  const auto density = [](double v) { return std::pow(std::max(0.0, 1.0 - v / kS2), 3); };
+  Interval f(density(t2.hi), density(t2.lo));
+  for (const scene::Ellipsoid& e : scene.ellipsoids) {
+    if (e.hollow != hollow) continue;
+    // The box in the primitive's unit coordinates: centre and half-extents of each row.
+    const Vec3 centre = 0.5 * (box.min + box.max) - e.centre, half = 0.5 * (box.max - box.min);
+    double nearest2 = 0.0;
+    for (const Vec3& row : e.to_unit) {
+      const double c = std::abs(row.dot(centre));
+      const double w = std::abs(row.x) * half.x + std::abs(row.y) * half.y + std::abs(row.z) * half.z;
+      const double d = std::max(0.0, c - w);
+      nearest2 += d * d;
+    }
+    if (nearest2 >= 1.0) continue;
+    const double most = std::pow(1.0 - nearest2, 3);
+    (e.weight > 0.0 ? f.hi : f.lo) += e.weight * most;
+  }
+  return {kS2 * (1.0 - std::cbrt(f.hi)), kS2 * (1.0 - std::cbrt(f.lo))};
+}
+
+Interval length_range(const SectionBox& s, const OutlineBounds& o, Interval t2) {
+  const Interval scale = 0.5 * (s.r * o.normal_scale);
+  return Interval(1.0 - t2.hi, 1.0 - t2.lo) * scale;
+}
+
+Interval front_range(const scene::Scene& scene, const SectionBox& s, const Box3& box) {
+  const scene::Front& f = scene.front;
+  Interval lead(0.0);
+  bool any = false;
+  for (const double rho : {s.at.rho.lo, s.at.rho.hi})
+    for (const double z : {box.min.z, box.max.z}) {
+      const double v = growth::front_lead(f.tan_inclination, scene.law.depth, {rho, z});
+      lead = any ? hull(lead, Interval(v)) : Interval(v);
+      any = true;
+    }
+  const Interval angle = Interval(scene.law.theta_lip) + lead - s.at.theta;
+  return f.cos_inclination * (angle * s.at.rho) + Interval(f.rim_radius);
+}
+
+}  // namespace
+
+void Field::whorl_bounds(const Box3& box, double theta, Interval& outer, Interval& hollow) const noexcept {
+  const SectionBox s = section_box(scene_.law, box, theta);
+  if (s.at.theta.lo > scene_.theta_end || s.at.theta.hi < scene_.theta_begin) {
+    outer = hollow = Interval(-s.r.hi, -0.1 * s.r.lo);
+    return;
+  }
+  const OutlineBounds o = outline_bounds(scene_, s, false, false), i = outline_bounds(scene_, s, true, false);
+  outer = length_range(s, o, t2_range(scene_, s, o, false, box));
+  hollow = length_range(s, i, t2_range(scene_, s, i, true, box));
+  if (s.at.theta.hi > scene_.law.theta_lip - kFrontReach) {
+    const Interval behind = front_range(scene_, s, box);
+    const double rim = scene_.front.rim_radius;
+    const bool all = s.at.theta.lo > scene_.law.theta_lip - kFrontReach;
+    outer = {rounded_min(outer.lo, behind.lo, rim), all ? rounded_min(outer.hi, behind.hi, rim) : outer.hi};
+    hollow = {all ? -rounded_min(-hollow.lo, behind.hi, rim) : hollow.lo, -rounded_min(-hollow.hi, behind.lo, rim)};
+  }
+  if (s.at.theta.hi > scene_.theta_end) {
+    outer.lo = std::min(outer.lo, -s.r.hi);
+    hollow.lo = std::min(hollow.lo, -s.r.hi);
+  }
+}
+
+Interval Field::bounds(const Term& term, const Box3& box) const noexcept {
+  const scene::Chamber& c = scene_.chamber;
+  const double nx = std::clamp(0.0, box.min.x, box.max.x), ny = std::clamp(0.0, box.min.y, box.max.y);
+  const double fx = std::max(std::abs(box.min.x), std::abs(box.max.x));
+  const double fy = std::max(std::abs(box.min.y), std::abs(box.max.y));
+  const Interval rho2(nx * nx + ny * ny, fx * fx + fy * fy);
+  const auto ellipsoid = [&](double radius, double half_height) {
+    const Interval z2 = square((1.0 / half_height) * Interval(box.min.z - c.centre_z, box.max.z - c.centre_z));
+    return 0.5 * std::min(radius, half_height) * (Interval(1.0) - (1.0 / (radius * radius)) * rho2 - z2);
+  };
+  switch (term.part) {
+    case Part::kChamber: return ellipsoid(c.radius, c.half_height);
+    case Part::kChamberHollow: return ellipsoid(c.hollow_radius, c.hollow_half_height);
+    case Part::kPillar: {
+      const scene::Pillar& pillar = scene_.pillar;
+      const double span = pillar.bottom_z - pillar.top_z;
+      const double a = std::clamp((box.min.z - pillar.top_z) / span, 0.0, 1.0);
+      const double b = std::clamp((box.max.z - pillar.top_z) / span, 0.0, 1.0);
+      return (0.5 / pillar.scale) * (pillar.squared_radius.bounds(kPi * a, kPi * (b - a)) - rho2);
+    }
+    case Part::kChamberOpening: {
+      const SectionBox s = section_box(scene_.law, box, term.theta);
+      const OutlineBounds i = outline_bounds(scene_, s, true, false);
+      const Interval plain = length_range(s, i, t2_range(scene_, s, i, true, box));
+      return plain - Interval(opening_penalty(s.at.theta.lo), opening_penalty(s.at.theta.hi));
+    }
+    case Part::kWhorl:
+    case Part::kWhorlHollow: {
+      Interval outer, hollow;
+      whorl_bounds(box, term.theta, outer, hollow);
+      return term.part == Part::kWhorl ? outer : hollow;
+    }
+  }
+  return {};
+}
+
+double Field::steepness(const Term& term, const Box3& box) const noexcept {
+  const scene::Chamber& c = scene_.chamber;
+  const double rho = std::hypot(std::max(std::abs(box.min.x), std::abs(box.max.x)),
+                                std::max(std::abs(box.min.y), std::abs(box.max.y)));
+  const auto ellipsoid = [&](double radius, double half_height) {
+    const double z = std::max(std::abs(box.min.z - c.centre_z), std::abs(box.max.z - c.centre_z));
+    return std::min(radius, half_height) * std::hypot(rho / (radius * radius), z / (half_height * half_height));
+  };
+  if (term.part == Part::kChamber) return ellipsoid(c.radius, c.half_height);
+  if (term.part == Part::kChamberHollow) return ellipsoid(c.hollow_radius, c.hollow_half_height);
+  if (term.part == Part::kPillar) {
+    const scene::Pillar& pillar = scene_.pillar;
+    const double along = pillar.squared_radius.slope_bound() * kPi / (pillar.bottom_z - pillar.top_z);
+    return std::hypot(rho, 0.5 * along) / pillar.scale;
+  }
+  // d/dq and d/dpsi of r (1 - t^2)/2 * normal_scale, carried into space: in the half-plane by the section's size, along
+  // growth by the drift of section coordinates over the arc.
+  const growth::CoilingLaw& law = scene_.law;
+  const bool hollow = term.part != Part::kWhorl;
+  const SectionBox s = section_box(law, box, term.theta);
+  const OutlineBounds o = outline_bounds(scene_, s, hollow, true);
+  const Interval t2 = t2_range(scene_, s, o, hollow, box);
+  const double t = std::sqrt(std::max(t2.hi, s.q2.hi / (o.reach.lo * o.reach.lo)));
+  const double q_lo = std::sqrt(std::max(s.q2.lo, 1e-3)), q_hi = std::sqrt(s.q2.hi);
+  const double squeeze = std::max(1.0, 1.0 / law.S);
+  const double relative_slope = o.reach_slope / o.reach.lo;
+  const double per_q = t / o.reach.lo * std::hypot(1.0, relative_slope) * o.normal_scale.hi +
+                       0.5 * Interval(1.0 - t2.hi, 1.0 - t2.lo).magnitude() * o.scale_slope / q_lo;
+  const double in_plane = per_q * squeeze;
+  const double k = std::max({law.by_distance.rate(s.at.theta.lo), law.by_distance.rate(s.at.theta.hi),
+                             law.by_depth.rate(s.at.theta.lo), law.by_depth.rate(s.at.theta.hi),
+                             law.by_section.rate(s.at.theta.lo), law.by_section.rate(s.at.theta.hi)});
+  const double drift = k * (squeeze * std::hypot(s.d.hi, s.h.hi) / s.r.lo + q_hi);
+  const double cap = hollow ? scene_.hollow_cap_per_radian : scene_.cap_per_radian;
+  const double before = std::max(0.0, law.theta_start - s.at.theta.lo);
+  const double along = s.r.hi *
+                       (per_q * drift + 0.5 * k * Interval(1.0 - t2.hi, 1.0 - t2.lo).magnitude() * o.normal_scale.hi +
+                        cap * cap * before * o.normal_scale.hi) /
+                       std::max(s.at.rho.lo, 1e-3 * s.r.lo);
+  double steep = std::hypot(in_plane, along);
+  if (term.part == Part::kChamberOpening)
+    steep += 2.0 * start_half_breadth_ * std::max(0.0, s.at.theta.hi - law.theta_start - 0.5 * kPi) /
+             std::max(s.at.rho.lo, 1e-3 * s.r.lo);
+  if (s.at.theta.hi > law.theta_lip - kFrontReach) {
+    const double turn = (Interval(law.theta_lip) - s.at.theta).magnitude() + 0.5 * kPi;
+    steep = std::hypot(steep, 1.0 / scene_.front.cos_inclination + turn);
+  }
+  return steep;
+}
+
+}  // namespace whorl::field

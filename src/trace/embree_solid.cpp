@@ -1,0 +1,256 @@
+// SPDX-License-Identifier: Apache-2.0
+// Callbacks, and what is known of a hit.
+#include "trace/embree_solid.h"
+
+#include "diagnostics/error.h"
+#include "trace/cell_march.h"
+#include "trace/embree_shim.h"
+
+#include <algorithm>
+#include <chrono>
+#include <cmath>
+
+namespace whorl::trace {
+namespace {
+
+using field::State;
+
+double seconds_since(std::chrono::steady_clock::time_point start) {
+  return std::chrono::duration<double>(std::chrono::steady_clock::now() - start).count();
+}
+
+struct Query : embree::Payload {
+  std::vector<std::uint32_t>* visited = nullptr;  // gather cells instead of looking for a hit
+};
+
+Ray ray_of(const RTCRay& r) {
+  return {{r.org_x, r.org_y, r.org_z}, {r.dir_x, r.dir_y, r.dir_z}, r.tnear, r.tfar};
+}
+
+void fill(RTCRay& r, const Ray& ray) {
+  r.org_x = ray.origin.x;
+  r.org_y = ray.origin.y;
+  r.org_z = ray.origin.z;
+  r.dir_x = ray.direction.x;
+  r.dir_y = ray.direction.y;
+  r.dir_z = ray.direction.z;
+  r.tnear = ray.t_min;
+  r.tfar = ray.t_max;
+  r.time = 0.0f;
+  r.mask = 0xFFFFFFFFu;
+  r.id = 0;
+  r.flags = 0;
+}
+
+}  // namespace
+
+struct EmbreeSolid::Impl {
+  const field::Field& field;
+  CellSet set;
+  bool exact = false;
+  double cell_seconds = 0.0, hierarchy_seconds = 0.0;
+  RTCDevice device = nullptr;
+  RTCScene scene = nullptr;
+
+  explicit Impl(const field::Field& f) : field(f) {}
+  ~Impl() {
+    if (scene) rtcReleaseScene(scene);
+    if (device) rtcReleaseDevice(device);
+  }
+
+  bool march(const Cell& cell, const Ray& ray, CellHit& hit) const {
+    CellSegment segment;
+    if (!clip(cell, ray, segment)) return false;
+    if (exact || cell.kind == CellKind::kExact) return first_solid_exact(field, set, cell, ray, segment, hit);
+    return first_solid(set, cell, ray, segment, hit);
+  }
+
+  static void bounds(const RTCBoundsFunctionArguments* a) {
+    const Cell& cell = static_cast<const Impl*>(a->geometryUserPtr)->set.cells[a->primID];
+    // A little more than the cell, so that the hierarchy never culls a face that the clip would keep.
+    const float half = cell.half * 1.00001f;
+    RTCBounds* b = a->bounds_o;
+    b->lower_x = cell.centre[0] - half;
+    b->lower_y = cell.centre[1] - half;
+    b->lower_z = cell.centre[2] - half;
+    b->upper_x = cell.centre[0] + half;
+    b->upper_y = cell.centre[1] + half;
+    b->upper_z = cell.centre[2] + half;
+  }
+
+  static void intersect(const RTCIntersectFunctionNArguments* a) {
+    if (!a->valid[0]) return;
+    const Impl& self = *static_cast<const Impl*>(a->geometryUserPtr);
+    auto* rayhit = reinterpret_cast<RTCRayHit*>(a->rayhit);
+    CellHit hit;
+    const bool found = self.march(self.set.cells[a->primID], ray_of(rayhit->ray), hit);
+    embree::report(a, found);
+    if (!found) return;
+    rayhit->ray.tfar = hit.t;
+    rayhit->hit.geomID = a->geomID;
+    rayhit->hit.primID = a->primID;
+    rayhit->hit.instID[0] = a->context->instID[0];
+    rayhit->hit.u = static_cast<float>(hit.term);  // which surface, and which air it was met from
+    rayhit->hit.v = static_cast<float>(static_cast<int>(hit.before));
+    rayhit->hit.Ng_x = rayhit->hit.Ng_y = 0.0f;
+    rayhit->hit.Ng_z = 1.0f;
+  }
+
+  static void occluded(const RTCOccludedFunctionNArguments* a) {
+    if (!a->valid[0]) return;
+    const Impl& self = *static_cast<const Impl*>(a->geometryUserPtr);
+    auto* ray = reinterpret_cast<RTCRay*>(a->ray);
+    auto* query = reinterpret_cast<Query*>(a->context);
+    bool found = false;
+    if (query->visited) {
+      query->visited->push_back(a->primID);
+    } else {
+      CellHit hit;
+      found = self.march(self.set.cells[a->primID], ray_of(*ray), hit);
+    }
+    embree::report(a, found);
+    if (found) ray->tfar = -std::numeric_limits<float>::infinity();
+  }
+
+  void describe(const Cell& cell, const CellTerm& term, State before, Hit& hit) const {
+    const Vec3 p(hit.position);
+    Vec3 gradient;
+    if (exact || cell.kind == CellKind::kExact) {
+      gradient = field.gradient({term.part, term.theta}, p);
+    } else {
+      float g[3];
+      const float scale = 1.0f / cell.half;
+      trace::gradient(term.cubic, (hit.position.x - cell.centre[0]) * scale, (hit.position.y - cell.centre[1]) * scale,
+                      (hit.position.z - cell.centre[2]) * scale, g);
+      gradient = {g[0], g[1], g[2]};
+    }
+    const bool hollow = term.part == field::Part::kWhorlHollow || term.part == field::Part::kChamberHollow ||
+                        term.part == field::Part::kChamberOpening;
+    const double length = gradient.length();
+    if (length > 0.0) gradient *= (hollow ? 1.0 : -1.0) / length;
+    hit.normal = Vec3f(gradient);
+    hit.part = hollow || before == State::kLumen ? Part::kInterior : Part::kExterior;
+    const double theta = term.part == field::Part::kWhorl || term.part == field::Part::kWhorlHollow
+                             ? term.theta
+                             : field.scene().law.theta_start;
+    double growth, around;
+    field.coordinates(p, theta, growth, around);
+    hit.turn = static_cast<float>(growth / kTwoPi);
+    hit.around_deg = static_cast<float>(degrees(around));
+    // Clear of the cell's own error, of the neighbours', and of the rounding of a place in the shell.
+    hit.safe_offset = static_cast<float>(3.0 * set.tolerance_mm + 1e-6 * field.scene().height_mm);
+  }
+};
+
+EmbreeSolid::EmbreeSolid(const field::Field& field, const SolidOptions& options)
+    : impl_(std::make_unique<Impl>(field)) {
+  Impl& self = *impl_;
+  self.exact = options.exact;
+  auto start = std::chrono::steady_clock::now();
+  self.set = build_cells(field, options.tolerance_mm);
+  self.cell_seconds = seconds_since(start);
+
+  start = std::chrono::steady_clock::now();
+  self.device = rtcNewDevice(nullptr);
+  if (!self.device)
+    throw diagnostics::Error(diagnostics::ExitCode::kUnexpected, "Embree could not be started on this machine");
+  self.scene = rtcNewScene(self.device);
+  rtcSetSceneFlags(self.scene, RTC_SCENE_FLAG_ROBUST);  // conservative node tests: neighbouring cells share faces
+  RTCGeometry geometry = rtcNewGeometry(self.device, RTC_GEOMETRY_TYPE_USER);
+  rtcSetGeometryUserPrimitiveCount(geometry, static_cast<unsigned>(self.set.cells.size()));
+  rtcSetGeometryUserData(geometry, impl_.get());
+  rtcSetGeometryBoundsFunction(geometry, &Impl::bounds, nullptr);
+  rtcSetGeometryIntersectFunction(geometry, &Impl::intersect);
+  rtcSetGeometryOccludedFunction(geometry, &Impl::occluded);
+  rtcCommitGeometry(geometry);
+  rtcAttachGeometry(self.scene, geometry);
+  rtcReleaseGeometry(geometry);
+  rtcCommitScene(self.scene);
+  if (rtcGetDeviceError(self.device) != RTC_ERROR_NONE)
+    throw diagnostics::Error(diagnostics::ExitCode::kUnexpected, "Embree could not build the hierarchy of surface cells");
+  self.hierarchy_seconds = seconds_since(start);
+}
+
+EmbreeSolid::~EmbreeSolid() = default;
+
+bool EmbreeSolid::closest(const Ray& ray, Hit& hit) const noexcept {
+  RTCRayHit query;
+  fill(query.ray, ray);
+  query.hit.geomID = RTC_INVALID_GEOMETRY_ID;
+  query.hit.instID[0] = RTC_INVALID_GEOMETRY_ID;
+  Query payload;
+  embree::prepare(payload);
+  embree::trace_closest(impl_->scene, query, payload);
+  if (query.hit.geomID == RTC_INVALID_GEOMETRY_ID) return false;
+  const Cell& cell = impl_->set.cells[query.hit.primID];
+  const CellTerm& term = impl_->set.terms[cell.first_term + static_cast<std::uint32_t>(query.hit.u)];
+  hit.t = query.ray.tfar;
+  hit.position = ray.origin + hit.t * ray.direction;
+  impl_->describe(cell, term, static_cast<State>(static_cast<int>(query.hit.v)), hit);
+  return true;
+}
+
+bool EmbreeSolid::occluded(const Ray& ray) const noexcept {
+  RTCRay query;
+  fill(query, ray);
+  Query payload;
+  embree::prepare(payload);
+  embree::trace_any(impl_->scene, query, payload);
+  return query.tfar < 0.0f;
+}
+
+void EmbreeSolid::crossings(const Ray& ray, State start, std::vector<Crossing>& out) const {
+  out.clear();
+  thread_local std::vector<std::uint32_t> visited;
+  visited.clear();
+  RTCRay query;
+  fill(query, ray);
+  Query payload;
+  embree::prepare(payload);
+  payload.visited = &visited;
+  embree::trace_any(impl_->scene, query, payload);
+
+  struct Leg {
+    CellSegment segment;
+    std::uint32_t cell;
+  };
+  thread_local std::vector<Leg> legs;
+  legs.clear();
+  for (const std::uint32_t id : visited) {
+    CellSegment segment;
+    if (clip(impl_->set.cells[id], ray, segment) && segment.t1 > segment.t0) legs.push_back({segment, id});
+  }
+  std::sort(legs.begin(), legs.end(), [](const Leg& a, const Leg& b) {
+    return a.segment.t0 != b.segment.t0 ? a.segment.t0 < b.segment.t0 : a.cell < b.cell;
+  });
+  State state = start;
+  constexpr int kCapacity = 64;
+  Change change[kCapacity];
+  float reached = ray.t_min;
+  for (Leg& leg : legs) {
+    const Cell& cell = impl_->set.cells[leg.cell];
+    leg.segment.t0 = std::max(leg.segment.t0, reached);  // clips overlap by their rounding
+    if (leg.segment.t1 <= leg.segment.t0) continue;
+    reached = leg.segment.t1;
+    State entry;
+    const int count = impl_->exact || cell.kind == CellKind::kExact
+                          ? changes_exact(impl_->field, impl_->set, cell, ray, leg.segment, entry, change, kCapacity)
+                          : changes(impl_->set, cell, ray, leg.segment, entry, change, kCapacity);
+    const CellTerm* terms = impl_->set.terms.data() + cell.first_term;
+    if (entry != state) out.push_back({leg.segment.t0, state, entry, terms[0].part, terms[0].theta});
+    state = entry;
+    for (int i = 0; i < count; ++i) {
+      const CellTerm& term = terms[change[i].term];
+      out.push_back({change[i].t, state, change[i].after, term.part, term.theta});
+      state = change[i].after;
+    }
+  }
+}
+
+const CellSet& EmbreeSolid::cells() const { return impl_->set; }
+const field::Field& EmbreeSolid::field() const { return impl_->field; }
+double EmbreeSolid::cell_seconds() const { return impl_->cell_seconds; }
+double EmbreeSolid::hierarchy_seconds() const { return impl_->hierarchy_seconds; }
+void EmbreeSolid::set_exact(bool exact) { impl_->exact = exact; }
+
+}  // namespace whorl::trace
