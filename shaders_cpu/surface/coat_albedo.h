@@ -22,7 +22,7 @@ class CoatAlbedo {
   /// Share of the light from direction `cosine` (0 .. 1) that the coat reflects.
   float at(float cosine) const noexcept {
     // Nodes lie at cos = (i / last)^2: E bends most at grazing angles.
-    const float place = std::sqrt(std::fmin(std::fmax(cosine, 0.0f), 1.0f)) * static_cast<float>(kNodes - 1);
+    const float place = std::sqrt(std::clamp(cosine, 0.0f, 1.0f)) * static_cast<float>(kNodes - 1);
     const int i = std::min(static_cast<int>(place), kNodes - 2);
     const auto k = static_cast<std::size_t>(i);
     const float low = cos_of(i), high = cos_of(i + 1);

@@ -9,58 +9,45 @@
 
 namespace whorl::shaders_cpu {
 namespace {
-
 constexpr float kInvPi = static_cast<float>(1.0 / kPi);
-
-/// Chance of drawing from the coat: its share of the light that leaves towards wo.
-float coat_chance(const CoatedDiffuse& surface, float coat_share) noexcept {
-  const float body = (1.0f - coat_share) * luminance(surface.albedo);
-  return coat_share / (coat_share + body);
 }
-
-Reflection reflect_coated(const CoatedDiffuse& surface, float share_o, const Vec3f& wo, const Vec3f& wi) noexcept {
-  const CoatAlbedo& coat = *surface.coat;
-  const float alpha = coat.alpha();
-  const Vec3f h = unit(wo + wi);
-  const float lambda_o = ggx_lambda(wo, alpha);
-  const float density = ggx_density(h, alpha);
-  const float specular = fresnel_dielectric(wo.dot(h), coat.index()) * density /
-                         ((1.0f + lambda_o + ggx_lambda(wi, alpha)) * 4.0f * wo.z * wi.z);
-  const float body = (1.0f - share_o) * (1.0f - coat.at(wi.z)) * kInvPi / (1.0f - coat.mean());
-  const float chance = coat_chance(surface, share_o);
-  return {surface.albedo * body + Vec3f(specular),
-          chance * density / (4.0f * wo.z * (1.0f + lambda_o)) + (1.0f - chance) * cosine_pdf(wi.z)};
-}
-
-}  // namespace
 
 double alpha_of_gloss(double gloss) {
   const double roughness = 1.0 - std::clamp(gloss, 0.0, 1.0) * (1.0 - std::sqrt(kPolishedAlpha));
   return roughness * roughness;
 }
 
-Reflection reflect(const CoatedDiffuse& surface, const Vec3f& wo, const Vec3f& wi) noexcept {
-  if (wi.z <= 0.0f || wo.z <= 0.0f) return {};
-  if (!surface.coat) return {surface.albedo * kInvPi, cosine_pdf(wi.z)};
-  return reflect_coated(surface, surface.coat->at(wo.z), wo, wi);
+SurfaceView::SurfaceView(const CoatedDiffuse& surface, const Vec3f& wo) noexcept
+    : wo_(wo), body_(surface.albedo * kInvPi), coat_(surface.coat) {
+  if (!coat_) return;
+  const float share = coat_->at(wo.z);
+  const float body_share = (1.0f - share) * luminance(surface.albedo);
+  coat_chance_ = share / (share + body_share);
+  lambda_ = ggx_lambda(wo, coat_->alpha());
+  body_ *= (1.0f - share) / (1.0f - coat_->mean());
 }
 
-Scatter scatter(const CoatedDiffuse& surface, const Vec3f& wo, float choice, float u1, float u2) noexcept {
-  if (wo.z <= 0.0f) return {};
-  if (!surface.coat) {
+Reflection SurfaceView::reflect(const Vec3f& wi) const noexcept {
+  if (wi.z <= 0.0f) return {};
+  const float body_pdf = cosine_pdf(wi.z);
+  if (!coat_) return {body_, body_pdf};
+  const float alpha = coat_->alpha();
+  const Vec3f h = unit(wo_ + wi);
+  const float mirrored = ggx_density(h, alpha) / (4.0f * wo_.z);
+  const float specular = fresnel_dielectric(wo_.dot(h), coat_->index()) * mirrored /
+                         ((1.0f + lambda_ + ggx_lambda(wi, alpha)) * wi.z);
+  return {body_ * (1.0f - coat_->at(wi.z)) + Vec3f(specular),
+          coat_chance_ * mirrored / (1.0f + lambda_) + (1.0f - coat_chance_) * body_pdf};
+}
+
+Scatter SurfaceView::scatter(float choice, float u1, float u2) const noexcept {
+  if (choice >= coat_chance_) {
     const Vec3f wi = cosine_direction(u1, u2);
-    return {wi, reflect(surface, wo, wi)};
+    return {wi, reflect(wi)};
   }
-  const float share_o = surface.coat->at(wo.z);
-  Vec3f wi;
-  if (choice < coat_chance(surface, share_o)) {
-    const Vec3f h = ggx_visible_normal(wo, surface.coat->alpha(), std::sqrt(u1), static_cast<float>(kTwoPi) * u2);
-    wi = unit(h * (2.0f * wo.dot(h)) - wo);
-  } else {
-    wi = cosine_direction(u1, u2);
-  }
-  if (wi.z <= 0.0f) return {wi, {}};
-  return {wi, reflect_coated(surface, share_o, wo, wi)};
+  const Vec3f h = ggx_visible_normal(wo_, coat_->alpha(), std::sqrt(u1), static_cast<float>(kTwoPi) * u2);
+  const Vec3f wi = unit(h * (2.0f * wo_.dot(h)) - wo_);
+  return {wi, reflect(wi)};
 }
 
 }  // namespace whorl::shaders_cpu

@@ -19,26 +19,39 @@ inline constexpr double kPolishedAlpha = 0.01;
 /// looks more even than alpha itself (Burley 2012, Physically Based Shading at Disney, SIGGRAPH course notes).
 double alpha_of_gloss(double gloss);
 
-/// One surface, ready to be lit. Directions are unit, in the frame of the surface, pointing away from it.
 struct CoatedDiffuse {
-  Vec3f albedo;                      // of the body, linear, 0 .. 1
+  Vec3f albedo{0.0f};                // of the body, linear, 0 .. 1
   const CoatAlbedo* coat = nullptr;  // none: a plain matt (Lambertian) surface
 };
 
 struct Reflection {
   Vec3f value{0.0f};  // BRDF without the cosine, 1/sr
-  float pdf = 0.0f;   // with which sample() draws this direction, 1/sr
+  float pdf = 0.0f;   // with which `scatter` draws this direction, 1/sr
 };
 
-/// BRDF and sampling density for wo.z > 0; both zero for wi.z <= 0.
-Reflection reflect(const CoatedDiffuse& surface, const Vec3f& wo, const Vec3f& wi) noexcept;
-
-/// A direction drawn from about BRDF times cosine, with the same `reflect` values. pdf = 0 where the draw fell below the
-/// horizon: such a draw counts, with no light. `choice`, `u1`, `u2` uniform in [0, 1).
+/// A drawn direction. pdf = 0 where the draw fell below the horizon: such a draw counts, with no light.
 struct Scatter {
   Vec3f direction{0.0f, 0.0f, 1.0f};
   Reflection reflection;
 };
-Scatter scatter(const CoatedDiffuse& surface, const Vec3f& wo, float choice, float u1, float u2) noexcept;
+
+/// The surface as seen from one direction. Directions are unit, in the frame of the surface (z = normal), pointing away
+/// from it; `wo` must have z > 0. The coat must outlive the view.
+class SurfaceView {
+ public:
+  SurfaceView(const CoatedDiffuse& surface, const Vec3f& wo) noexcept;
+  const Vec3f& wo() const noexcept { return wo_; }
+
+  /// BRDF and sampling density; both zero for wi.z <= 0.
+  Reflection reflect(const Vec3f& wi) const noexcept;
+  /// Draws from about BRDF times cosine. `choice`, `u1`, `u2` uniform in [0, 1).
+  Scatter scatter(float choice, float u1, float u2) const noexcept;
+
+ private:
+  Vec3f wo_, body_;                 // body_: everything of the body's BRDF that does not depend on wi
+  const CoatAlbedo* coat_;
+  float lambda_ = 0.0f;             // Smith's Lambda of wo
+  float coat_chance_ = 0.0f;        // of drawing from the coat: its share of the light that leaves towards wo
+};
 
 }  // namespace whorl::shaders_cpu

@@ -4,13 +4,14 @@
 
 #include "math/vec.h"
 
+#include <algorithm>
 #include <cmath>
 
 namespace whorl {
 
 /// `v` scaled to length 1; `v` must not be (nearly) zero.
 inline Vec3f unit(const Vec3f& v) noexcept { return v * (1.0f / std::sqrt(v.dot(v))); }
-inline float max_component(const Vec3f& v) noexcept { return std::fmax(v.x, std::fmax(v.y, v.z)); }
+inline float max_component(const Vec3f& v) noexcept { return std::max(v.x, std::max(v.y, v.z)); }
 /// Relative luminance of a colour with linear sRGB primaries (IEC 61966-2-1).
 inline float luminance(const Vec3f& c) noexcept { return 0.2126f * c.x + 0.7152f * c.y + 0.0722f * c.z; }
 

@@ -21,8 +21,8 @@ constexpr int kFirstRoulette = 4;
 /// Smallest cosine between a shading normal and the direction back along the ray.
 constexpr float kLeastFacing = 1e-3f;
 
-/// Block layout of one bounce: scattering, then key and dome, then the lamps in pairs.
-constexpr std::uint32_t kScatterBlock = 0, kSkyBlock = 1, kLampBlock = 2;
+/// Block layout of one bounce: scattering, then the lights in pairs: key and lamp 0, lamps 1 and 2, ..
+constexpr std::uint32_t kScatterBlock = 0, kLightBlock = 1;
 
 /// Weight of the technique with density `own` where another could have drawn the same with density `other`.
 float power_weight(float own, float other) noexcept {
@@ -43,15 +43,13 @@ struct PathTracer::Vertex {
   Vec3f start;    // clear of the surface
   Vec3f outward;  // true normal
   Basis3f basis;  // round the shading normal
-  Vec3f wo;       // local direction back to the viewer
-  shaders_cpu::CoatedDiffuse surface;
+  shaders_cpu::SurfaceView surface;
 
   Vertex(const trace::Hit& hit, const Vec3f& to_viewer, const Materials& materials) noexcept
       : start(hit.position + hit.normal * hit.safe_offset),
         outward(hit.normal),
         basis(facing(hit.normal, to_viewer)),
-        wo(basis.to_local(to_viewer)),
-        surface(materials.surface(hit.part)) {}
+        surface(materials.surface(hit.part), basis.to_local(to_viewer)) {}
 
   /// Light can only come from above both normals: the shell is opaque.
   bool open_to(const Vec3f& direction, const Vec3f& wi) const noexcept { return wi.z > 0.0f && direction.dot(outward) > 0.0f; }
@@ -68,7 +66,7 @@ PathTracer::PathTracer(const trace::Surfaces& shell, const Lighting& lighting, c
       lighting_(lighting),
       materials_(materials),
       section_radiance_(Vec3f(shaders_cpu::inverse_tone(Vec3(materials.section_display)))),
-      blocks_per_bounce_(kLampBlock + static_cast<std::uint32_t>((lighting.lamps.size() + 1) / 2)) {}
+      blocks_per_bounce_(kLightBlock + static_cast<std::uint32_t>((lighting.lamps.size() + 2) / 2)) {}
 
 Vec3f PathTracer::direct(const Vertex& v, const SobolStream& stream, std::uint32_t block,
                          RayCounts& counts) const noexcept {
@@ -76,7 +74,7 @@ Vec3f PathTracer::direct(const Vertex& v, const SobolStream& stream, std::uint32
   const auto gather = [&](const Vec3f& direction, const Vec3f& wi, float pdf, const Vec3f& radiance, float distance,
                           const SphereLamp* target) {
     if (!v.open_to(direction, wi) || !(pdf > 0.0f)) return;
-    const Reflection r = reflect(v.surface, v.wo, wi);
+    const Reflection r = v.surface.reflect(wi);
     const Vec3f light = r.value * radiance * (wi.z / pdf * power_weight(pdf, r.pdf));
     if (!(max_component(light) > 0.0f)) return;
     trace::Ray ray = v.ray(direction);
@@ -85,23 +83,18 @@ Vec3f PathTracer::direct(const Vertex& v, const SobolStream& stream, std::uint32
     if (!barred(shell_, lighting_.lamps, ray, target)) total += light;
   };
   constexpr float kFar = std::numeric_limits<float>::infinity();
-  const auto u = stream.block(block + kSkyBlock);
+  auto u = stream.block(block + kLightBlock);
 
   if (max_component(lighting_.key.radiance) > 0.0f) {
     const Vec3f direction = lighting_.key.cone.sample(u[0], u[1]);
     gather(direction, v.basis.to_local(direction), lighting_.key.cone.pdf(), lighting_.key.radiance, kFar, nullptr);
   }
-  if (max_component(lighting_.dome.radiance) > 0.0f) {
-    const Vec3f wi = lighting_.dome.sample(u[2], u[3]);
-    gather(v.basis.to_world(wi), wi, lighting_.dome.pdf(wi.z), lighting_.dome.radiance, kFar, nullptr);
-  }
-  std::array<float, 4> pair{};
   for (std::size_t k = 0; k < lighting_.lamps.size(); ++k) {
-    const std::size_t half = 2 * (k % 2);
-    if (half == 0) pair = stream.block(block + kLampBlock + static_cast<std::uint32_t>(k / 2));
+    const std::size_t place = k + 1, half = 2 * (place % 2);
+    if (half == 0) u = stream.block(block + kLightBlock + static_cast<std::uint32_t>(place / 2));
     const SphereLamp& lamp = lighting_.lamps[k];
     const shaders_cpu::LampView view(lamp, v.start);
-    const Vec3f direction = view.cone.sample(pair[half], pair[half + 1]);
+    const Vec3f direction = view.cone.sample(u[half], u[half + 1]);
     float distance = shaders_cpu::lamp_distance(lamp, v.start, direction);
     if (!(distance < kFar)) distance = (lamp.centre - v.start).length();  // rounding at the lamp's rim
     gather(direction, v.basis.to_local(direction), view.cone.pdf(), lamp.radiance, distance, &lamp);
@@ -109,8 +102,8 @@ Vec3f PathTracer::direct(const Vertex& v, const SobolStream& stream, std::uint32
   return total;
 }
 
-Vec3f PathTracer::sky(const Vec3f& direction, float cosine, float scatter_pdf) const noexcept {
-  Vec3f total = lighting_.dome.radiance * power_weight(scatter_pdf, lighting_.dome.pdf(cosine));
+Vec3f PathTracer::sky(const Vec3f& direction, float scatter_pdf) const noexcept {
+  Vec3f total = lighting_.dome.radiance;
   if (lighting_.key.cone.contains(direction))
     total += lighting_.key.radiance * power_weight(scatter_pdf, lighting_.key.cone.pdf());
   return total;
@@ -133,7 +126,7 @@ Glimpse PathTracer::look(const trace::Ray& camera_ray, const SobolStream& stream
     seen.radiance += throughput * direct(v, stream, block, counts);
 
     const auto u = stream.block(block + kScatterBlock);
-    const shaders_cpu::Scatter next = scatter(v.surface, v.wo, u[0], u[1], u[2]);
+    const shaders_cpu::Scatter next = v.surface.scatter(u[0], u[1], u[2]);
     const Vec3f direction = v.basis.to_world(next.direction);
     if (!(next.reflection.pdf > 0.0f) || !v.open_to(direction, next.direction)) break;
     throughput *= next.reflection.value * (next.direction.z / next.reflection.pdf);
@@ -146,7 +139,7 @@ Glimpse PathTracer::look(const trace::Ray& camera_ray, const SobolStream& stream
     met = first_met(shell_, lighting_.lamps, ray);
     ++counts.scattered;
     if (met.nothing()) {
-      seen.radiance += throughput * sky(direction, next.direction.z, next.reflection.pdf);
+      seen.radiance += throughput * sky(direction, next.reflection.pdf);
       break;
     }
     if (met.lamp) {

