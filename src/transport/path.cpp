@@ -15,8 +15,9 @@ namespace {
 using shaders_cpu::Reflection;
 using shaders_cpu::SphereLamp;
 
-/// Roulette starts at this bounce: earlier cuts would save little and add noise.
-constexpr int kFirstRoulette = 4;
+/// Roulette plays once a path carries less than this. Measured on an open sphere with a lamp (noise^2 * time): 0.2 and 0.3
+/// alike, 0.5 is 20 % worse, roulette by the full throughput from bounce 4 on 45 % worse, no roulette until 0.05 7 % worse.
+constexpr float kRouletteBelow = 0.2f;
 
 /// Smallest cosine between a shading normal and the direction back along the ray.
 constexpr float kLeastFacing = 1e-3f;
@@ -130,10 +131,10 @@ Glimpse PathTracer::look(const trace::Ray& camera_ray, const SobolStream& stream
     const Vec3f direction = v.basis.to_world(next.direction);
     if (!(next.reflection.pdf > 0.0f) || !v.open_to(direction, next.direction)) break;
     throughput *= next.reflection.value * (next.direction.z / next.reflection.pdf);
-    if (bounce >= kFirstRoulette) {
-      const float survival = std::min(1.0f, max_component(throughput));
-      if (!(u[3] < survival)) break;
-      throughput *= 1.0f / survival;
+    const float strength = max_component(throughput);
+    if (strength < kRouletteBelow) {
+      if (!(u[3] * kRouletteBelow < strength)) break;
+      throughput *= kRouletteBelow / strength;
     }
     ray = v.ray(direction);
     met = first_met(shell_, lighting_.lamps, ray);
