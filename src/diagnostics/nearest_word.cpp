@@ -52,7 +52,8 @@ NearestWord nearest_word(std::string_view typed, std::span<const std::string_vie
   }
   // One slip in three letters, at least one: more is chance.
   const int allowed = kSlip * std::max(1, static_cast<int>(std::max(start.size(), nearest.word.size())) / 3);
-  nearest.close = !nearest.word.empty() && typed.size() <= kLongestCompared && fewest <= allowed;
+  const bool some_letter_agrees = fewest < kSlip * static_cast<int>(std::max(start.size(), nearest.word.size()));
+  nearest.close = !nearest.word.empty() && typed.size() <= kLongestCompared && fewest <= allowed && some_letter_agrees;
   return nearest;
 }
 

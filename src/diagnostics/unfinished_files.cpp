@@ -8,10 +8,14 @@
 #include <csignal>
 #include <mutex>
 
+#include <poll.h>
 #include <unistd.h>
 
 namespace whorl::diagnostics {
 namespace {
+
+constexpr int kEndings[] = {SIGINT, SIGTERM, SIGHUP};
+constexpr int kLongestWait = 2000;  // milliseconds; a hanging network disk must not hold up the end for ever
 
 // The path may change only in state kClaimed, and is read by the handler only in state kRemoving.
 enum class State : int { kFree, kClaimed, kListed, kRemoving };
@@ -26,11 +30,8 @@ struct UnfinishedFile {
 
 std::atomic<UnfinishedFile*> first{nullptr};
 std::atomic<bool> ending{false};
-std::mutex listing;  // held by listers, never by the handler
-
-[[noreturn]] void wait_for_the_end() {
-  for (;;) pause();
-}
+std::atomic<int> uninterrupted{0};  // threads that may not be ended now; they have the signals blocked
+std::mutex listing;                 // held by listers, never by the handler
 
 void remove_all() {
   for (UnfinishedFile* file = first.load(); file != nullptr; file = file->next) {
@@ -43,8 +44,10 @@ void remove_all() {
 
 extern "C" void whorl_remove_unfinished_and_die(int signal_number) {
   ending.store(true);
+  // The threads waited for are others than this one: theirs has the signals blocked.
+  for (int waited = 0; uninterrupted.load() > 0 && waited < kLongestWait; ++waited) poll(nullptr, 0, 1);
   remove_all();
-  remove_all();  // another thread may just have opened one of them anew
+  remove_all();  // a library in another thread may just have opened one of them anew
   std::signal(signal_number, SIG_DFL);
   sigset_t only_this;
   sigemptyset(&only_this);
@@ -55,29 +58,44 @@ extern "C" void whorl_remove_unfinished_and_die(int signal_number) {
 
 }  // namespace
 
-bool list_unfinished(const std::string& path) {
+Uninterrupted::Uninterrupted() {
+  sigset_t endings;
+  sigemptyset(&endings);
+  for (const int signal_number : kEndings) sigaddset(&endings, signal_number);
+  pthread_sigmask(SIG_BLOCK, &endings, &earlier_mask_);
+  ++uninterrupted;
+  if (!ending.load()) return;
+  --uninterrupted;
+  for (;;) pause();
+}
+
+Uninterrupted::~Uninterrupted() {
+  --uninterrupted;
+  pthread_sigmask(SIG_SETMASK, &earlier_mask_, nullptr);
+}
+
+bool list_unfinished(const Uninterrupted&, const std::string& path) {
   const std::lock_guard lock(listing);
-  UnfinishedFile* free_entry = nullptr;
+  UnfinishedFile* entry = nullptr;
   for (UnfinishedFile* file = first.load(); file != nullptr; file = file->next) {
     const State state = file->state.load();
-    if (state == State::kFree) free_entry = file;
+    if (state == State::kFree) entry = file;
     if (state == State::kListed && file->path == path) return false;
   }
-  if (free_entry != nullptr) {
-    free_entry->state.store(State::kClaimed);
-    free_entry->path = path;
+  if (entry != nullptr) {
+    entry->state.store(State::kClaimed);
+    entry->path = path;
   } else {
-    free_entry = new UnfinishedFile;
-    free_entry->path = path;
-    free_entry->next = first.load();
-    first.store(free_entry);
+    entry = new UnfinishedFile;
+    entry->path = path;
+    entry->next = first.load();
+    first.store(entry);
   }
-  free_entry->state.store(State::kListed);
-  if (ending.load()) wait_for_the_end();
+  entry->state.store(State::kListed);
   return true;
 }
 
-void unlist_unfinished(const std::string& path) {
+void unlist_unfinished(const Uninterrupted&, const std::string& path) {
   const std::lock_guard lock(listing);
   for (UnfinishedFile* file = first.load(); file != nullptr; file = file->next) {
     State expected = State::kListed;
@@ -85,14 +103,8 @@ void unlist_unfinished(const std::string& path) {
   }
 }
 
-void stop_if_ending(const std::string& made_path) {
-  if (!ending.load()) return;
-  unlink(made_path.c_str());
-  wait_for_the_end();
-}
-
 void remove_unfinished_on_signals() {
-  for (const int signal_number : {SIGINT, SIGTERM, SIGHUP}) {
+  for (const int signal_number : kEndings) {
     struct sigaction earlier = {};
     // A signal that the caller has us ignore (nohup, a background job) stays ignored.
     if (sigaction(signal_number, nullptr, &earlier) == 0 && earlier.sa_handler == SIG_IGN) continue;

@@ -4,15 +4,27 @@
 
 #include <string>
 
+#include <csignal>
+
 namespace whorl::diagnostics {
 
+/// While one exists, a signal that ends the process waits (up to two seconds) before it removes what is on the list: a file
+/// and its entry change together. Keep it to a few system calls. Where the end has already begun, the constructor does not
+/// return.
+class Uninterrupted {
+ public:
+  Uninterrupted();
+  ~Uninterrupted();
+  Uninterrupted(const Uninterrupted&) = delete;
+  Uninterrupted& operator=(const Uninterrupted&) = delete;
+
+ private:
+  sigset_t earlier_mask_;
+};
+
 /// Puts `path` on the list, to be removed should a signal end the process. False where it is on the list already.
-/// Does not return once the process is ending.
-bool list_unfinished(const std::string& path);
+bool list_unfinished(const Uninterrupted&, const std::string& path);
 /// Takes it off again.
-void unlist_unfinished(const std::string& path);
-/// Waits for the end where a signal handler has begun to remove files; returns at once otherwise. To be asked after
-/// a listed file was made: the handler may have passed its entry before the file was there.
-void stop_if_ending(const std::string& made_path);
+void unlist_unfinished(const Uninterrupted&, const std::string& path);
 
 }  // namespace whorl::diagnostics

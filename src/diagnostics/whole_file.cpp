@@ -77,24 +77,25 @@ WholeFile::WholeFile(std::filesystem::path final_path) : final_(std::move(final_
                                   S_ISDIR(there.st_mode) ? "a folder" : "something other than a plain file"));
   }
   working_ = working_path_for(final_);
-  if (!list_unfinished(working_.string())) {
+  const Uninterrupted uninterrupted;
+  if (!list_unfinished(uninterrupted, working_.string())) {
     throw FileTrouble(fmt::format("cannot write {}: this program is writing it already", final_.string()));
   }
   const int fd = make_empty(working_.string());
   if (fd < 0) {
     const int error_number = errno;
-    unlist_unfinished(working_.string());
+    unlist_unfinished(uninterrupted, working_.string());
     throw FileTrouble(fmt::format("cannot write {} in the folder {}: {}", final_.filename().string(),
                                   folder_of(final_).string(), reason(error_number)));
   }
   close(fd);
-  stop_if_ending(working_.string());
 }
 
 WholeFile::~WholeFile() {
   if (committed_) return;
+  const Uninterrupted uninterrupted;
   unlink(working_.c_str());
-  unlist_unfinished(working_.string());
+  unlist_unfinished(uninterrupted, working_.string());
 }
 
 void WholeFile::commit() {
@@ -102,11 +103,14 @@ void WholeFile::commit() {
   if (const int error_number = flush(working_, 0); error_number != 0) {
     throw FileTrouble(fmt::format("cannot flush {} to disk: {}", final_.string(), reason(error_number)));
   }
-  if (rename(working_.c_str(), final_.c_str()) != 0) {
-    throw FileTrouble(fmt::format("cannot give {} its final name: {}", final_.string(), reason(errno)));
+  {
+    const Uninterrupted uninterrupted;
+    if (rename(working_.c_str(), final_.c_str()) != 0) {
+      throw FileTrouble(fmt::format("cannot give {} its final name: {}", final_.string(), reason(errno)));
+    }
+    committed_ = true;
+    unlist_unfinished(uninterrupted, working_.string());
   }
-  committed_ = true;
-  unlist_unfinished(working_.string());
   // The file is in its place by now. Some file systems cannot flush a folder; that is no failure of ours.
   flush(folder_of(final_), O_DIRECTORY);
 }

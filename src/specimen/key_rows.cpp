@@ -79,8 +79,8 @@ constexpr KeyRow kRows[] = {
 
     {"panel", "view", kView, kNothing, "", "apertural|abapertural|right lateral|left lateral|apical|umbilical|axial section", kRequired, "from where the specimen is seen"},
     {"panel", "scale", kNumber, {0.1, 20.0}, "", "", "1.0", "enlargement over the common scale of the plate"},
-    {"panel.view", "azimuth", kNumber, kAnyTurn, "degrees", "", kRequired, "turn about the axis, from the apertural view"},
-    {"panel.view", "elevation", kNumber, {-90.0, 90.0}, "degrees", "", kRequired, "height of the eye; + looks at the apex"},
+    {"panel.view", "azimuth", kNumber, kAnyTurn, "degrees", "", kRequired, "degrees the eye walks to its right round the upright shell, from the apertural view"},
+    {"panel.view", "elevation", kNumber, {-90.0, 90.0}, "degrees", "", kRequired, "degrees the eye rises towards the apex"},
 };
 
 }  // namespace

@@ -49,6 +49,10 @@ class OpenFile {
   int fd_;
 };
 
+std::string_view without_byte_order_mark(std::string_view bytes) {
+  return bytes.starts_with("\xEF\xBB\xBF") ? bytes.substr(3) : bytes;
+}
+
 Position position_at(std::string_view bytes, std::size_t offset) {
   const std::string_view before = bytes.substr(0, offset);
   const std::size_t line_start = before.rfind('\n') + 1;  // npos + 1 is 0
@@ -87,7 +91,9 @@ void check_bytes(std::string_view bytes, ProblemList& problems) {
     problems.add({}, "the file is larger than 1 MiB; a scene file has a few thousand bytes, is this the right file?");
   } else if (bytes.empty()) {
     problems.add({}, "the file is empty; a scene begins with the line: format = 1");
-  } else if (bytes.find_first_not_of(" \t\r\n") == std::string_view::npos) {
+  } else if (bytes.starts_with("\xFF\xFE") || bytes.starts_with("\xFE\xFF")) {
+    problems.add({}, "the file is UTF-16; save it with the encoding UTF-8");
+  } else if (without_byte_order_mark(bytes).find_first_not_of(" \t\r\n") == std::string_view::npos) {
     problems.add({}, "the file is blank; a scene begins with the line: format = 1");
   } else if (const std::size_t nul = bytes.find('\0'); nul != std::string_view::npos) {
     problems.add(position_at(bytes, nul), "the file holds a NUL byte: it is binary, not a text; a scene is a text file in TOML");

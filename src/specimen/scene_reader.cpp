@@ -6,6 +6,7 @@
 
 #include <algorithm>
 #include <array>
+#include <limits>
 
 namespace whorl::specimen {
 namespace {
@@ -42,7 +43,8 @@ TableReader SceneReader::table(std::string_view name) {
     problems_.add(position_of(*node), fmt::format("\"{}\" is {}, wanted is a table: write {} in single brackets, its keys below", name,
                                                   kind_of(*node), written_table(name)));
   }
-  TableReader reader(found, name, found != nullptr ? position_of(*found) : kTop, problems_);
+  const bool broken = node != nullptr && found == nullptr;
+  TableReader reader(found, name, found != nullptr ? position_of(*found) : kTop, problems_, broken);
   reader.refuse_unknown_keys();
   return reader;
 }
@@ -53,8 +55,8 @@ std::vector<TableReader> SceneReader::list(std::string_view name, const toml::ta
   if (node == nullptr) return readers;
   const toml::array* array = node->as_array();
   const auto refuse = [&](const toml::node& wrong) {
-    problems_.add(position_of(wrong), fmt::format("\"{}\" holds {}, wanted is a list of tables: write {} in double brackets, once for each",
-                                                  name, kind_of(wrong), written_table(name)));
+    problems_.add(position_of(wrong), fmt::format("\"{}\" {} {}, wanted is a list of tables: write {} in double brackets, once for each",
+                                                  name, array == nullptr ? "is" : "holds", kind_of(wrong), written_table(name)));
   };
   if (array == nullptr) {
     refuse(*node);
@@ -115,6 +117,7 @@ Size SceneReader::read_size() {
   const TableReader t = table("size");
   const std::vector<std::string_view> kinds = keys_of("size");
   Size size;
+  size.mm.value = std::numeric_limits<double>::quiet_NaN();  // breaks no rule
   std::string_view first;
   for (std::size_t i = 0; i < kinds.size(); ++i) {
     if (!t.states(kinds[i])) continue;
@@ -126,7 +129,7 @@ Size SceneReader::read_size() {
       problems_.add(mm.where, fmt::format("[size] states {} and {}: state exactly one, the others follow from the form", first, kinds[i]));
     }
   }
-  if (first.empty()) {
+  if (first.empty() && !t.broken()) {
     problems_.add(t.where(), fmt::format("[size] is missing its measurement: state exactly one of {}, {}, {}, {}, a number {}", kinds[0], kinds[1],
                                          kinds[2], kinds[3], written_range(*find_key("size", kinds[0]))));
   }

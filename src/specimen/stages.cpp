@@ -12,7 +12,7 @@ constexpr double kLastWhorl = 40.0;  // as far as any shell of this format goes
 
 std::optional<double> number_at(const toml::array& pair, std::size_t index) {
   const toml::node* node = pair.get(index);
-  return node != nullptr && node->is_number() ? node->value<double>() : std::nullopt;
+  return node != nullptr ? number_of(*node) : std::nullopt;
 }
 
 }  // namespace

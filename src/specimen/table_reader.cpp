@@ -60,14 +60,14 @@ void TableReader::wrong_type(const KeyRow& row, const toml::node& node) const {
 
 const toml::node* TableReader::expect(const KeyRow& row) const {
   const toml::node* node = node_of(row.key);
-  if (node == nullptr && row.fallback == kRequired) {
+  if (node == nullptr && row.fallback == kRequired && !broken_) {
     problems_.add(where_, fmt::format("{} is missing: state {}", written_key(row.table, row.key), written_wish(row)));
   }
   return node;
 }
 
 double TableReader::checked_number(const KeyRow& row, const toml::node& node) const {
-  const std::optional<double> value = node.is_number() ? node.value<double>() : std::nullopt;
+  const std::optional<double> value = number_of(node);
   if (!value) {
     wrong_type(row, node);
   } else if (!std::isfinite(*value)) {
@@ -130,9 +130,8 @@ Stated<int> TableReader::word_index(std::string_view key) const {
   const int index = index_of(value->get());
   if (index < static_cast<int>(words.size())) return {index, position_of(*node), true};
   const diagnostics::NearestWord nearest = diagnostics::nearest_word(value->get(), words);
-  complain(row, *node, fmt::format("unknown word{}; wanted is {}",
-                                   nearest.close ? fmt::format(", did you mean \"{}\"?", nearest.word) : "",
-                                   written_wish(row)));
+  complain(row, *node, nearest.close ? fmt::format("unknown word; did you mean \"{}\"? Wanted is {}", nearest.word, written_wish(row))
+                                     : fmt::format("unknown word; wanted is {}", written_wish(row)));
   return {0, position_of(*node), true};
 }
 

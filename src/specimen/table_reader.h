@@ -16,9 +16,11 @@ namespace whorl::specimen {
 /// hold may not be asked for.
 class TableReader {
  public:
-  /// `table` may be null: the file does not have it. `where` is then the place for what is missing.
-  TableReader(const toml::table* table, std::string_view name, diagnostics::Position where, ProblemList& problems)
-      : table_(table), name_(name), where_(where), problems_(problems) {}
+  /// `table` may be null: the file does not have it. `where` is then the place for what is missing. `broken` says that
+  /// something else stands there, which has been complained of: what is missing is then no further fault.
+  TableReader(const toml::table* table, std::string_view name, diagnostics::Position where, ProblemList& problems,
+              bool broken = false)
+      : table_(table), name_(name), where_(where), problems_(problems), broken_(broken) {}
 
   bool states(std::string_view key) const { return node_of(key) != nullptr; }
   /// Null where the file does not have this table.
@@ -29,6 +31,7 @@ class TableReader {
     return node == nullptr ? nullptr : node->as_table();
   }
   diagnostics::Position where() const { return where_; }
+  bool broken() const { return broken_; }
 
   Stated<double> number(std::string_view key) const;
   Stated<double> number(std::string_view key, double fallback) const;
@@ -65,6 +68,7 @@ class TableReader {
   std::string_view name_;
   diagnostics::Position where_;
   ProblemList& problems_;
+  bool broken_;
 };
 
 }  // namespace whorl::specimen

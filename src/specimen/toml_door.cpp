@@ -4,6 +4,8 @@
 
 #include <fmt/format.h>
 
+#include <sstream>
+
 namespace whorl::specimen {
 namespace {
 
@@ -41,7 +43,17 @@ std::string shown_value(const toml::node& node) {
   if (const auto* value = node.as_boolean()) return value->get() ? "true" : "false";
   if (node.is_array()) return "[ .. ]";
   if (node.is_table()) return "{ .. }";
-  return "a date or time";
+  std::ostringstream date;
+  node.visit([&](const auto& value) {
+    if constexpr (!toml::is_container<decltype(value)>) date << value.get();
+  });
+  return date.str();
+}
+
+std::optional<double> number_of(const toml::node& node) {
+  if (const auto* value = node.as_floating_point()) return value->get();
+  if (const auto* value = node.as_integer()) return static_cast<double>(value->get());
+  return std::nullopt;
 }
 
 std::string_view kind_of(const toml::node& node) {

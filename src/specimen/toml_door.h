@@ -4,6 +4,7 @@
 
 #include "diagnostics/position.h"
 
+#include <optional>
 #include <string>
 #include <string_view>
 
@@ -18,6 +19,8 @@ diagnostics::Position position_of(const toml::key& key);
 std::string shown(std::string_view text, std::size_t most = 60);
 /// A value as it may stand after "key = ": `-0.3`, `"text"`, `[ .. ]`.
 std::string shown_value(const toml::node& node);
+/// Whole and decimal numbers, nothing else.
+std::optional<double> number_of(const toml::node& node);
 /// What kind of value it is, with its article: "a text in quotes", "a list".
 std::string_view kind_of(const toml::node& node);
 

@@ -1,0 +1,183 @@
+// SPDX-License-Identifier: Apache-2.0
+// What a scene states arrives, every key of it; what it leaves out has the default of the format.
+#include "specimen/key_table.h"
+#include "specimen/scene_file.h"
+#include "support/catch.h"
+#include "support/scene_text.h"
+
+#include <algorithm>
+
+using namespace whorl::specimen;
+using whorl::support::SceneText;
+
+namespace {
+
+bool same(const Colour& colour, int red, int green, int blue) {
+  return colour.red == red && colour.green == green && colour.blue == blue;
+}
+
+bool same(const Stages& stages, const std::vector<std::pair<double, double>>& wanted) {
+  return std::equal(stages.begin(), stages.end(), wanted.begin(), wanted.end(),
+                    [](const Stage& stage, const auto& pair) { return stage.whorl == pair.first && stage.W == pair.second; });
+}
+
+}  // namespace
+
+TEST_CASE("Every key of a scene arrives with its value", "[specimen]") {
+  const std::string text = SceneText::with_every_key().text();
+  const Specimen s = parse_scene(text, "all.toml");
+  CHECK(s.source == "all.toml");
+  CHECK(s.text == text);
+
+  CHECK(s.identity.name.value == "Cochlidion argutum");
+  CHECK(s.identity.coiling == Coiling::kSinistral);
+  CHECK(s.identity.catalogue.value == "the catalogue");
+  CHECK(s.identity.author.value == "the author");
+  CHECK(s.identity.locality.value == "the locality");
+  CHECK(s.identity.note.value == "the note");
+  CHECK(s.identity.licence.value == "the licence");
+  CHECK(s.identity.mineral == Mineral::kCalcite);
+
+  CHECK(s.growth.whorls == 7.25);
+  CHECK(same(s.growth.W, {{0.5, 1.6}, {3.0, 1.5}, {6.25, 1.4}}));
+  CHECK(s.growth.D == 0.06);
+  CHECK(s.growth.T == 2.6);
+  CHECK(s.growth.start == 1.25);
+  REQUIRE((s.growth.W_distance && s.growth.W_depth && s.growth.W_section));
+  CHECK(same(*s.growth.W_distance, {{0.0, 1.41}}));
+  CHECK(same(*s.growth.W_depth, {{0.0, 1.43}}));
+  CHECK(same(*s.growth.W_section, {{1.0, 1.7}}));
+
+  CHECK(s.section.S == 1.15);
+  CHECK(s.section.roll_deg == -7.5);
+  REQUIRE(s.section.lobes.size() == 1);
+  CHECK(s.section.lobes[0].at_deg == 60.0);
+  CHECK(s.section.lobes[0].reach == 0.2);
+  CHECK(s.section.lobes[0].width_deg == 25.0);
+
+  CHECK(s.size.kind == SizeKind::kShellHeight);
+  CHECK(s.size.mm == 24.0);
+  CHECK(s.wall.thickness_mm == 0.45);
+  CHECK(s.wall.growth == WallGrowth::kConstant);
+  CHECK(s.wall.columella == 0.18);
+  CHECK(s.lip.inclination_deg == 12.0);
+  CHECK(s.lip.thickness_mm == 0.8);
+
+  CHECK(same(s.look.exterior, 1, 2, 3));
+  CHECK(same(s.look.interior, 0xAA, 0xBB, 0xCC));
+  CHECK(same(s.look.section, 255, 128, 0));
+  CHECK(s.look.gloss == 0.75);
+  CHECK(s.light.azimuth_deg == 90.0);
+  CHECK(s.light.elevation_deg == 30.0);
+  CHECK(s.light.softness_deg == 5.0);
+  CHECK(s.light.fill == 0.5);
+
+  REQUIRE(s.lamps.size() == 1);
+  CHECK(s.lamps[0].behind_lip == 0.25);
+  CHECK(s.lamps[0].radius_mm == 0.5);
+  CHECK(s.lamps[0].strength == 70.0);
+  CHECK(s.lamps[0].temperature_k == 2700.0);
+
+  CHECK(s.plate.width_mm == 85.0);
+  CHECK(s.plate.resolution_ppi == 300.0);
+  CHECK(s.plate.background == Background::kClear);
+  CHECK(s.plate.columns == 2);
+  CHECK(s.plate.gap_mm == 2.5);
+  CHECK(s.plate.letters == Letters::kLowerInBrackets);
+  CHECK(s.plate.bar_mm == 10.0);
+  CHECK(s.plate.quality == Quality::kDraft);
+  REQUIRE(s.plate.panels.size() == 1);
+  CHECK(s.plate.panels[0].view == ViewName::kFree);
+  CHECK(s.plate.panels[0].azimuth_deg == 30.0);
+  CHECK(s.plate.panels[0].elevation_deg == 10.0);
+  CHECK(s.plate.panels[0].scale == 2.0);
+}
+
+TEST_CASE("The scene with every key has a line for every row of the table of keys", "[specimen]") {
+  const std::string text = "\n" + SceneText::with_every_key().text();
+  for (const KeyRow& row : key_table()) {
+    if (row.table == "size" && row.key != "shell_height") continue;  // exactly one of the four
+    const std::string wanted = (row.table == "panel.view" ? " " : "\n") + std::string(row.key) + " = ";
+    CAPTURE(wanted);
+    CHECK(text.find(wanted) != std::string::npos);
+  }
+}
+
+TEST_CASE("Words mean what they say", "[specimen]") {
+  const auto plate_with = [](const char* key, const char* word) {
+    return parse_scene(SceneText().set("plate", key, word).text(), "scene").plate;
+  };
+  CHECK(plate_with("background", "\"white\"").background == Background::kWhite);
+  CHECK(plate_with("background", "\"black\"").background == Background::kBlack);
+  CHECK(plate_with("letters", "\"none\"").letters == Letters::kNone);
+  CHECK(plate_with("letters", "\"A\"").letters == Letters::kUpper);
+  CHECK(plate_with("letters", "\"a\"").letters == Letters::kLower);
+  CHECK(plate_with("quality", "\"proof\"").quality == Quality::kProof);
+  CHECK(plate_with("quality", "\"print\"").quality == Quality::kPrint);
+  CHECK(plate_with("bar", "\"auto\"").bar_mm == 0.0);
+  const std::pair<const char*, ViewName> views[] = {
+      {"\"apertural\"", ViewName::kApertural},       {"\"abapertural\"", ViewName::kAbapertural},
+      {"\"right lateral\"", ViewName::kRightLateral}, {"\"left lateral\"", ViewName::kLeftLateral},
+      {"\"apical\"", ViewName::kApical},             {"\"umbilical\"", ViewName::kUmbilical},
+      {"\"axial section\"", ViewName::kAxialSection}};
+  for (const auto& [word, view] : views) {
+    CAPTURE(word);
+    CHECK(parse_scene(SceneText().set("panel", "view", word).text(), "scene").plate.panels.at(0).view == view);
+  }
+  const std::pair<const char*, SizeKind> sizes[] = {{"shell_height", SizeKind::kShellHeight}, {"shell_width", SizeKind::kShellWidth},
+                                                    {"aperture_height", SizeKind::kApertureHeight}, {"aperture_width", SizeKind::kApertureWidth}};
+  for (const auto& [key, kind] : sizes) {
+    CAPTURE(key);
+    CHECK(parse_scene(SceneText().drop("size", "shell_height").set("size", key, "9").text(), "scene").size.kind == kind);
+  }
+}
+
+TEST_CASE("A scene of only what is required has the defaults of the format, none of them marked as stated", "[specimen]") {
+  const Specimen s = parse_scene(SceneText().text(), "scene");
+  CHECK(s.identity.mineral == Mineral::kAragonite);
+  CHECK_FALSE(s.identity.mineral.given);
+  CHECK(s.identity.catalogue.value.empty());
+  CHECK_FALSE(s.identity.catalogue.given);
+  CHECK(s.growth.start == 0.75);
+  CHECK_FALSE(s.growth.start.given);
+  CHECK(s.growth.start.where.line == 0);
+  CHECK_FALSE((s.growth.W_distance || s.growth.W_depth || s.growth.W_section));
+  CHECK(same(s.growth.W, {{0.0, 1.42}}));
+  CHECK(s.section.S == 1.0);
+  CHECK(s.section.roll_deg == 0.0);
+  CHECK(s.section.lobes.empty());
+  CHECK(s.wall.growth == WallGrowth::kProportional);
+  CHECK(s.wall.columella == 0.0);
+  CHECK(s.lip.inclination_deg == 0.0);
+  CHECK(s.lip.thickness_mm == 0.45);
+  CHECK_FALSE(s.lip.thickness_mm.given);
+  CHECK(same(s.look.exterior, 0xd8, 0xc7, 0xa8));
+  CHECK(same(s.look.interior, 0xf1, 0xe6, 0xda));
+  CHECK(same(s.look.section, 0xb0, 0x8d, 0x82));
+  CHECK(s.look.gloss == 0.35);
+  CHECK(s.light.azimuth_deg == 135.0);
+  CHECK(s.light.elevation_deg == 45.0);
+  CHECK(s.light.softness_deg == 12.0);
+  CHECK(s.light.fill == 0.35);
+  CHECK(s.lamps.empty());
+  CHECK(s.plate.width_mm == 180.0);
+  CHECK(s.plate.resolution_ppi == 600.0);
+  CHECK(s.plate.background == Background::kWhite);
+  CHECK(s.plate.columns == 3);
+  CHECK(s.plate.gap_mm == 4.0);
+  CHECK(s.plate.letters == Letters::kUpper);
+  CHECK(s.plate.bar_mm == 0.0);
+  CHECK(s.plate.quality == Quality::kPrint);
+  const ViewName usual[] = {ViewName::kApertural, ViewName::kAbapertural, ViewName::kRightLateral,
+                            ViewName::kApical,    ViewName::kUmbilical,   ViewName::kAxialSection};
+  REQUIRE(s.plate.panels.size() == 6);
+  for (std::size_t i = 0; i < 6; ++i) {
+    CHECK(s.plate.panels[i].view == usual[i]);
+    CHECK(s.plate.panels[i].scale == 1.0);
+  }
+}
+
+TEST_CASE("A short shell begins early enough for a quarter whorl to be left", "[specimen]") {
+  CHECK(parse_scene(SceneText().set("growth", "whorls", "0.5").text(), "scene").growth.start == 0.25);
+  CHECK(parse_scene(SceneText().set("growth", "whorls", "0.9").text(), "scene").growth.start == Approx(0.65));
+}

@@ -1,0 +1,88 @@
+// SPDX-License-Identifier: Apache-2.0
+// Writes scenes for tests.
+#include "support/scene_text.h"
+
+#include "specimen/key_table.h"
+#include "specimen/scene_file.h"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+
+namespace whorl::support {
+
+SceneText::SceneText() {
+  set("", "format", "1");
+  set("specimen", "name", "\"Cochlidion argutum\"").set("specimen", "coiling", "\"dextral\"");
+  set("growth", "whorls", "7.25").set("growth", "W", "1.42").set("growth", "D", "0.06").set("growth", "T", "2.6");
+  set("size", "shell_height", "24.0");
+  set("wall", "thickness", "0.45");
+}
+
+SceneText SceneText::with_every_key() {
+  SceneText scene;
+  scene.set("specimen", "coiling", "\"sinistral\"");
+  for (const char* key : {"catalogue", "author", "locality", "note", "licence"}) {
+    scene.set("specimen", key, fmt::format("\"the {}\"", key));
+  }
+  scene.set("specimen", "mineral", "\"calcite\"");
+  scene.set("growth", "W", "[[0.5, 1.6], [3, 1.5], [6.25, 1.4]]").set("growth", "start", "1.25");
+  scene.set("growth", "W_distance", "1.41").set("growth", "W_depth", "1.43").set("growth", "W_section", "[[1.0, 1.7]]");
+  scene.set("section", "S", "1.15").set("section", "roll", "-7.5");
+  scene.set("section.lobe", "at", "60.0").set("section.lobe", "reach", "0.2").set("section.lobe", "width", "25");
+  scene.set("wall", "growth", "\"constant\"").set("wall", "columella", "0.18");
+  scene.set("lip", "inclination", "12").set("lip", "thickness", "0.8");
+  scene.set("look", "exterior", "\"#010203\"").set("look", "interior", "\"#AABBCC\"").set("look", "section", "\"#ff8000\"");
+  scene.set("look", "gloss", "0.75");
+  scene.set("light", "azimuth", "90").set("light", "elevation", "30").set("light", "softness", "5").set("light", "fill", "0.5");
+  scene.set("lamp", "behind_lip", "0.25").set("lamp", "radius", "0.5").set("lamp", "strength", "70").set("lamp", "temperature", "2700");
+  scene.set("plate", "width", "85").set("plate", "resolution", "300").set("plate", "background", "\"clear\"");
+  scene.set("plate", "columns", "2").set("plate", "gap", "2.5").set("plate", "letters", "\"(a)\"").set("plate", "bar", "10.0");
+  scene.set("plate", "quality", "\"draft\"");
+  return scene.set("panel", "view", "{ azimuth = 30.0, elevation = 10.0 }").set("panel", "scale", "2.0");
+}
+
+SceneText& SceneText::set(const std::string& table, const std::string& key, const std::string& value) {
+  auto& keys = tables_[table];
+  const auto found = std::find_if(keys.begin(), keys.end(), [&](const auto& entry) { return entry.first == key; });
+  if (found != keys.end()) {
+    found->second = value;
+  } else {
+    keys.emplace_back(key, value);
+  }
+  return *this;
+}
+
+SceneText& SceneText::drop(const std::string& table, const std::string& key) {
+  auto& keys = tables_[table];
+  keys.erase(std::remove_if(keys.begin(), keys.end(), [&](const auto& entry) { return entry.first == key; }), keys.end());
+  return *this;
+}
+
+std::string SceneText::text() const {
+  std::string text;
+  for (const auto& [table, keys] : tables_) {
+    if (!table.empty()) text += fmt::format("{}\n", specimen::written_table(table));
+    for (const auto& [key, value] : keys) text += fmt::format("{} = {}\n", key, value);
+  }
+  return text;
+}
+
+std::vector<diagnostics::Problem> problems_of(const std::string& text) {
+  try {
+    specimen::parse_scene(text, "scene");
+  } catch (const diagnostics::InvalidInput& error) {
+    return error.problems();
+  }
+  return {};
+}
+
+std::string complaint_about(const std::string& text) {
+  std::string all;
+  for (const diagnostics::Problem& problem : problems_of(text)) {
+    all += fmt::format("{}:{}: {}\n", problem.where.line, problem.where.column, problem.message);
+  }
+  return all;
+}
+
+}  // namespace whorl::support
