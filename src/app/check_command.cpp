@@ -2,6 +2,7 @@
 // The command 'check': is the scene file valid, and what does it state?
 #include "app/commands.h"
 
+#include "compile/compile.h"
 #include "diagnostics/error.h"
 #include "specimen/key_table.h"
 #include "specimen/scene_file.h"
@@ -34,7 +35,7 @@ std::string view_text(const Panel& panel) {
   return std::string(word_of("panel", "view", panel.view.value));
 }
 
-std::string summary(const Specimen& read) {
+std::string summary(const Specimen& read, const scene::Scene& compiled) {
   const Plate& plate = read.plate;
   std::string kind(keys_of("size").at(static_cast<std::size_t>(read.size.kind.value)));
   for (char& letter : kind) letter = letter == '_' ? ' ' : letter;
@@ -45,7 +46,8 @@ std::string summary(const Specimen& read) {
                      word_of("specimen", "coiling", read.identity.coiling.value)) +
          fmt::format("  growth    {} whorls, {}, D {}, T {}\n", read.growth.whorls.value,
                      expansion_text(read.growth.W.value), read.growth.D.value, read.growth.T.value) +
-         fmt::format("  size      {} {} mm\n", kind, read.size.mm.value) +
+         fmt::format("  size      {} {} mm, which makes the shell {:.2f} mm high\n", kind, read.size.mm.value,
+                     compiled.height_mm) +
          fmt::format("  plate     {} mm wide at {} pixels per inch, {}\n", plate.width_mm.value,
                      plate.resolution_ppi.value, word_of("plate", "quality", plate.quality.value)) +
          fmt::format("  panels    {}\n", fmt::join(views, ", "));
@@ -55,7 +57,8 @@ std::string summary(const Specimen& read) {
 
 int check_command(const Options& options, Progress&) {
   const Specimen read = read_scene_file(options.scene);
-  std::fputs(summary(read).c_str(), stdout);
+  const scene::Scene compiled = compile::compile_scene(read);
+  std::fputs(summary(read, compiled).c_str(), stdout);
   return static_cast<int>(diagnostics::ExitCode::kDone);
 }
 

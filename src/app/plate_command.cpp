@@ -1,13 +1,108 @@
 // SPDX-License-Identifier: Apache-2.0
-// The command 'plate'.
+// The command 'plate': a scene file in, a finished figure out.
 #include "app/commands.h"
+#include "app/picture_progress.h"
+#include "app/solid_counters.h"
+#include "app/version.h"
 
 #include "diagnostics/error.h"
+#include "math/parallel.h"
+#include "plate/figure.h"
+#include "plate/studio.h"
+#include "specimen/scene_file.h"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <cctype>
+#include <chrono>
+#include <cstdio>
+#include <filesystem>
 
 namespace whorl::app {
+namespace {
 
-int plate_command(const Options&, Progress&) {
-  throw diagnostics::Error(diagnostics::ExitCode::kUnexpected, "'plate' is not built yet");
+using plate::FigurePanel;
+using plate::FigurePlan;
+
+std::string lower(std::string text) {
+  for (char& c : text) c = static_cast<char>(std::tolower(static_cast<unsigned char>(c)));
+  return text;
+}
+
+// Keeps the one panel that is named by letter, number or view.
+void keep_only(specimen::Specimen& specimen, const std::vector<plate::View>& views, const std::string& wanted) {
+  std::vector<specimen::Panel> kept;
+  std::string known;
+  for (std::size_t i = 0; i < views.size(); ++i) {
+    const std::string letter = plate::panel_letter(static_cast<int>(i), specimen::Letters::kUpper);
+    if (lower(wanted) == lower(letter) || wanted == std::to_string(i + 1) || lower(wanted) == views[i].label)
+      kept.push_back(specimen.plate.panels[i]);
+    known += fmt::format("{}{} ({})", i ? ", " : "", letter, views[i].label);
+  }
+  if (kept.empty())
+    throw diagnostics::UsageError(fmt::format("--only '{}': the plate has no such panel; it has {}", wanted, known));
+  kept.resize(1);
+  specimen.plate.panels = kept;
+}
+
+}  // namespace
+
+int plate_command(const Options& options, Progress& progress) {
+  specimen::Specimen specimen = specimen::read_scene_file(options.scene);
+  specimen = plate::at_quality(specimen, options.quality.value_or(specimen.plate.quality.value));
+  if (!std::filesystem::is_directory(options.out)) {
+    std::error_code fault;
+    std::filesystem::create_directories(options.out, fault);
+    if (fault)
+      throw diagnostics::FileTrouble(
+          fmt::format("{}: the folder could not be made: {}", options.out.string(), fault.message()));
+  }
+
+  progress.step("compiling the shell");
+  plate::Studio studio(specimen);
+  if (options.only_panel) {
+    keep_only(specimen, plate::views_of(specimen), *options.only_panel);
+  }
+  const std::vector<plate::View> views = plate::views_of(specimen);
+  std::vector<plate::Extents> extents;
+  for (const plate::View& view : views) extents.push_back(plate::extents_in(view, studio.surface_points()));
+  const FigurePlan plan = plate::plan_figure(specimen, views, extents);
+  double finest = 1e300;
+  for (const FigurePanel& panel : plan.panels) finest = std::min(finest, panel.mm_per_pixel);
+  studio.set_up(finest, options.exact);
+  if (studio.scene().start_raised)
+    progress.note("note: the earliest whorls are under a thousandth of the last and are drawn as the embryonic cap");
+
+  const int samples = plate::quality_steps(specimen.plate.quality.value).samples;
+  double area = 0.0, before = 0.0;
+  for (const FigurePanel& panel : plan.panels) area += static_cast<double>(panel.rect.width) * panel.rect.height;
+  progress.step(fmt::format("rendering {} panel{}, {} x {} pixels", plan.panels.size(),
+                            plan.panels.size() == 1 ? "" : "s", plan.width, plan.height));
+  const auto start = std::chrono::steady_clock::now();
+  std::vector<transport::Film> films;
+  for (std::size_t i = 0; i < plan.panels.size(); ++i) {
+    const FigurePanel& panel = plan.panels[i];
+    const double share = static_cast<double>(panel.rect.width) * panel.rect.height / area;
+    films.push_back(studio.picture(panel.view, panel.camera(studio.front_mm()), samples, options.seed,
+                                   static_cast<std::uint32_t>(i), PictureProgress(progress, before, share)));
+    before += share;
+  }
+
+  plate::RunFacts facts;
+  facts.version = program_version();
+  facts.build = program_build();
+  facts.seed = options.seed;
+  facts.threads = thread_count();
+  facts.seconds_compile = studio.compile_seconds();
+  facts.seconds_render = std::chrono::duration<double>(std::chrono::steady_clock::now() - start).count();
+  facts.exact = options.exact;
+  facts.quality = specimen.plate.quality.value;
+  facts.counters = solid_counters(studio.solid());
+  progress.step("writing the files");
+  const auto paths = plate::write_figure(plan, specimen, films, facts, options.out, plate::figure_stem(options.scene));
+  for (const std::filesystem::path& path : paths) std::printf("%s\n", path.string().c_str());
+  return static_cast<int>(diagnostics::ExitCode::kDone);
 }
 
 }  // namespace whorl::app

@@ -1,0 +1,90 @@
+// SPDX-License-Identifier: Apache-2.0
+// From a specimen to pictures of it.
+#include "plate/studio.h"
+
+#include "compile/compile.h"
+#include "growth/extents.h"
+#include "trace/sectioned_solid.h"
+#include "transport/lighting.h"
+#include "transport/path_tracer.h"
+
+#include <algorithm>
+#include <chrono>
+#include <optional>
+
+namespace whorl::plate {
+namespace {
+
+// The cells' surface stays this near to the true one: a tenth of a pixel, and finer where that would show in a measure:
+// a ray that meets the surface at a third of a right angle or more is then true to 1e-5 of the height.
+constexpr double kOfAPixel = 0.1, kOfTheHeight = 2e-6;
+
+double now() {
+  return std::chrono::duration<double>(std::chrono::steady_clock::now().time_since_epoch()).count();
+}
+
+}  // namespace
+
+QualitySteps quality_steps(specimen::Quality quality) {
+  switch (quality) {
+    case specimen::Quality::kDraft: return {0.25, 16};
+    case specimen::Quality::kProof: return {0.5, 64};
+    case specimen::Quality::kPrint: return {1.0, 128};
+  }
+  return {1.0, 128};
+}
+
+specimen::Specimen at_quality(specimen::Specimen specimen, specimen::Quality quality) {
+  specimen.plate.quality.value = quality;
+  specimen.plate.resolution_ppi.value *= quality_steps(quality).resolution;
+  return specimen;
+}
+
+Studio::Studio(const specimen::Specimen& specimen) : specimen_(specimen) {
+  const double start = now();
+  scene_ = std::make_unique<scene::Scene>(compile::compile_scene(specimen));
+  field_ = std::make_unique<field::Field>(*scene_);
+  constexpr int kTurnSteps = 360, kAround = 180;
+  points_ = growth::surface_points(compile::exterior_of(*scene_), kTurnSteps, kAround);
+  // The rim stands out beyond the growth front by its radius.
+  const double lip = scene_->law.theta_lip;
+  const Vec3 forward(-std::sin(lip), std::cos(lip), 0.0);
+  const Vec3 mouth(scene_->law.distance * std::cos(lip), scene_->law.distance * std::sin(lip), scene_->law.depth);
+  const double nearby = 1.5 * scene_->law.half_breadth * std::max(1.0, scene_->law.S);
+  const std::size_t count = points_.size();
+  for (std::size_t i = 0; i < count; ++i)
+    if ((points_[i] - mouth).length() < nearby) points_.push_back(points_[i] + scene_->front.rim_radius * forward);
+  const Box3& box = scene_->bounds;
+  front_mm_ = 1.01 * std::max(box.min.length(), box.max.length());
+  materials_ = transport::make_materials(specimen.look, specimen.identity.mineral);
+  compile_seconds_ = now() - start;
+}
+
+void Studio::set_up(double mm_per_pixel, bool exact) {
+  const double start = now();
+  const double tolerance = std::min(kOfAPixel * mm_per_pixel, kOfTheHeight * scene_->height_mm);
+  solid_ = std::make_unique<trace::EmbreeSolid>(*field_, trace::SolidOptions{tolerance, exact});
+  compile_seconds_ += now() - start;
+}
+
+transport::Film Studio::picture(const View& view, const transport::Camera& camera, int samples, std::uint64_t seed,
+                                std::uint32_t number, const transport::Progress& progress) const {
+  std::vector<transport::PlacedLamp> lamps;
+  for (const scene::Lamp& lamp : scene_->lamps)
+    lamps.push_back({lamp.centre, lamp.radius, lamp.strength, lamp.temperature_k});
+  std::optional<trace::SectionedSolid> half;
+  if (view.cut) half.emplace(*solid_, view.page_to_shell.z);
+
+  transport::RenderJob job;
+  job.shell = half ? static_cast<const trace::Surfaces*>(&*half) : solid_.get();
+  job.bounds_mm = scene_->bounds;
+  job.camera = camera;
+  job.lighting = transport::light_page(specimen_.light, lamps, view.page_to_shell);
+  job.materials = materials_;
+  job.samples_per_pixel = samples;
+  job.seed = seed;
+  job.panel = number;
+  return transport::render(job, progress);
+}
+
+}  // namespace whorl::plate
