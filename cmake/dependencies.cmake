@@ -1,10 +1,11 @@
 # SPDX-License-Identifier: Apache-2.0
 # Finds the third-party libraries; what differs between Debian 12 and 13 is settled here.
 find_package(Threads REQUIRED)
-# By pkg-config: Debian's CMake files of these two insist on tools and Python modules that nothing here needs.
+# By pkg-config: Debian's CMake files of Imath and OpenImageIO insist on tools and Python modules that nothing here needs.
 find_package(PkgConfig REQUIRED)
 pkg_check_modules(IMATH REQUIRED IMPORTED_TARGET Imath)
 pkg_check_modules(OIIO REQUIRED IMPORTED_TARGET OpenImageIO)
+pkg_check_modules(FREETYPE REQUIRED IMPORTED_TARGET freetype2)
 find_package(TBB REQUIRED)
 find_package(fmt REQUIRED)
 find_package(nlohmann_json REQUIRED)

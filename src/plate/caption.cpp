@@ -90,8 +90,8 @@ std::string bars_sentence(const FigurePlan& plan) {
     if (plan.bars.size() > 1) text += panel_names(plan, bar) + " = ";
     text += fmt::format("{} (magnification × {:.3g})", bar_label(bar.length_mm), magnification);
   }
-  return text.empty() ? "" : text + fmt::format(" at a printed width of {} mm.",
-                                                plain_number(plan.width * kMmPerInch / plan.resolution_ppi));
+  return text.empty() ? "" : text + fmt::format(" at a printed width of {:.3g} mm.",
+                                                plan.width * kMmPerInch / plan.resolution_ppi);
 }
 
 /// "apertural and apical views, axial section"

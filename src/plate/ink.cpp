@@ -2,7 +2,7 @@
 // Places text and bars on the figure.
 #include "plate/ink.h"
 
-#include "plate/image_text.h"
+#include "plate/text_mask.h"
 #include "plate/scale_bar.h"
 
 #include <algorithm>

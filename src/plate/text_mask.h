@@ -12,11 +12,12 @@ namespace whorl::plate {
 /// Cropped to the ink. Row-major, top row first.
 struct TextMask {
   int width = 0, height = 0;
-  int base = 0;  // rows from the top down to the base line; over `height` is possible ("'")
+  int base = 0;  // rows from the top down to the base line
   std::vector<float> coverage;  // 0 .. 1
 };
 
-/// One line of UTF-8 text. The size is rounded to whole pixels. Throws FileTrouble where there is no typeface.
+/// One line of UTF-8 text at its exact size, unhinted, so that it has the same proportions at every resolution.
+/// Throws FileTrouble where the typeface is missing, cannot be read or lacks a character.
 TextMask text_mask(const std::string& text, double points, double resolution_ppi, Weight weight);
 
 }  // namespace whorl::plate
