@@ -9,7 +9,7 @@
 namespace whorl::shaders_cpu {
 
 /// Directional albedo of a GGX coat (single scattering, Fresnel included): E(cos) for one index and roughness,
-/// tabulated by deterministic quadrature when built (a few tens of milliseconds).
+/// tabulated by deterministic quadrature when built (some hundredths of a second), to 5e-5.
 class CoatAlbedo {
  public:
   static constexpr int kNodes = 257;
@@ -40,7 +40,7 @@ class CoatAlbedo {
   float index_, alpha_, mean_ = 0.0f;
 };
 
-/// E by quadrature, to about 1e-6: the value that the table interpolates. `cosine` in (0, 1].
+/// E by quadrature: within 2e-5 at order 16, 1e-6 at order 64. `cosine` in (0, 1].
 double coat_albedo_quadrature(double cosine, double index, double alpha, int order);
 
 }  // namespace whorl::shaders_cpu
