@@ -11,6 +11,7 @@
 #include <algorithm>
 #include <cmath>
 #include <cstddef>
+#include <optional>
 
 namespace whorl::plate {
 namespace {
@@ -136,32 +137,60 @@ LayoutBar make_bar(double length_mm, double mm_per_pixel, int right_end, int blo
   return bar;
 }
 
-/// The common bar: in the empty cells of the last row if it finds room there, else below all.
-void add_common_bar(const LayoutRequest& request, const Measures& px, const std::vector<Column>& columns, Layout& layout) {
-  const auto first = std::find_if(request.views.begin(), request.views.end(),
-                                  [](const LayoutView& view) { return view.scale == 1.0; });
-  if (first == request.views.end()) return;
+/// The bar of all panels that share the common scale, and the cell under which it stands: the last of them.
+struct CommonBar {
+  double length_mm = 0.0, length_px = 0.0;
+  std::size_t last_panel = 0;
+};
+
+std::optional<CommonBar> common_bar(const LayoutRequest& request, const Measures& px, const Layout& layout) {
+  std::optional<CommonBar> bar;
   const double mm_per_pixel = layout.paper_mm_per_pixel / layout.common_scale;
-  const double length_mm = request.bar_mm > 0.0 ? request.bar_mm : automatic_bar_mm(first->extents_mm.width());
-  const double length_px = length_mm / mm_per_pixel;
-  if (length_px > layout.width - 2 * px.margin)
+  for (std::size_t i = 0; i < request.views.size(); ++i) {
+    if (request.views[i].scale != 1.0) continue;
+    if (!bar)
+      bar = {request.bar_mm > 0.0 ? request.bar_mm : automatic_bar_mm(request.views[i].extents_mm.width()), 0.0, i};
+    bar->last_panel = i;
+  }
+  if (!bar) return bar;
+  bar->length_px = bar->length_mm / mm_per_pixel;
+  if (bar->length_px > layout.width - 2 * px.margin)
     refuse(request, request.bar_where,
            fmt::format("a scale bar of {} mm is longer than the plate, which shows {} mm of shell from edge to edge; state a "
                        "shorter `bar`, or \"auto\"",
-                       plain_number(length_mm), plain_number(layout.width * mm_per_pixel)));
-  const std::size_t in_last_row = request.views.size() % columns.size();
-  const PixelRect& last = layout.panels.back().rect;
-  const bool beside = in_last_row != 0 &&
-                      std::max(length_px, kLabelRoom * px.per_mm) + 2 * px.margin <= layout.width - columns[in_last_row].left &&
-                      px.bar_block <= last.height;
-  const int block_top = beside ? last.bottom() - px.bar_block : layout.height;
-  if (!beside) layout.height += px.bar_block;
-  layout.bars.push_back(make_bar(length_mm, mm_per_pixel, layout.width - px.margin, block_top, px, -1));
+                       plain_number(bar->length_mm), plain_number(layout.width * mm_per_pixel)));
+  return bar;
+}
+
+/// Places the common bar at the right of its row [first, last): in empty cells if there are some with room, else below. It keeps
+/// away from panels of another scale, whose bars begin at `bars_top`.
+void place_common_bar(const CommonBar& bar, const LayoutRequest& request, const Measures& px,
+                      const std::vector<Column>& columns, std::size_t first, std::size_t last, int bars_top, Layout& layout) {
+  const Column& home = columns[bar.last_panel - first];
+  const bool ends_row = bar.last_panel + 1 == last;
+  const bool alone = std::all_of(request.views.begin() + static_cast<std::ptrdiff_t>(first),
+                                 request.views.begin() + static_cast<std::ptrdiff_t>(last),
+                                 [](const LayoutView& view) { return view.scale == 1.0; });
+  const int need = static_cast<int>(std::ceil(std::max(bar.length_px, kLabelRoom * px.per_mm))) + 2 * px.margin;
+  const PixelRect& row = layout.panels[bar.last_panel].rect;
+  int right = ends_row ? layout.width : home.right;
+  int block_top = layout.height;
+  if (ends_row && last - first < columns.size() && need <= layout.width - columns[last - first].left &&
+      px.bar_block <= row.height) {
+    block_top = row.bottom() - px.bar_block;
+  } else if (alone || need <= right - home.left) {
+    block_top = bars_top;
+  } else {
+    right = layout.width;
+  }
+  layout.height = std::max(layout.height, block_top + px.bar_block);
+  const double mm_per_pixel = layout.panels[bar.last_panel].mm_per_pixel;
+  layout.bars.push_back(make_bar(bar.length_mm, mm_per_pixel, right - px.margin, block_top, px, -1));
 }
 
 /// Lays out views [first, last) as one row that begins at the figure's present height.
-void add_row(const LayoutRequest& request, const Measures& px, const std::vector<Column>& columns, std::size_t first,
-             Layout& layout) {
+void add_row(const LayoutRequest& request, const Measures& px, const std::vector<Column>& columns,
+             const std::optional<CommonBar>& bar, std::size_t first, Layout& layout) {
   const std::size_t last = std::min(first + columns.size(), request.views.size());
   RowHeight row;
   for (std::size_t i = first; i < last; ++i)
@@ -197,6 +226,8 @@ void add_row(const LayoutRequest& request, const Measures& px, const std::vector
                                    panel.rect.right() - px.margin, bars_top, px, static_cast<int>(i)));
     layout.height = bars_top + px.bar_block;
   }
+  if (bar && bar->last_panel >= first && bar->last_panel < last)
+    place_common_bar(*bar, request, px, columns, first, last, bars_top, layout);
 }
 
 void check_cells(const LayoutRequest& request, const Layout& layout) {
@@ -231,11 +262,11 @@ Layout lay_out(const LayoutRequest& request) {
   layout.width = pixels_across(request.width_mm, request.resolution_ppi);
   const int count = std::clamp(request.columns, 1, static_cast<int>(request.views.size()));
   const std::vector<Column> columns = set_columns(request, px, count, layout);
+  const std::optional<CommonBar> bar = common_bar(request, px, layout);
   for (std::size_t first = 0; first < request.views.size(); first += columns.size()) {
     if (first > 0) layout.height += px.gap;
-    add_row(request, px, columns, first, layout);
+    add_row(request, px, columns, bar, first, layout);
   }
-  add_common_bar(request, px, columns, layout);
   check_cells(request, layout);
   return layout;
 }

@@ -40,7 +40,7 @@ struct LayoutRequest {
   double width_mm = 180.0, resolution_ppi = 600.0, gap_mm = 4.0;
   int columns = 3;
   bool letters = true;
-  double bar_mm = 0.0;  // 0 = by the 1-2-5 rule
+  double bar_mm = 0.0;  // 0 = by the 1-2-5 rule; of the common bar, others always follow the rule
   std::vector<LayoutView> views;  // in reading order
   std::string source;             // for errors: the scene file and the places in it
   diagnostics::Position plate_where, bar_where;

@@ -130,6 +130,9 @@ TEST_CASE("Whatever the views, panels keep apart and inside, axes on centre line
       for (const LayoutBar& bar : layout.bars)
         CHECK_FALSE(overlap(panel.rect, rect_of(bar)));
     }
+    for (const LayoutBar& bar : layout.bars)
+      for (const LayoutBar& other : layout.bars)
+        if (&bar != &other) CHECK_FALSE(overlap(rect_of(bar), rect_of(other)));
     for (const LayoutBar& bar : layout.bars) {
       CHECK(inside(rect_of(bar), layout.width, layout.height));
       CHECK(bar.length_px * bar.mm_per_pixel == Approx(bar.length_mm).epsilon(1e-12));
@@ -167,6 +170,17 @@ TEST_CASE("A bar finds its place in the empty cells of the last row, else below 
   const Layout beside = lay_out(request_of({kTall, kTall, kTall}, 2));
   CHECK(beside.bars[0].left > beside.panels[2].rect.right());
   CHECK(beside.height == beside.panels[2].rect.bottom());
+}
+
+TEST_CASE("The common bar keeps to the panels it belongs to where another scale stands beside them", "[plate][layout]") {
+  const LayoutView detail{{5.0, 5.0, 5.0, 5.0}, Stance::kAlongAxis, 1.5};
+  const Layout layout = lay_out(request_of({kTall, kTall, kTall, kTall, kTall, detail}, 3));
+  REQUIRE(layout.bars.size() == 2);
+  const LayoutBar& common = layout.bars[1];
+  CHECK(common.panel == -1);
+  CHECK(common.left >= layout.panels[4].rect.x);
+  CHECK(common.left + common.length_px <= layout.panels[4].rect.right());
+  CHECK(common.top == layout.bars[0].top);
 }
 
 TEST_CASE("A letter gets a strip of its own only where a picture would reach into the corner", "[plate][layout]") {
