@@ -17,7 +17,6 @@ namespace whorl::specimen {
 namespace {
 
 using diagnostics::FileTrouble;
-using diagnostics::Position;
 
 std::string reason(int error_number) { return std::generic_category().message(error_number); }
 
@@ -51,13 +50,6 @@ class OpenFile {
 
 std::string_view without_byte_order_mark(std::string_view bytes) {
   return bytes.starts_with("\xEF\xBB\xBF") ? bytes.substr(3) : bytes;
-}
-
-Position position_at(std::string_view bytes, std::size_t offset) {
-  const std::string_view before = bytes.substr(0, offset);
-  const std::size_t line_start = before.rfind('\n') + 1;  // npos + 1 is 0
-  const auto line = 1 + std::count(before.begin(), before.end(), '\n');
-  return {static_cast<std::uint32_t>(line), static_cast<std::uint32_t>(1 + count_characters(before.substr(line_start)))};
 }
 
 void check_lines(std::string_view bytes, ProblemList& problems) {

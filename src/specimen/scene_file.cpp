@@ -5,6 +5,7 @@
 #include "specimen/scene_bytes.h"
 #include "specimen/scene_reader.h"
 #include "specimen/scene_rules.h"
+#include "specimen/toml_guard.h"
 
 #include <fmt/format.h>
 
@@ -58,6 +59,7 @@ toml::table parse_toml(const std::string& text, const std::string& source) {
 Specimen parse_scene(std::string text, std::string source_name) {
   ProblemList problems;
   check_bytes(text, problems);
+  if (problems.empty()) guard_toml(text, problems);
   problems.throw_if_any(source_name);
   const toml::table root = parse_toml(text, source_name);
   SceneReader reader(root, problems);

@@ -44,6 +44,25 @@ std::optional<std::size_t> first_bad_byte(std::string_view bytes) {
   return std::nullopt;
 }
 
+std::string_view first_character(std::string_view text) {
+  return text.substr(0, text.empty() ? 0 : std::max<std::size_t>(1, sequence_length(text, 0)));
+}
+
+char32_t code_point(std::string_view character) {
+  // The lead byte carries 7, 5, 4 or 3 bits, every other one 6.
+  const unsigned lead = byte_at(character, 0);
+  char32_t number = lead < 0x80 ? lead : lead < 0xE0 ? lead & 0x1Fu : lead < 0xF0 ? lead & 0x0Fu : lead & 0x07u;
+  for (std::size_t i = 1; i < character.size(); ++i) number = (number << 6) | (byte_at(character, i) & 0x3Fu);
+  return number;
+}
+
+diagnostics::Position position_at(std::string_view text, std::size_t offset) {
+  const std::string_view before = text.substr(0, offset);
+  const std::size_t line_start = before.rfind('\n') + 1;  // npos + 1 is 0
+  const auto line = 1 + std::count(before.begin(), before.end(), '\n');
+  return {static_cast<std::uint32_t>(line), static_cast<std::uint32_t>(1 + count_characters(before.substr(line_start)))};
+}
+
 std::size_t count_characters(std::string_view text) {
   return static_cast<std::size_t>(
       std::count_if(text.begin(), text.end(), [](char c) { return (static_cast<unsigned char>(c) & 0xC0u) != 0x80u; }));

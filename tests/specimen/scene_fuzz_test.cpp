@@ -16,10 +16,10 @@ using whorl::support::SceneText;
 namespace {
 
 // Scraps that have upset parsers of numbers, texts and tables.
-const std::array<const char*, 30> kScraps{
+const std::array<const char*, 36> kScraps{
     "nan", "-inf", "1e999", "-0.0", "0x7fffffffffffffff", "9223372036854775808", "1_0", "''", "\"\"", "\"\"\"", "[[", "]]", "[", "]",
     "{", "}", "=", ".", ",", "\n", "\r", "#", "\\u0000", "\xC3", "\xEF\xBB\xBF", "true", "1979-05-27T07:32:00Z", "[[panel]]\n", "format = 2\n",
-    "a.b.c = 1\n"};
+    "a.b.c = 1\n", "\xC3\xB6", "\xCC\xA0", "\xE2\x80\x9C", "[&]\n", "'''", "\\"};
 
 class Mutator {
  public:
