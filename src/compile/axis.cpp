@@ -47,13 +47,16 @@ void build_pillar(scene::Scene& scene, double columella, const Crossing& at_lip)
   scene::Pillar& pillar = scene.pillar;
   pillar.present = true;
   const double r = law.half_breadth;
-  // Tip inside the embryonic shell; at the base it tapers off beside the last section's inner side.
-  constexpr double kTaperFrom = 0.5 * kPi, kBelowCentre = 0.45;
+  // Tip inside the embryonic shell; at the base it ends in a dome beside the last section's inner side.
+  constexpr double kBelowCentre = 0.2, kDome = 2.2;
   const double tip = chamber.centre_z + 0.3 * chamber.half_height;
   const double full_from = chamber.centre_z + 0.9 * chamber.half_height;
-  const double taper_from = law.at(law.theta_lip - kTaperFrom).depth;
   double end = law.depth + kBelowCentre * law.S * r;
   if (at_lip.beyond > 0.0) end = std::max(end, at_lip.lowest + 0.1 * r);
+
+  const double taper_from = end - kDome * columella * r;
+  pillar.fillet_from_z = std::min(law.at(law.theta_lip - kPi).depth, taper_from - 0.5 * r);
+  pillar.fillet_end_z = taper_from;
 
   constexpr int kHalf = 1024;  // samples over the pillar's length
   const double margin = 0.05 * (end - tip);

@@ -41,9 +41,9 @@ struct SectionBox {
   double psi_from = 0.0, psi_span = kTwoPi;
 };
 
-SectionBox section_box(const growth::CoilingLaw& law, const Box3& box, double theta) {
+SectionBox section_box(const growth::CoilingLaw& law, const Box3& box, const Polar& at) {
   SectionBox s;
-  s.at = polar(box, theta);
+  s.at = at;
   const growth::Station a = law.at(s.at.theta.lo), b = law.at(s.at.theta.hi);
   s.d = {a.distance, b.distance};
   s.h = {a.depth, b.depth};
@@ -145,13 +145,35 @@ Interval front_range(const scene::Scene& scene, const SectionBox& s, const Box3&
 }  // namespace
 
 void Field::whorl_bounds(const Box3& box, double theta, Interval& outer, Interval& hollow) const noexcept {
-  const SectionBox s = section_box(scene_.law, box, theta);
+  // Over a wide range of growth (round the axis) the section's size and place would be bounded apart: piece by piece.
+  constexpr double kPiece = 0.35;
+  const Polar at = polar(box, theta);
+  const int pieces = std::max(1, static_cast<int>(std::ceil(at.theta.width() / kPiece)));
+  for (int i = 0; i < pieces; ++i) {
+    const double step = at.theta.width() / pieces, from = at.theta.lo + i * step;
+    Interval o, h;
+    piece_bounds(box, at.rho, {from, i + 1 == pieces ? at.theta.hi : from + step}, o, h);
+    outer = i == 0 ? o : hull(outer, o);
+    hollow = i == 0 ? h : hull(hollow, h);
+  }
+}
+
+void Field::piece_bounds(const Box3& box, Interval rho, Interval theta, Interval& outer,
+                         Interval& hollow) const noexcept {
+  const SectionBox s = section_box(scene_.law, box, {rho, theta});
   if (s.at.theta.lo > scene_.theta_end || s.at.theta.hi < scene_.theta_begin) {
     outer = hollow = Interval(-s.r.hi, -0.1 * s.r.lo);
     return;
   }
   const OutlineBounds o = outline_bounds(scene_, s, false, false), i = outline_bounds(scene_, s, true, false);
   outer = length_range(s, o, t2_range(scene_, s, o, false, box));
+  if (scene_.pillar.present) {
+    const Interval pillar = bounds({Part::kPillar, 0.0}, box);
+    // Where the pillar's length is negative a larger radius brings it nearer to zero, elsewhere a smaller one raises it.
+    const double thin = scene::Pillar::kFillet * s.r.lo, wide = scene::Pillar::kFillet * s.r.hi;
+    outer = {flared(outer.lo, pillar.lo, pillar.lo < 0.0 ? thin : wide, scene_.pillar.fillet_at(box.max.z) * s.r.lo),
+             flared(outer.hi, pillar.hi, pillar.hi < 0.0 ? wide : thin, scene_.pillar.fillet_at(box.min.z) * s.r.hi)};
+  }
   hollow = length_range(s, i, t2_range(scene_, s, i, true, box));
   if (s.at.theta.hi > scene_.law.theta_lip - kFrontReach) {
     const Interval behind = front_range(scene_, s, box);
@@ -187,7 +209,7 @@ Interval Field::bounds(const Term& term, const Box3& box) const noexcept {
       return (0.5 / pillar.scale) * (pillar.squared_radius.bounds(kPi * a, kPi * (b - a)) - rho2);
     }
     case Part::kChamberOpening: {
-      const SectionBox s = section_box(scene_.law, box, term.theta);
+      const SectionBox s = section_box(scene_.law, box, polar(box, term.theta));
       const OutlineBounds i = outline_bounds(scene_, s, true, false);
       const Interval plain = length_range(s, i, t2_range(scene_, s, i, true, box));
       return plain - Interval(opening_penalty(s.at.theta.lo), opening_penalty(s.at.theta.hi));
@@ -221,7 +243,7 @@ double Field::steepness(const Term& term, const Box3& box) const noexcept {
   // growth by the drift of section coordinates over the arc.
   const growth::CoilingLaw& law = scene_.law;
   const bool hollow = term.part != Part::kWhorl;
-  const SectionBox s = section_box(law, box, term.theta);
+  const SectionBox s = section_box(law, box, polar(box, term.theta));
   const OutlineBounds o = outline_bounds(scene_, s, hollow, true);
   const Interval t2 = t2_range(scene_, s, o, hollow, box);
   const double t = std::sqrt(std::max(t2.hi, s.q2.hi / (o.reach.lo * o.reach.lo)));
@@ -245,6 +267,13 @@ double Field::steepness(const Term& term, const Box3& box) const noexcept {
   if (term.part == Part::kChamberOpening)
     steep += 2.0 * start_half_breadth_ * std::max(0.0, s.at.theta.hi - law.theta_start - 0.5 * kPi) /
              std::max(s.at.rho.lo, 1e-3 * s.r.lo);
+  if (scene_.pillar.present && term.part == Part::kWhorl) {
+    const double radius = scene::Pillar::kFillet * s.r.hi;
+    const double near = std::max(0.0, 1.0 + bounds({Part::kPillar, 0.0}, box).hi / radius);
+    const double of_radius = k / std::max(s.at.rho.lo, 1e-3 * s.r.lo) +
+                             1.5 / (scene_.pillar.fillet_end_z - scene_.pillar.fillet_from_z);
+    steep += 3.0 * near * near * (steepness({Part::kPillar, 0.0}, box) + radius * of_radius);
+  }
   if (s.at.theta.hi > law.theta_lip - kFrontReach) {
     const double turn = (Interval(law.theta_lip) - s.at.theta).magnitude() + 0.5 * kPi;
     steep = std::hypot(steep, 1.0 / scene_.front.cos_inclination + turn);

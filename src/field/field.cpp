@@ -101,12 +101,21 @@ void Field::whorl(const Vec3& p, double theta, double& outer, double& hollow) co
     return;
   }
   outer = chain(at, p, false);
+  if (scene_.pillar.present) 
+    outer = flared(outer, pillar(p), scene::Pillar::kFillet * at.s.half_breadth,
+                   scene_.pillar.fillet_at(p.z) * at.s.half_breadth);
   hollow = chain(at, p, true);
   if (at.theta > scene_.law.theta_lip - kFrontReach) {
     const double behind = front(at);
     outer = rounded_min(outer, behind, scene_.front.rim_radius);
     hollow = -rounded_min(-hollow, behind, scene_.front.rim_radius);
   }
+}
+
+double Field::pillar(const Vec3& p) const noexcept {
+  const scene::Pillar& pillar = scene_.pillar;
+  const double part = std::clamp((p.z - pillar.top_z) / (pillar.bottom_z - pillar.top_z), 0.0, 1.0);
+  return (pillar.squared_radius.value(kPi * part) - p.x * p.x - p.y * p.y) / (2.0 * pillar.scale);
 }
 
 double Field::opening_penalty(double theta) const noexcept {
@@ -132,11 +141,7 @@ double Field::value(const Term& term, const Vec3& p) const noexcept {
       const InSection at = in_section(p, term.theta);
       return chain(at, p, true) - opening_penalty(at.theta);
     }
-    case Part::kPillar: {
-      const scene::Pillar& pillar = scene_.pillar;
-      const double part = std::clamp((p.z - pillar.top_z) / (pillar.bottom_z - pillar.top_z), 0.0, 1.0);
-      return (pillar.squared_radius.value(kPi * part) - p.x * p.x - p.y * p.y) / (2.0 * pillar.scale);
-    }
+    case Part::kPillar: return pillar(p);
     case Part::kWhorl:
     case Part::kWhorlHollow: {
       double outer, hollow;

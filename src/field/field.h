@@ -41,6 +41,13 @@ inline double rounded_min(double a, double b, double radius) {
   return std::max(radius, std::min(a, b)) - std::sqrt(u * u + v * v);
 }
 
+/// Signed length a, drawn out by `amount` towards b > 0 within `radius` of it: a whorl flares where it joins the columella.
+/// Smooth (C2), unlike the circular blend, since this runs along the whole pillar.
+inline double flared(double a, double b, double radius, double amount) {
+  const double near = std::max(0.0, 1.0 + b / radius);
+  return a + amount * near * near * near;
+}
+
 /// All functions are total, thread-safe and do not throw. The scene must outlive the field. Lengths in mm.
 class Field {
  public:
@@ -79,6 +86,8 @@ class Field {
   double chain(const InSection& at, const Vec3& p, bool hollow) const noexcept;
   double front(const InSection& at) const noexcept;
   double opening_penalty(double theta) const noexcept;
+  void piece_bounds(const Box3& box, Interval rho, Interval theta, Interval& outer, Interval& hollow) const noexcept;
+  double pillar(const Vec3& p) const noexcept;
 
   const scene::Scene& scene_;
   double start_half_breadth_;

@@ -5,6 +5,7 @@
 #include "growth/coiling_law.h"
 #include "growth/outline.h"
 
+#include <algorithm>
 #include <cstdint>
 #include <vector>
 
@@ -45,6 +46,15 @@ struct Pillar {
   double top_z = 0.0, bottom_z = 0.0;
   PeriodicSpline squared_radius{-1.0};
   double scale = 1.0;  // its radius at the base: turns squared lengths into lengths
+
+  /// Radius of the fillet by which whorls join the pillar, in half-breadths: kFillet down to `fillet_from_z`, none from
+  /// `fillet_end_z` on, where the pillar's tip stands free and the azimuth loses its meaning on the axis below it.
+  static constexpr double kFillet = 0.25;
+  double fillet_from_z = 0.0, fillet_end_z = 0.0;
+  double fillet_at(double z) const {
+    const double x = std::clamp((fillet_end_z - z) / (fillet_end_z - fillet_from_z), 0.0, 1.0);
+    return kFillet * x * x * (3.0 - 2.0 * x);
+  }
 };
 
 /// The growth front at the lip: a surface through the section's centre at theta_lip, inclined to the axis.

@@ -3,6 +3,7 @@
 #include "trace/cells.h"
 
 #include "math/parallel.h"
+#include "trace/unit_cubic.h"
 
 #include <algorithm>
 #include <bit>
@@ -42,6 +43,10 @@ struct Job {
   std::vector<Owner> owners;
 };
 
+bool holds_axis(const Box3& box) {
+  return box.min.x <= 0.0 && box.max.x >= 0.0 && box.min.y <= 0.0 && box.max.y >= 0.0;
+}
+
 double centre_azimuth(const Box3& box) {
   const Vec3 c = 0.5 * (box.min + box.max);
   return std::atan2(c.y, c.x);
@@ -55,11 +60,13 @@ class Builder {
   // Narrows the owners' signs over the box; false where the box holds no boundary.
   bool narrow(const Box3& box, std::vector<Owner>& owners) const;
   void build(const Box3& box, const std::vector<Owner>& owners);
-  static std::vector<Owner> for_child(const Box3& parent, const Box3& child, std::vector<Owner> owners);
+  std::vector<Owner> for_child(const Box3& parent, const Box3& child, std::vector<Owner> owners) const;
+  std::vector<Owner> all_owners(const Box3& box) const;
 
  private:
   bool fit(const Box3& box, std::vector<Owner>& owners);
   void emit(const Box3& box, const std::vector<Owner>& owners, const std::vector<CellTerm>& terms, bool exact);
+  bool verified(const Box3& box, const Term& term, const float* cubic) const;
   bool fit_term_values(const Box3& box, const Term& term, CellTerm& cell_term, Sign& sign) const;
 
   const field::Field& field_;
@@ -111,13 +118,62 @@ bool Builder::narrow(const Box3& box, std::vector<Owner>& owners) const {
   return simplify(owners);
 }
 
-// Passages follow the azimuth from parent to child, also across the seam at +-pi: one shift for all of them.
-std::vector<Owner> Builder::for_child(const Box3& parent, const Box3& child, std::vector<Owner> owners) {
-  const double shift = std::remainder(centre_azimuth(child) - centre_azimuth(parent), kTwoPi);
-  for (Owner& o : owners) {
-    if (o.part == Part::kWhorl) o.theta += shift;
+// Everything that can own a place in the box, unjudged.
+std::vector<Owner> Builder::all_owners(const Box3& box) const {
+  std::vector<Owner> owners;
+  Owner chamber{Part::kChamber, 0.0};
+  chamber.hollow = Sign::kUnknown;
+  if (field_.scene().chamber.open) chamber.opening = Sign::kUnknown;
+  chamber.opening_theta = field_.opening_theta();
+  owners.push_back(chamber);
+  if (field_.scene().pillar.present) owners.push_back({Part::kPillar, 0.0});
+  // One passage more at either end: a box that spreads over azimuths reaches half a turn before and after its middle.
+  double first, last;
+  field_.passages(centre_azimuth(box), first, last);
+  for (double theta = first - kTwoPi; theta <= last + kTwoPi + 1e-9; theta += kTwoPi) {
+    Owner o{Part::kWhorl, theta};
+    o.hollow = Sign::kUnknown;
+    owners.push_back(o);
   }
   return owners;
+}
+
+// Passages follow the azimuth from parent to child, also across the seam at +-pi: one shift for all of them. Round the
+// axis there is no such shift, and a child begins anew.
+std::vector<Owner> Builder::for_child(const Box3& parent, const Box3& child, std::vector<Owner> owners) const {
+  if (holds_axis(parent)) return all_owners(child);
+  const double shift = std::remainder(centre_azimuth(child) - centre_azimuth(parent), kTwoPi);
+  for (Owner& o : owners)
+    if (o.part == Part::kWhorl) o.theta += shift;
+  return owners;
+}
+
+// Whether the cubic is true where it matters: on its own zero set, found along the edges, the middle lines of the faces
+// and those of the cell (away from the fitted points, whose residuals flatter), and not far off at the corners.
+bool Builder::verified(const Box3& box, const Term& term, const float* cubic) const {
+  const Vec3 c = 0.5 * (box.min + box.max);
+  const double half = 0.5 * (box.max.x - box.min.x);
+  for (int corner = 0; corner < 8; ++corner) {
+    const float x = corner & 1 ? 1.0f : -1.0f, y = corner & 2 ? 1.0f : -1.0f, z = corner & 4 ? 1.0f : -1.0f;
+    const double v = field_.value(term, c + half * Vec3(x, y, z));
+    if (std::abs(v - static_cast<double>(evaluate(cubic, x, y, z))) > tolerance_ + kRelative * std::abs(v)) return false;
+  }
+  const Float4 s{-1.0f, -1.0f / 3.0f, 1.0f / 3.0f, 1.0f};
+  for (int axis = 0; axis < 3; ++axis)
+    for (float u = -1.0f; u <= 1.0f; u += 1.0f)
+      for (float v = -1.0f; v <= 1.0f; v += 1.0f) {
+        const Float4 line[3] = {axis == 0 ? s : splat(u), axis == 1 ? s : axis == 0 ? splat(u) : splat(v),
+                                axis == 2 ? s : splat(v)};
+        float roots[3];
+        const int count = sign_changes(UnitCubic::through(evaluate(cubic, line[0], line[1], line[2])), roots);
+        for (int i = 0; i < count; ++i) {
+          Vec3 p;
+          for (int k = 0; k < 3; ++k)
+            p[k] = k == axis ? 2.0 * static_cast<double>(roots[i]) - 1.0 : static_cast<double>(line[k][0]);
+          if (std::abs(field_.value(term, c + half * p)) > tolerance_) return false;
+        }
+      }
+  return true;
 }
 
 // Fits one function; false where no cubic is near enough.
@@ -138,17 +194,7 @@ bool Builder::fit_term_values(const Box3& box, const Term& term, CellTerm& out, 
   const CubicFit fit = fit_cubic(values);
   if (fit.left_out > 3.0 * tolerance_ + kRelative * least) return false;
   std::copy(fit.cubic.begin(), fit.cubic.end(), out.cubic);
-  // Verified where the residuals of the fit do not flatter: corners first (the worst place), then edges, faces, centre.
-  const auto off = [&](int x, int y, int z) {
-    const double v = field_.value(term, c + half * Vec3(x, y, z));
-    const double p = evaluate(out.cubic, static_cast<float>(x), static_cast<float>(y), static_cast<float>(z));
-    return std::abs(v - p) > tolerance_ + kRelative * std::abs(v);
-  };
-  for (int pass = 0; pass < 2; ++pass)
-    for (int z = -1; z <= 1; ++z)
-      for (int y = -1; y <= 1; ++y)
-        for (int x = -1; x <= 1; ++x)
-          if ((x * y * z != 0) == (pass == 0) && off(x, y, z)) return false;
+  if (!verified(box, term, out.cubic)) return false;
   const double swing = fit.swing + 2.0 * tolerance_;
   if (fit.middle > swing + kRelative * std::abs(fit.middle)) sign = Sign::kPositive;
   if (-fit.middle > swing + kRelative * std::abs(fit.middle)) sign = Sign::kNegative;
@@ -219,7 +265,6 @@ void Builder::build(const Box3& box, const std::vector<Owner>& parent_owners) {
   std::vector<Owner> owners = parent_owners;
   if (!narrow(box, owners)) return;
   const double half = 0.5 * (box.max.x - box.min.x);
-  const bool on_axis = box.min.x <= 0.0 && box.max.x >= 0.0 && box.min.y <= 0.0 && box.max.y >= 0.0;
   double smallest = 1e300;
   bool needs_azimuth = false;
   for (const Owner& o : owners) {
@@ -227,7 +272,7 @@ void Builder::build(const Box3& box, const std::vector<Owner>& parent_owners) {
     smallest = std::min(smallest, field_.scene().law.at(theta).half_breadth);
     needs_azimuth = needs_azimuth || o.part == Part::kWhorl || o.opening == Sign::kUnknown;
   }
-  const bool may_fit = half < kFitBelow * smallest && !(on_axis && needs_azimuth);
+  const bool may_fit = half < kFitBelow * smallest && !(holds_axis(box) && needs_azimuth);
   if (may_fit) {
     std::vector<Owner> fitted = owners;
     if (fit(box, fitted)) return;
@@ -258,25 +303,6 @@ void Builder::build(const Box3& box, const std::vector<Owner>& parent_owners) {
   }
 }
 
-std::vector<Owner> all_owners(const field::Field& field, const Box3& root) {
-  std::vector<Owner> owners;
-  double first, last;
-  field.passages(centre_azimuth(root), first, last);
-  Owner chamber{Part::kChamber, 0.0};
-  chamber.hollow = Sign::kUnknown;
-  if (field.scene().chamber.open) chamber.opening = Sign::kUnknown;
-  chamber.opening_theta = field.opening_theta();
-  owners.push_back(chamber);
-  if (field.scene().pillar.present) owners.push_back({Part::kPillar, 0.0});
-  // The root holds the axis: passages up to half a turn before and after can reach into it.
-  for (double theta = first - kTwoPi; theta <= last + kTwoPi + 1e-9; theta += kTwoPi) {
-    Owner o{Part::kWhorl, theta};
-    o.hollow = Sign::kUnknown;
-    owners.push_back(o);
-  }
-  return owners;
-}
-
 }  // namespace
 
 CellSet build_cells(const field::Field& field, double tolerance_mm) {
@@ -289,8 +315,8 @@ CellSet build_cells(const field::Field& field, double tolerance_mm) {
   CellSet all;
   all.tolerance_mm = tolerance_mm;
   all.smallest_half = half / std::exp2(kFinest);
-  std::vector<Job> jobs{{root, all_owners(field, root)}};
-  Builder upper(field, tolerance_mm, all.smallest_half, all);
+  const Builder upper(field, tolerance_mm, all.smallest_half, all);
+  std::vector<Job> jobs{{root, upper.all_owners(root)}};
   for (int depth = 0; depth < kSpreadDepth; ++depth) {
     std::vector<Job> next;
     for (Job& job : jobs) {
@@ -299,7 +325,7 @@ CellSet build_cells(const field::Field& field, double tolerance_mm) {
       for (int octant = 0; octant < 8; ++octant) {
         Box3 child = job.box;
         for (int i = 0; i < 3; ++i) (octant >> i & 1 ? child.min[i] : child.max[i]) = c[i];
-        next.push_back({child, Builder::for_child(job.box, child, job.owners)});
+        next.push_back({child, upper.for_child(job.box, child, job.owners)});
       }
     }
     jobs = std::move(next);

@@ -62,9 +62,8 @@ inline field::State decide(const CellOwner* owners, int count, std::uint64_t pos
   return field::State::kOutside;
 }
 
-/// Splits space until every cell's functions are cubics to within `tolerance_mm` (verified away from the fitted points;
-/// where a function is far from zero a twentieth of its value is allowed too, which moves no surface). Cells that can hold
-/// no boundary are left out. Deterministic for any number of threads.
+/// Splits space until the zero set of every cell's cubics lies within `tolerance_mm` of the function's own (verified on
+/// lines away from the fitted points). Cells that can hold no boundary are left out. Deterministic for any number of threads.
 CellSet build_cells(const field::Field& field, double tolerance_mm);
 
 }  // namespace whorl::trace
