@@ -19,6 +19,13 @@ Stance stance_of(const View& view) {
   return Stance::kOblique;
 }
 
+/// Width of the widest letter in 9 pt bold, mm on paper: a "W", with its brackets, or two of it after the 26th panel.
+double letter_room_mm(specimen::Letters letters, std::size_t count) {
+  constexpr double kWidest = 3.2, kBrackets = 2.2;
+  if (letters == specimen::Letters::kNone) return 0.0;
+  return (count > 26 ? 2.0 : 1.0) * kWidest + (letters == specimen::Letters::kLowerInBrackets ? kBrackets : 0.0);
+}
+
 }  // namespace
 
 transport::Camera FigurePanel::camera(double front_mm) const {
@@ -47,13 +54,14 @@ Extents extents_in(const View& view, const std::vector<Vec3>& points_mm) {
   for (const Vec3& point : points_mm) {
     const Vec3 page = view.page_to_shell.to_frame(point);
     if (view.cut && page.z > 0.0) continue;
-    const Extents one{-page.x, page.x, page.y, -page.y};
+    const Extents one{-page.x, page.x, page.y, -page.y, page.y - page.x};
     if (first) extents = one;
     first = false;
     extents.left = std::max(extents.left, one.left);
     extents.right = std::max(extents.right, one.right);
     extents.above = std::max(extents.above, one.above);
     extents.below = std::max(extents.below, one.below);
+    extents.upper_left = std::max(extents.upper_left, one.upper_left);
   }
   return extents;
 }
@@ -77,7 +85,7 @@ FigurePlan plan_figure(const specimen::Specimen& specimen, const std::vector<Vie
   request.resolution_ppi = plate.resolution_ppi;
   request.gap_mm = plate.gap_mm;
   request.columns = plate.columns;
-  request.letters = plate.letters.value != specimen::Letters::kNone;
+  request.letter_room_mm = letter_room_mm(plate.letters, views.size());
   request.bar_mm = plate.bar_mm;
   request.source = specimen.source;
   request.plate_where = plate.width_mm.where;

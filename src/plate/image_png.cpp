@@ -20,6 +20,13 @@ constexpr int kCompressionLevel = 6;
 /// printer to tint the paper.
 constexpr char kRelativeColorimetric = 1;
 
+/// The writer's own hints as text, an offset of nought, whatever a later version adds: no business of the reader's.
+bool is_wanted(const std::string& chunk_type) {
+  for (const char* type : {"IHDR", "gAMA", "sRGB", "cHRM", "pHYs", "IDAT", "IEND"})
+    if (chunk_type == type) return true;
+  return false;
+}
+
 OIIO::ImageSpec png_spec(const Picture& picture, const PictureTags& tags) {
   OIIO::ImageSpec spec(picture.width, picture.height, picture.channels,
                        picture.bits == 16 ? OIIO::TypeDesc::UINT16 : OIIO::TypeDesc::UINT8);
@@ -67,8 +74,7 @@ std::string encode_png(const Picture& picture, const PictureTags& tags, const st
   try {
     bool texts_written = false;
     for (PngChunk& chunk : split_png({reinterpret_cast<const char*>(bytes.data()), bytes.size()})) {
-      // The writer's own hints and an offset of nought are no business of the reader's.
-      if (chunk.type == "tEXt" || chunk.type == "oFFs") continue;
+      if (!is_wanted(chunk.type)) continue;
       if (chunk.type == "sRGB") chunk.data.assign(1, kRelativeColorimetric);
       if (chunk.type == "IDAT" && !texts_written) {
         texts_written = true;

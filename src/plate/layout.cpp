@@ -17,8 +17,8 @@ namespace whorl::plate {
 namespace {
 
 constexpr double kPointsPerInch = 72.0;
-/// Room that the widest and highest panel letter takes, from its ink's corner, mm on paper: "(m)" in 9 pt bold.
-constexpr double kLetterRoomWide = 4.6, kLetterRoomHigh = 3.0;
+/// Room that a panel letter needs in height, mm on paper: 9 pt bold with its brackets.
+constexpr double kLetterRoomHigh = 3.0;
 /// Room for a bar's label of 8 pt, mm on paper: "500 µm".
 constexpr double kLabelRoom = 11.0;
 /// A letter may stand in the corner of a picture's box only outside the inscribed ellipse grown by this much.
@@ -112,14 +112,17 @@ struct RowHeight {
   }
 };
 
-/// Whether a letter in the top left corner of the panel may touch the picture, taken as the ellipse in its box.
-bool corner_taken(const LayoutPanel& panel, const Extents& extents, const Measures& px) {
+/// Whether a letter in the top left corner of the panel may touch the picture.
+bool corner_taken(const LayoutPanel& panel, const Extents& extents, const LayoutRequest& request, const Measures& px) {
+  const double letter_x = panel.rect.x + (kLetterInset + request.letter_room_mm) * px.per_mm;
+  const double letter_y = panel.rect.y + (kLetterInset + kLetterRoomHigh) * px.per_mm;
+  // The picture lies on one side of a diagonal; the letter has to lie on the other.
+  if (!std::isnan(extents.upper_left))
+    return (panel.pole_x - letter_x) + (panel.pole_y - letter_y) < extents.upper_left / panel.mm_per_pixel + px.margin;
   const double a = 0.5 * extents.width() / panel.mm_per_pixel * kCornerSafety;
   const double b = 0.5 * extents.height() / panel.mm_per_pixel * kCornerSafety;
   const double centre_x = panel.pole_x + 0.5 * (extents.right - extents.left) / panel.mm_per_pixel;
   const double centre_y = panel.pole_y + 0.5 * (extents.below - extents.above) / panel.mm_per_pixel;
-  const double letter_x = panel.rect.x + (kLetterInset + kLetterRoomWide) * px.per_mm;
-  const double letter_y = panel.rect.y + (kLetterInset + kLetterRoomHigh) * px.per_mm;
   const double x = std::max(0.0, centre_x - letter_x) / a, y = std::max(0.0, centre_y - letter_y) / b;
   return x * x + y * y < 1.0;
 }
@@ -207,7 +210,7 @@ void add_row(const LayoutRequest& request, const Measures& px, const std::vector
     panel.rect = {column.left, top, column.right - column.left, height};
     panel.pole_x = panel.rect.x + 0.5 * panel.rect.width;
     panel.pole_y = top + 0.5 * height + row.pole(view, 1.0 / panel.mm_per_pixel);
-    lift = lift || (request.letters && corner_taken(panel, view.extents_mm, px));
+    lift = lift || (request.letter_room_mm > 0.0 && corner_taken(panel, view.extents_mm, request, px));
     layout.panels.push_back(panel);
   }
   const int strip = lift ? px.strip : 0;

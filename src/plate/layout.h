@@ -4,6 +4,7 @@
 
 #include "diagnostics/position.h"
 
+#include <limits>
 #include <string>
 #include <vector>
 
@@ -13,6 +14,9 @@ namespace whorl::plate {
 /// A side may be negative where the picture does not reach as far as the pole.
 struct Extents {
   double left = 0.0, right = 0.0, above = 0.0, below = 0.0;
+  /// How far it reaches into the upper left corner, where the letter goes: the largest sum of a point's distances to the left of
+  /// and above the pole. Not known: the ellipse in the box is taken for the picture.
+  double upper_left = std::numeric_limits<double>::quiet_NaN();
   double width() const { return left + right; }
   double height() const { return above + below; }
 };
@@ -39,7 +43,7 @@ struct LayoutView {
 struct LayoutRequest {
   double width_mm = 180.0, resolution_ppi = 600.0, gap_mm = 4.0;
   int columns = 3;
-  bool letters = true;
+  double letter_room_mm = 3.2;  // width on paper that the widest panel letter needs; 0 without letters
   double bar_mm = 0.0;  // 0 = by the 1-2-5 rule; of the common bar, others always follow the rule
   std::vector<LayoutView> views;  // in reading order
   std::string source;             // for errors: the scene file and the places in it

@@ -106,7 +106,7 @@ std::vector<Ball> coil_of_balls(const specimen::Specimen& s, double height_mm) {
 std::vector<plate::Extents> extents_of(const std::vector<Ball>& balls, const std::vector<plate::View>& views) {
   std::vector<plate::Extents> all;
   for (const plate::View& view : views) {
-    plate::Extents e{-1e300, -1e300, -1e300, -1e300};
+    plate::Extents e{-1e300, -1e300, -1e300, -1e300, -1e300};
     for (const Ball& ball : balls) {
       const Vec3 c = view.page_to_shell.to_frame(ball.centre_mm);
       double r = ball.radius_mm;
@@ -114,7 +114,8 @@ std::vector<plate::Extents> extents_of(const std::vector<Ball>& balls, const std
         if (c.z >= r) continue;
         r = std::sqrt(r * r - c.z * c.z);
       }
-      e = {std::max(e.left, r - c.x), std::max(e.right, r + c.x), std::max(e.above, r + c.y), std::max(e.below, r - c.y)};
+      e = {std::max(e.left, r - c.x), std::max(e.right, r + c.x), std::max(e.above, r + c.y), std::max(e.below, r - c.y),
+           std::max(e.upper_left, c.y - c.x + std::numbers::sqrt2 * r)};
     }
     all.push_back(e);
   }

@@ -88,6 +88,27 @@ TEST_CASE("A ball of 12 mm measures 12 mm in the PNG by the scale bar beside it"
   CHECK(std::abs(0.5 * (first + last + 1) - 0.5 * png.width) <= 1.0);  // the axis is on the cell's centre line
 }
 
+TEST_CASE("Letter and bar label measured in the PNG at 600 ppi are as high as 9 pt and 8 pt type is", "[plate][figure]") {
+  const support::ScratchFolder folder;
+  const Drawn drawn(one_view(600.0, 30.0), {{Vec3(0.0, 0.0, 6.0), 6.0}});
+  const support::ReadImage png = drawn.png(folder);
+  const auto inked_rows = [&png](int left, int right, int top, int bottom) {
+    int rows = 0;
+    for (int y = top; y < bottom; ++y) {
+      bool ink = false;
+      for (int x = left; x < right; ++x) ink = ink || png.at(x, y, 0) < 128.0f;
+      rows += ink ? 1 : 0;
+    }
+    return rows;
+  };
+  const FigurePanel& panel = drawn.plan.panels[0];
+  // Cap height 1409/2048 of the size (Liberation Sans): 51.6 pixels at 9 pt, and the figure of a label 45.9 at 8 pt with its overshoot.
+  CHECK(std::abs(inked_rows(panel.letter_left, panel.letter_left + 60, panel.letter_top, panel.letter_top + 62) - 51.6) <= 1.5);
+  const LayoutBar& bar = drawn.plan.bars[0];
+  const int middle = bar.left + static_cast<int>(bar.length_px / 2);
+  CHECK(std::abs(inked_rows(middle - 90, middle + 90, bar.label_base - 60, bar.top - 4) - 45.9) <= 2.0);
+}
+
 TEST_CASE("White ground is 255 in every pixel that neither picture nor ink touches", "[plate][figure]") {
   const support::ScratchFolder folder;
   const specimen::Specimen s = test_plate::demo_specimen(100.0);

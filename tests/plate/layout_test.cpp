@@ -39,7 +39,7 @@ LayoutRequest random_request(std::mt19937& rng) {
   request.width_mm = pick(85.0, 190.0);
   request.resolution_ppi = pick(72.0, 300.0);
   request.gap_mm = pick(0.0, 6.0);
-  request.letters = whole(0, 1) == 1;
+  request.letter_room_mm = whole(0, 1) == 1 ? 3.2 : 0.0;
   return request;
 }
 
@@ -185,13 +185,20 @@ TEST_CASE("The common bar keeps to the panels it belongs to where another scale 
 
 TEST_CASE("A letter gets a strip of its own only where a picture would reach into the corner", "[plate][layout]") {
   const LayoutView flat{{10.0, 10.0, 0.1, 4.0}, Stance::kUpright, 1.0};
+  LayoutView cone = kTall;  // slender at the apex: nothing of it is farther to the upper left than its base is
+  cone.extents_mm.upper_left = 0.5;
+  LayoutRequest small = request_of({cone, cone}, 2);
+  small.width_mm = 60.0;
+  CHECK(lay_out(small).panels[0].rect.y == 0);
+  for (LayoutView& view : small.views) view.extents_mm.upper_left = 5.0;  // a flat top
+  CHECK(lay_out(small).panels[0].rect.y > 0);
   const Layout tall = lay_out(request_of({kTall}, 1));
   CHECK(tall.panels[0].letter_top > tall.panels[0].rect.y);
   LayoutRequest narrow = request_of({flat, flat, flat}, 3);
   narrow.width_mm = 60.0;
   const Layout lifted = lay_out(narrow);
   CHECK(lifted.panels[0].rect.y > lifted.panels[0].letter_top);
-  narrow.letters = false;
+  narrow.letter_room_mm = 0.0;
   CHECK(lay_out(narrow).panels[0].rect.y == 0);
 }
 
