@@ -3,6 +3,7 @@
 #include "app/commands.h"
 
 #include "compile/compile.h"
+#include "compile/compile.h"
 #include "diagnostics/error.h"
 #include "specimen/key_table.h"
 #include "specimen/scene_file.h"
@@ -57,6 +58,7 @@ std::string summary(const Specimen& read, const scene::Scene& compiled) {
 
 int check_command(const Options& options, Progress&) {
   const Specimen read = read_scene_file(options.scene);
+  compile::compile_scene(read);  // what only the geometry shows: walls, lamps, the axis
   const scene::Scene compiled = compile::compile_scene(read);
   std::fputs(summary(read, compiled).c_str(), stdout);
   return static_cast<int>(diagnostics::ExitCode::kDone);

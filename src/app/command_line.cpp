@@ -148,14 +148,18 @@ class Parser {
     app_.add_flag("--quiet", options_.quiet, "No progress, only results and errors");
   }
 
+  void add_quality(CLI::App* sub) {
+    add_value(sub, "--quality", options_.quality, quality_named, "draft, proof or print, instead of the scene's own")
+        ->type_name("QUALITY");
+  }
+
   void add_plate() {
     CLI::App* sub = add(Command::kPlate, "plate", "Render a scene file's plate: picture, layers, record and caption",
                         "Writes NAME.png, .tif, .exr, .json and .txt into DIR for the scene NAME.toml.\n\n"
                         "Example:\n  whorlwright plate scenes/tall.toml -o out --quality proof\n");
     add_value(sub, "-o", options_.out, non_empty("a folder"), "Folder for the files, made if missing (default: .)")
         ->type_name("DIR");
-    add_value(sub, "--quality", options_.quality, quality_named, "draft, proof or print, instead of the scene's own")
-        ->type_name("QUALITY");
+    add_quality(sub);
     add_value(sub, "--only", options_.only_panel, non_empty("the letter, number or view of a panel"),
               "Render this panel alone: its letter, its number or its view")
         ->type_name("PANEL");
@@ -184,6 +188,7 @@ class Parser {
     add_value(sub, "--frames", options_.frames, whole_number_between<int>(1, kMaxFrames),
               "Frames of the full turn (default 36)")->type_name("N");
     add_value(sub, "--slice", options_.slice, slice_of_job, "Render only part I of N, 1 <= I <= N")->type_name("I/N");
+    add_quality(sub);
   }
 
   CLI::App app_;

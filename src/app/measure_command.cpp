@@ -1,13 +1,31 @@
 // SPDX-License-Identifier: Apache-2.0
-// The command 'measure'.
+// The command 'measure': what the shell of a scene measures, on its solid.
 #include "app/commands.h"
 
+#include "compile/compile.h"
 #include "diagnostics/error.h"
+#include "measure/report.h"
+#include "specimen/scene_file.h"
+
+#include <cstdio>
 
 namespace whorl::app {
 
-int measure_command(const Options&, Progress&) {
-  throw diagnostics::Error(diagnostics::ExitCode::kUnexpected, "'measure' is not built yet");
+int measure_command(const Options& options, Progress& progress) {
+  const specimen::Specimen specimen = specimen::read_scene_file(options.scene);
+  progress.step("compiling the shell");
+  const scene::Scene scene = compile::compile_scene(specimen);
+  const field::Field field(scene);
+  constexpr double kTolerance = 2e-6;  // of the height: far below what any caliper reads
+  const trace::EmbreeSolid solid(field, {kTolerance * scene.height_mm, options.exact});
+  progress.step("measuring");
+  const measure::Measurements m =
+      measure::measure_shell(solid, specimen.identity.mineral, {1 << 19, options.seed});
+  if (options.json)
+    std::printf("%s\n", measure::to_json(m).dump(2).c_str());
+  else
+    std::fputs(measure::to_table(m).c_str(), stdout);
+  return static_cast<int>(diagnostics::ExitCode::kDone);
 }
 
 }  // namespace whorl::app

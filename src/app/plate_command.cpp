@@ -1,12 +1,15 @@
 // SPDX-License-Identifier: Apache-2.0
 // The command 'plate': a scene file in, a finished figure out.
 #include "app/commands.h"
+#include "app/out_folder.h"
 #include "app/picture_progress.h"
+#include "app/shell_notes.h"
 #include "app/solid_counters.h"
 #include "app/version.h"
 
 #include "diagnostics/error.h"
 #include "math/parallel.h"
+#include "measure/report.h"
 #include "plate/figure.h"
 #include "plate/studio.h"
 #include "specimen/scene_file.h"
@@ -30,6 +33,9 @@ std::string lower(std::string text) {
   return text;
 }
 
+// Random lines for volumes and areas: what is printed is measured as `measure` does, a draft more coarsely.
+int measure_lines(specimen::Quality quality) { return quality == specimen::Quality::kPrint ? 1 << 19 : 1 << 16; }
+
 // Keeps the one panel that is named by letter, number or view.
 void keep_only(specimen::Specimen& specimen, const std::vector<plate::View>& views, const std::string& wanted) {
   std::vector<specimen::Panel> kept;
@@ -51,13 +57,7 @@ void keep_only(specimen::Specimen& specimen, const std::vector<plate::View>& vie
 int plate_command(const Options& options, Progress& progress) {
   specimen::Specimen specimen = specimen::read_scene_file(options.scene);
   specimen = plate::at_quality(specimen, options.quality.value_or(specimen.plate.quality.value));
-  if (!std::filesystem::is_directory(options.out)) {
-    std::error_code fault;
-    std::filesystem::create_directories(options.out, fault);
-    if (fault)
-      throw diagnostics::FileTrouble(
-          fmt::format("{}: the folder could not be made: {}", options.out.string(), fault.message()));
-  }
+  make_out_folder(options.out);
 
   progress.step("compiling the shell");
   plate::Studio studio(specimen);
@@ -71,8 +71,7 @@ int plate_command(const Options& options, Progress& progress) {
   double finest = 1e300;
   for (const FigurePanel& panel : plan.panels) finest = std::min(finest, panel.mm_per_pixel);
   studio.set_up(finest, options.exact);
-  if (studio.scene().start_raised)
-    progress.note("note: the earliest whorls are under a thousandth of the last and are drawn as the embryonic cap");
+  note_on_shell(studio.scene(), progress);
 
   const int samples = plate::quality_steps(specimen.plate.quality.value).samples;
   double area = 0.0, before = 0.0;
@@ -99,6 +98,9 @@ int plate_command(const Options& options, Progress& progress) {
   facts.exact = options.exact;
   facts.quality = specimen.plate.quality.value;
   facts.counters = solid_counters(studio.solid());
+  progress.step("measuring the shell");
+  facts.measurements = measure::to_json(measure::measure_shell(
+      studio.solid(), specimen.identity.mineral, {measure_lines(specimen.plate.quality.value), options.seed}));
   progress.step("writing the files");
   const auto paths = plate::write_figure(plan, specimen, films, facts, options.out, plate::figure_stem(options.scene));
   for (const std::filesystem::path& path : paths) std::printf("%s\n", path.string().c_str());
