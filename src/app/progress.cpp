@@ -16,7 +16,8 @@ namespace {
 
 constexpr double kRedrawSeconds = 0.1;   // faster is not seen, and costs the terminal
 constexpr double kFirstGuessSeconds = 1.0;  // before that, what is left is a guess from too little
-constexpr int kBarCells = 24;
+constexpr int kMostCells = 24, kFewestCells = 8;
+constexpr int kTailColumns = 24;  // " 100 %  59 min 59 s left"
 constexpr int kUsualColumns = 80;
 
 // ECMA-48: carriage return and "erase in line"; "select graphic rendition" for colour.
@@ -73,6 +74,7 @@ void Progress::step(std::string_view what) {
   if (style_ == ProgressStyle::kSilent) return;
   const std::lock_guard lock(mutex_);
   what_ = what;
+  furthest_ = 0.0;
   began_s_ = clock_().count();
   if (style_ == ProgressStyle::kLines) {
     write_(fmt::format("{}\n", what_));
@@ -85,8 +87,9 @@ void Progress::update(double fraction) {
   if (style_ != ProgressStyle::kBar) return;
   const std::lock_guard lock(mutex_);
   const double now_s = clock_().count();
+  if (fraction > furthest_) furthest_ = std::min(fraction, 1.0);  // false for what is no number
   if (bar_shown_ && now_s - drawn_s_ < kRedrawSeconds) return;
-  draw(fraction > 0.0 ? std::min(fraction, 1.0) : 0.0, now_s);  // no number counts as nothing done
+  draw(furthest_, now_s);
 }
 
 void Progress::note(std::string_view text) {
@@ -102,17 +105,20 @@ void Progress::draw(double fraction, double seconds) {
   if (fraction > 0.0 && elapsed_s >= kFirstGuessSeconds) {
     left = fmt::format("  {} left", duration_text(elapsed_s * (1.0 - fraction) / fraction));
   }
-  const int full = static_cast<int>(std::lround(fraction * kBarCells));
-  const std::string bar = std::string(static_cast<std::size_t>(full), '=') +
-                          std::string(static_cast<std::size_t>(kBarCells - full), ' ');
   const std::string tail = fmt::format(" {:3.0f} %{}", std::floor(fraction * 100.0), left);
-  // The last column stays empty: some terminals wrap when it is written.
+  // The last column stays empty: some terminals wrap when it is written. The tail keeps its room, so that nothing jumps.
   const int room = columns_ - 1;
-  const int words_room = std::max(0, room - kBarCells - 3 - static_cast<int>(tail.size()));
-  const std::string line = fmt::format("{} [{}{}{}]{}", what_.substr(0, static_cast<std::size_t>(words_room)),
-                                       coloured_ ? kGreen : "", bar, coloured_ ? kPlain : "", tail);
-  const bool fits = words_room > 0;
-  write_(fmt::format("{}{}", kEraseLine, fits ? line : tail.substr(0, static_cast<std::size_t>(std::max(0, room)))));
+  const int around_bar = 3;  // a space and two brackets
+  const int cells = std::clamp(room - static_cast<int>(what_.size()) - around_bar - kTailColumns, kFewestCells, kMostCells);
+  const int words_room = room - cells - around_bar - kTailColumns;
+  if (words_room > 0) {
+    const int full = static_cast<int>(std::lround(fraction * cells));
+    write_(fmt::format("{}{} [{}{:<{}}{}]{}", kEraseLine, what_.substr(0, static_cast<std::size_t>(words_room)),
+                       coloured_ ? kGreen : "", std::string(static_cast<std::size_t>(full), '='), cells,
+                       coloured_ ? kPlain : "", tail));
+  } else {
+    write_(fmt::format("{}{}", kEraseLine, tail.substr(0, static_cast<std::size_t>(std::max(0, room)))));
+  }
   bar_shown_ = true;
   drawn_s_ = seconds;
 }

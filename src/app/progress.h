@@ -32,7 +32,7 @@ class Progress {
 
   /// Begins a step, in words that a user understands ("rendering 4 panels"); the step before it is done.
   void step(std::string_view what);
-  /// The present step is done to `fraction`, 0 .. 1. Any thread may call it, as often as it likes.
+  /// The present step is done to `fraction`, 0 .. 1; the highest one told counts. Any thread may call it, as often as it likes.
   void update(double fraction);
   /// A remark that stays on the screen, such as a warning; silent only with kSilent.
   void note(std::string_view text);
@@ -48,7 +48,7 @@ class Progress {
   const bool coloured_;
   std::mutex mutex_;
   std::string what_;
-  double began_s_ = 0.0, drawn_s_ = 0.0;
+  double furthest_ = 0.0, began_s_ = 0.0, drawn_s_ = 0.0;
   bool bar_shown_ = false;
 };
 

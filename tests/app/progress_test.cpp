@@ -60,6 +60,27 @@ TEST_CASE("The time left is what the done part took, times what is left over wha
   CHECK(watched.written == before);  // too soon to be seen
 }
 
+TEST_CASE("Long words leave the bar's end where it is when the time left becomes known", "[app]") {
+  Watched watched(ProgressStyle::kBar);
+  watched.progress.step("rendering 6 panels, 4252 x 3756 pixels");
+  const std::size_t before = watched.line().find(']');
+  watched.now_s += 60.0;
+  watched.progress.update(0.1);
+  CHECK(contains(watched.line(), "4252 x 3756 pixels [="));
+  CHECK(contains(watched.line(), "]  10 %  9 min 00 s left"));
+  CHECK(watched.line().find(']') == before);
+}
+
+TEST_CASE("News that come late do not take the bar back", "[app]") {
+  Watched watched(ProgressStyle::kBar);
+  watched.progress.step("rendering");
+  for (const double fraction : {0.5, 0.25}) {
+    watched.now_s += 5.0;
+    watched.progress.update(fraction);
+  }
+  CHECK(contains(watched.line(), "]  50 %"));
+}
+
 TEST_CASE("A new step counts its time anew", "[app]") {
   Watched watched(ProgressStyle::kBar);
   watched.progress.step("compiling");
