@@ -54,10 +54,6 @@ std::string size_phrase(const specimen::Specimen& specimen, const RunFacts& run)
   return "";
 }
 
-std::string name_with_author(const specimen::Identity& id) {
-  return id.author.value.empty() ? id.name.value : id.name.value + " " + id.author.value;
-}
-
 /// "A, apertural view. B, apical view." or, without letters, "Apertural view, apical view."
 std::string views_sentence(const FigurePlan& plan) {
   std::string text;
@@ -124,9 +120,11 @@ std::string views_in_short(const FigurePlan& plan) {
 
 std::string make_caption(const FigurePlan& plan, const specimen::Specimen& specimen, const RunFacts& run) {
   const specimen::Identity& id = specimen.identity;
-  std::string text = "Fig. 00. " + name_with_author(id);
+  std::string text = "Fig. 00. " + id.name.value;
   if (!id.catalogue.value.empty()) text += ", " + id.catalogue.value;
   if (!id.locality.value.empty()) text += ", " + id.locality.value;
+  // Of the name or of the plate: the scene file does not tell, so the caption must not look as if it knew.
+  if (!id.author.value.empty()) text += " (author: " + id.author.value + ")";
   text += fmt::format(". {} shell of {} whorls, {}. ", capital(coiling_word(specimen)),
                       plain_number(specimen.growth.whorls.value), size_phrase(specimen, run));
   text += views_sentence(plan) + " " + bars_sentence(plan) + " Orthographic, lit from " + light_words(specimen.light) + ".\n\n";

@@ -29,10 +29,11 @@ struct Seen {
   trace::Part part = trace::Part::kNothing;
 };
 
-Seen look(const std::vector<Ball>& balls, const Vec3& page, bool cut, const Frame& frame) {
+/// Balls whose centres are in the page's frame.
+Seen look(const std::vector<Ball>& balls, const Vec3& page, bool cut) {
   Seen seen;
   for (const Ball& ball : balls) {
-    const Vec3 centre = frame.to_frame(ball.centre_mm);
+    const Vec3& centre = ball.centre_mm;
     const double x = page.x - centre.x, y = page.y - centre.y, r = ball.radius_mm;
     const double square = r * r - x * x - y * y;
     if (square < 0.0) continue;
@@ -124,6 +125,8 @@ std::vector<plate::Extents> extents_of(const std::vector<Ball>& balls, const std
 
 transport::Film film_of(const std::vector<Ball>& balls, const plate::FigurePanel& panel) {
   transport::Film film(panel.rect.width, panel.rect.height);
+  std::vector<Ball> on_page = balls;
+  for (Ball& ball : on_page) ball.centre_mm = panel.view.page_to_shell.to_frame(ball.centre_mm);
   const Vec3 to_light = Vec3(-0.5, 0.5, std::sqrt(0.5));
   for (int y = 0; y < film.height; ++y)
     for (int x = 0; x < film.width; ++x) {
@@ -132,7 +135,7 @@ transport::Film film_of(const std::vector<Ball>& balls, const plate::FigurePanel
         const bool middle = s == kGrid * kGrid;  // for the facts
         const double px = x + (middle ? 0.5 : (s % kGrid + 0.5) / kGrid), py = y + (middle ? 0.5 : (s / kGrid + 0.5) / kGrid);
         const Vec3 page((px - panel.pole_px.x) * panel.mm_per_pixel, (panel.pole_px.y - py) * panel.mm_per_pixel, 0.0);
-        const Seen seen = look(balls, page, panel.view.cut, panel.view.page_to_shell);
+        const Seen seen = look(on_page, page, panel.view.cut);
         if (seen.part == trace::Part::kNothing) continue;
         if (middle) {
           film.facts[at] = {static_cast<float>(seen.depth), Vec3f(seen.normal), seen.albedo, 1.25f, 30.0f,

@@ -111,7 +111,7 @@ TEST_CASE("The record tells what was stated from what was assumed", "[plate][rec
 TEST_CASE("The caption of the demo figure reads as it should", "[plate][caption]") {
   const Made made;
   CHECK(make_caption(made.plan, made.specimen, made.run) ==
-        "Fig. 00. Cochlidion argutum Hallmer, 1871, KSM 4471, Isle of Kess. Dextral shell of 7.25 whorls, 24 mm high. "
+        "Fig. 00. Cochlidion argutum, KSM 4471, Isle of Kess (author: Hallmer, 1871). Dextral shell of 7.25 whorls, 24 mm high. "
         "A, apertural view. B, abapertural view. C, apical view. Scale bar = 2 mm (magnification × 4.61) at a printed width of "
         "180 mm. Orthographic, lit from upper left.\n\n"
         "The figure shows a computed model from stated measurements (Whorlwright 0.1.0), no photograph of a specimen. It is an "
