@@ -161,8 +161,8 @@ void Field::whorl_bounds(const Box3& box, double theta, Interval& outer, Interva
 void Field::piece_bounds(const Box3& box, Interval rho, Interval theta, Interval& outer,
                          Interval& hollow) const noexcept {
   const SectionBox s = section_box(scene_.law, box, {rho, theta});
-  if (s.at.theta.lo > scene_.theta_end || s.at.theta.hi < scene_.theta_begin) {
-    outer = hollow = Interval(-s.r.hi, -0.1 * s.r.lo);
+  if (s.at.theta.lo > scene_.theta_end) {
+    outer = hollow = -s.r;
     return;
   }
   const OutlineBounds o = outline_bounds(scene_, s, false, false), i = outline_bounds(scene_, s, true, false);
@@ -171,8 +171,9 @@ void Field::piece_bounds(const Box3& box, Interval rho, Interval theta, Interval
     const Interval pillar = bounds({Part::kPillar, 0.0}, box);
     // Where the pillar's length is negative a larger radius brings it nearer to zero, elsewhere a smaller one raises it.
     const double thin = scene::Pillar::kFillet * s.r.lo, wide = scene::Pillar::kFillet * s.r.hi;
-    outer = {flared(outer.lo, pillar.lo, pillar.lo < 0.0 ? thin : wide, scene_.pillar.fillet_at(box.max.z) * s.r.lo),
-             flared(outer.hi, pillar.hi, pillar.hi < 0.0 ? wide : thin, scene_.pillar.fillet_at(box.min.z) * s.r.hi)};
+    const Interval unit = s.r * o.normal_scale;
+    outer = {flared(outer.lo, pillar.lo, pillar.lo < 0.0 ? thin : wide, scene_.pillar.fillet_at(box.max.z) * unit.lo),
+             flared(outer.hi, pillar.hi, pillar.hi < 0.0 ? wide : thin, scene_.pillar.fillet_at(box.min.z) * unit.hi)};
   }
   hollow = length_range(s, i, t2_range(scene_, s, i, true, box));
   if (s.at.theta.hi > scene_.law.theta_lip - kFrontReach) {
@@ -183,8 +184,8 @@ void Field::piece_bounds(const Box3& box, Interval rho, Interval theta, Interval
     hollow = {all ? -rounded_min(-hollow.lo, behind.hi, rim) : hollow.lo, -rounded_min(-hollow.hi, behind.lo, rim)};
   }
   if (s.at.theta.hi > scene_.theta_end) {
-    outer.lo = std::min(outer.lo, -s.r.hi);
-    hollow.lo = std::min(hollow.lo, -s.r.hi);
+    outer = hull(outer, -s.r);
+    hollow = hull(hollow, -s.r);
   }
 }
 
@@ -209,10 +210,21 @@ Interval Field::bounds(const Term& term, const Box3& box) const noexcept {
       return (0.5 / pillar.scale) * (pillar.squared_radius.bounds(kPi * a, kPi * (b - a)) - rho2);
     }
     case Part::kChamberOpening: {
-      const SectionBox s = section_box(scene_.law, box, polar(box, term.theta));
-      const OutlineBounds i = outline_bounds(scene_, s, true, false);
-      const Interval plain = length_range(s, i, t2_range(scene_, s, i, true, box));
-      return plain - Interval(opening_penalty(s.at.theta.lo), opening_penalty(s.at.theta.hi));
+      // A box across the seam half a turn from `theta` holds places of two passages.
+      const Polar all = polar(box, term.theta);
+      Interval range;
+      bool any = false;
+      for (const double turn : {-kTwoPi, 0.0, kTwoPi}) {
+        const Interval part(std::max(all.theta.lo + turn, term.theta - kPi), std::min(all.theta.hi + turn, term.theta + kPi));
+        if (part.lo > part.hi) continue;
+        const SectionBox s = section_box(scene_.law, box, {all.rho, part});
+        const OutlineBounds i = outline_bounds(scene_, s, true, false);
+        const Interval open = length_range(s, i, t2_range(scene_, s, i, true, box)) -
+                              Interval(opening_penalty(s.at.theta.lo), opening_penalty(s.at.theta.hi));
+        range = any ? hull(range, open) : open;
+        any = true;
+      }
+      return range;
     }
     case Part::kWhorl:
     case Part::kWhorlHollow: {
@@ -272,7 +284,9 @@ double Field::steepness(const Term& term, const Box3& box) const noexcept {
     const double near = std::max(0.0, 1.0 + bounds({Part::kPillar, 0.0}, box).hi / radius);
     const double of_radius = k / std::max(s.at.rho.lo, 1e-3 * s.r.lo) +
                              1.5 / (scene_.pillar.fillet_end_z - scene_.pillar.fillet_from_z);
-    steep += 3.0 * near * near * (steepness({Part::kPillar, 0.0}, box) + radius * of_radius);
+    const double of_unit = squeeze * o.scale_slope / q_lo * std::hypot(1.0, drift * s.r.hi / std::max(s.at.rho.lo, 1e-3 * s.r.lo));
+    steep += near * near * (3.0 * o.normal_scale.hi * (steepness({Part::kPillar, 0.0}, box) + radius * of_radius) +
+                            near * scene::Pillar::kFillet * of_unit);
   }
   if (s.at.theta.hi > law.theta_lip - kFrontReach) {
     const double turn = (Interval(law.theta_lip) - s.at.theta).magnitude() + 0.5 * kPi;

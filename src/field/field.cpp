@@ -51,7 +51,7 @@ Field::InSection Field::in_section(const Vec3& p, double theta) const noexcept {
 
 // The sum of the chain's densities, turned into a length by inverting the kernel: with t the distance from the centre
 // line in outlines, density (1 - t^2/s^2)^3 gives t^2 = s^2 (1 - density^(1/3)).
-double Field::chain(const InSection& at, const Vec3& p, bool hollow) const noexcept {
+double Field::chain(const InSection& at, const Vec3& p, bool hollow, double& unit) const noexcept {
   const StationWeights w = stations_at(scene_, at.theta);
   const scene::Station* station = &scene_.stations[static_cast<std::size_t>(w.first)];
   const auto outline_of = [&](int i) { return hollow ? station[i].hollow : station[i].outer; };
@@ -66,6 +66,7 @@ double Field::chain(const InSection& at, const Vec3& p, bool hollow) const noexc
     const double reach = outline.reach.value(at.psi);
     t2 = std::min(kS2, at.q2 / (reach * reach) + cap * cap);
     normal_scale = outline.normal_scale.value(at.psi);
+    unit = at.s.half_breadth * normal_scale;
     if (scene_.ellipsoids.empty()) return 0.5 * at.s.half_breadth * (1.0 - t2) * normal_scale;
     density = wyvill(t2 / kS2);
   } else {
@@ -76,6 +77,7 @@ double Field::chain(const InSection& at, const Vec3& p, bool hollow) const noexc
       density += w.weight[i] * wyvill((at.q2 / (reach * reach) + cap * cap) / kS2);
       normal_scale += w.weight[i] * outline.normal_scale.value(at.psi);
     }
+    unit = at.s.half_breadth * normal_scale;
   }
   for (const scene::Ellipsoid& e : scene_.ellipsoids) {
     if (e.hollow != hollow) continue;
@@ -100,11 +102,13 @@ void Field::whorl(const Vec3& p, double theta, double& outer, double& hollow) co
     outer = hollow = -at.s.half_breadth;
     return;
   }
-  outer = chain(at, p, false);
-  if (scene_.pillar.present) 
-    outer = flared(outer, pillar(p), scene::Pillar::kFillet * at.s.half_breadth,
-                   scene_.pillar.fillet_at(p.z) * at.s.half_breadth);
-  hollow = chain(at, p, true);
+  double unit, hollow_unit;
+  outer = chain(at, p, false, unit);
+  // The flare goes with the outline's own unit: away from the tube the length levels off at half of that below zero, and
+  // a flare of one size would lift it above, all along the pillar.
+  if (scene_.pillar.present)
+    outer = flared(outer, pillar(p), scene::Pillar::kFillet * at.s.half_breadth, scene_.pillar.fillet_at(p.z) * unit);
+  hollow = chain(at, p, true, hollow_unit);
   if (at.theta > scene_.law.theta_lip - kFrontReach) {
     const double behind = front(at);
     outer = rounded_min(outer, behind, scene_.front.rim_radius);
@@ -139,7 +143,8 @@ double Field::value(const Term& term, const Vec3& p) const noexcept {
     case Part::kChamberHollow: return ellipsoid(c.hollow_radius, c.hollow_half_height);
     case Part::kChamberOpening: {
       const InSection at = in_section(p, term.theta);
-      return chain(at, p, true) - opening_penalty(at.theta);
+      double unit;
+      return chain(at, p, true, unit) - opening_penalty(at.theta);
     }
     case Part::kPillar: return pillar(p);
     case Part::kWhorl:

@@ -83,7 +83,8 @@ class Field {
  private:
   struct InSection;  // a point in the coordinates of one passage
   InSection in_section(const Vec3& p, double theta) const noexcept;
-  double chain(const InSection& at, const Vec3& p, bool hollow) const noexcept;
+  // Signed length inside a chain's surface, and the length that one unit of section coordinates spans at this section angle.
+  double chain(const InSection& at, const Vec3& p, bool hollow, double& unit) const noexcept;
   double front(const InSection& at) const noexcept;
   double opening_penalty(double theta) const noexcept;
   void piece_bounds(const Box3& box, Interval rho, Interval theta, Interval& outer, Interval& hollow) const noexcept;
