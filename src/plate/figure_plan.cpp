@@ -93,8 +93,9 @@ FigurePlan plan_figure(const specimen::Specimen& specimen, const std::vector<Vie
   for (std::size_t i = 0; i < views.size(); ++i) {
     if (!(extents_mm[i].width() > 0.0 && extents_mm[i].height() > 0.0))
       throw diagnostics::InvalidInput(
-          specimen.source, {{plate.panels[i].view.where,
-                             fmt::format("panel {} ({}) shows nothing of the shell; choose another view", i + 1, views[i].label)}});
+          specimen.source,
+          {{plate.panels[i].view.where,
+            fmt::format("panel {} ({}) shows nothing of the shell; choose another view", i + 1, views[i].label)}});
     request.views.push_back({extents_mm[i], stance_of(views[i]), plate.panels[i].scale});
   }
 

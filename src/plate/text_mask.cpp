@@ -1,5 +1,5 @@
 // SPDX-License-Identifier: Apache-2.0
-// The only door to FreeType. (The image library's own lettering knows no character beyond ASCII in Debian 12: its "µ" is a "5".)
+// The only door to FreeType, which sets the type.
 #include "plate/text_mask.h"
 
 #include "diagnostics/error.h"
@@ -16,6 +16,9 @@
 
 namespace whorl::plate {
 namespace {
+
+// Not by the image library's own lettering: up to 2.4 it knows no character beyond ASCII and prints "5" for "µ"
+// (OpenImageIO issue 3933).
 
 constexpr double kPointsPerInch = 72.0;
 constexpr long kSubpixels = 64;  // FreeType counts in 64ths of a pixel

@@ -6,6 +6,8 @@
 
 #include <algorithm>
 #include <cmath>
+#include <numbers>
+#include <string>
 
 namespace whorl::test_plate {
 namespace {

@@ -9,6 +9,9 @@
 
 #include <algorithm>
 #include <cmath>
+#include <limits>
+#include <stdexcept>
+#include <utility>
 
 namespace whorl::plate {
 namespace {

@@ -11,7 +11,10 @@
 
 #include <cstdint>
 #include <map>
+#include <stdexcept>
 #include <string>
+#include <utility>
+#include <vector>
 
 namespace whorl::plate {
 namespace {

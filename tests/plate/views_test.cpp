@@ -6,6 +6,8 @@
 #include "support/catch.h"
 
 #include <cmath>
+#include <utility>
+#include <vector>
 
 namespace whorl::plate {
 namespace {

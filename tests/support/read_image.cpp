@@ -7,6 +7,7 @@
 #include <OpenImageIO/imageio.h>
 
 #include <algorithm>
+#include <cmath>
 
 namespace whorl::support {
 
