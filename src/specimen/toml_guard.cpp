@@ -16,33 +16,22 @@ class Scanner {
 
   void scan(ProblemList& problems) {
     if (text_.starts_with("\xEF\xBB\xBF")) at_ = 3;
-    bool line_begins = true, header = false;
-    int depth = 0;  // of lists and inline tables that are open
     while (at_ < text_.size()) {
       const char c = text_[at_];
-      if (c == '\n') {
-        line_begins = true;
-        header = false;
-        ++at_;
-      } else if (c == ' ' || c == '\t' || c == '\r') {
-        ++at_;
-      } else if (c == '#') {
+      if (c == '#') {
         at_ = std::min(text_.find('\n', at_), text_.size());
-      } else if (line_begins && depth == 0 && c == '[') {
-        line_begins = false;
-        header = true;
+      } else if (c == '[' && line_begins_ && open_.empty()) {
+        line_begins_ = false;
         if (!header_begins_well(problems)) return;
       } else if (c == '"' || c == '\'') {
-        line_begins = false;
-        skip_quotes(c);
+        if (!quote_may_stand(problems) || !skip_quotes(c, problems)) return;
+        line_begins_ = false;
+        in_word_ = true;
       } else if (static_cast<unsigned char>(c) >= 0x80) {
         complain_of_character(problems);
         return;
       } else {
-        line_begins = false;
-        if (!header && (c == '[' || c == '{')) ++depth;
-        if (!header && (c == ']' || c == '}') && depth > 0) --depth;
-        ++at_;
+        step(c);
       }
     }
   }
@@ -52,26 +41,79 @@ class Scanner {
     return text_.substr(at_, times) == std::string(times, c);
   }
 
+  /// Past one character that is neither quote nor comment.
+  void step(char c) {
+    ++at_;
+    const bool space = c == ' ' || c == '\t' || c == '\r' || c == '\n';
+    if (c == '\n') {
+      line_begins_ = true;
+      if (open_.empty()) in_value_ = false;
+    } else if (!space) {
+      line_begins_ = false;
+    }
+    if (space) {
+      in_word_ = false;
+    } else if (!in_value_) {
+      in_word_ = c != '.' && c != ',' && c != '=';
+      if (c == '=') in_value_ = true;
+      if (c == '}') close(c);
+    } else if ((c == '[' || c == '{') && !in_word_) {
+      open_.push_back(c);
+      in_value_ = c == '[';
+    } else if (c == ']' || c == '}') {
+      close(c);
+    } else if (c == ',') {
+      in_word_ = false;
+      if (!open_.empty()) in_value_ = open_.back() == '[';
+    } else {
+      in_word_ = true;
+    }
+  }
+
+  void close(char bracket) {
+    if (!open_.empty() && open_.back() == (bracket == ']' ? '[' : '{')) {
+      open_.pop_back();
+      in_value_ = true;  // lists and inline tables are values
+    }
+    in_word_ = true;
+  }
+
+  bool quote_may_stand(ProblemList& problems) const {
+    if (!in_word_) return true;
+    problems.add(position_at(text_, at_), "a quote stands in the middle of a word or right behind another quote");
+    return false;
+  }
+
   /// From an opening quote to behind the closing one; quotes in one line end with it at the latest.
-  void skip_quotes(char quote) {
+  bool skip_quotes(char quote, ProblemList& problems) {
     const bool many_lines = repeats(quote, 3);
     at_ += many_lines ? 3 : 1;
     for (; at_ < text_.size(); ++at_) {
       if (quote == '"' && text_[at_] == '\\') {
+        if (!backslash_may_stand(problems)) return false;
         ++at_;
-        if (at_ < text_.size() && text_[at_] == '\n' && !many_lines) return;
+        if (at_ < text_.size() && text_[at_] == '\n' && !many_lines) return true;
       } else if (many_lines && repeats(quote, 3)) {
         at_ += 3;
         for (int more = 0; more < 2 && repeats(quote, 1); ++more) ++at_;  // quotes may stand before the closing three
-        return;
+        return true;
       } else if (!many_lines && text_[at_] == quote) {
         ++at_;
-        return;
+        return true;
       } else if (!many_lines && text_[at_] == '\n') {
-        return;
+        return true;
       }
     }
     at_ = text_.size();
+    return true;
+  }
+
+  bool backslash_may_stand(ProblemList& problems) const {
+    const std::size_t next = text_.find_first_not_of(" \t\r\n", at_ + 1);
+    if (next == std::string_view::npos || static_cast<unsigned char>(text_[next]) < 0x80) return true;
+    problems.add(position_at(text_, at_), fmt::format("a backslash stands before \"{}\"; take it away, or write the text in one line",
+                                                      shown(first_character(text_.substr(next)))));
+    return false;
   }
 
   /// Moves to the first character of the name.
@@ -101,6 +143,10 @@ class Scanner {
 
   std::string_view text_;
   std::size_t at_ = 0;
+  bool line_begins_ = true;
+  bool in_value_ = false;  // behind an equals sign, or in a list; else among keys
+  bool in_word_ = false;   // behind something that only a space or a sign ends
+  std::string open_;       // the brackets of lists and inline tables that are open, outermost first
 };
 
 }  // namespace

@@ -21,6 +21,20 @@ const std::array<const char*, 36> kScraps{
     "{", "}", "=", ".", ",", "\n", "\r", "#", "\\u0000", "\xC3", "\xEF\xBB\xBF", "true", "1979-05-27T07:32:00Z", "[[panel]]\n", "format = 2\n",
     "a.b.c = 1\n", "\xC3\xB6", "\xCC\xA0", "\xE2\x80\x9C", "[&]\n", "'''", "\\"};
 
+/// The same things said in all the ways that TOML has.
+const char* const kManyWays =
+    "\xEF\xBB\xBF# Schneckenhaus, gr\xC3\xB6\xC3\x9F" "er\r\n"
+    "format = 0x1\n"
+    "specimen.name = \"\"\"\\\n  K\xC3\xA4" "ferchen \\u00B5 \"eins\" \"\"\"\n"
+    "specimen.\"coiling\" = 'dextral'   # rechts\n"
+    "wall = { 'thickness' = 4.5e-1, growth = \"constant\" }\n"
+    "lamp = [ { radius = 0.2 }, { radius = 0.1, behind_lip = 1 } ]\n"
+    "[ growth ]\n"
+    "whorls = +6\nW = [ # Stufen\n  [ 0, 1.5 ],\n  [ 4.0, 1_0.0 ],\n]\nD = -0.0\nT = 20e-1\n"
+    "[size]\r\n\"aperture_width\" = 8.5\r\n"
+    "[[ section . lobe ]]\nat = 6\nreach = 0.1\n"
+    "[[panel]]\nview = { azimuth = 1, elevation = 2 }\n[[panel]]\nview = '''axial section'''\n";
+
 class Mutator {
  public:
   explicit Mutator(std::uint64_t seed) : random_(seed) {}
@@ -78,11 +92,12 @@ bool is_sound(const Specimen& s) {
 }  // namespace
 
 TEST_CASE("20,000 mutations of sound scenes are read as sound specimens or refused with at least one fault", "[specimen][fuzz]") {
-  const std::array<std::string, 2> sound{SceneText().text(), SceneText::with_every_key().text()};
+  const std::array<std::string, 3> sound{SceneText().text(), SceneText::with_every_key().text(), kManyWays};
+  for (const std::string& text : sound) REQUIRE_NOTHROW(parse_scene(text, "sound"));
   Mutator mutator(20240501);
   int accepted = 0, refused = 0;
   for (int i = 0; i < 20000; ++i) {
-    const std::string text = mutator.mutated(sound[static_cast<std::size_t>(i % 2)]);
+    const std::string text = mutator.mutated(sound[static_cast<std::size_t>(i % 3)]);
     try {
       const Specimen specimen = parse_scene(text, "mutation");
       ++accepted;

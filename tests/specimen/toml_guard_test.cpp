@@ -47,6 +47,29 @@ TEST_CASE("A character beyond ASCII outside quotes and comments is stopped at it
   CHECK(guarded("a = \"not closed\nö = 1") == "2:1");
 }
 
+TEST_CASE("Quotes begin where a key, a value or a part of them may begin", "[specimen]") {
+  for (const char* text : {"a='b'", "'a'.\"b\" = 1", "a = ['b','c']", "a = {'b'='c'}", "a = \"\"\"b\"\"\"\"\" ", "['a'.'b']", "\xEF\xBB\xBF'a' = 1",
+                           "a = {'b'.'c'='d','e'=['f',{'g'='h'}],i='j'}", "a = [\n'b',\n'c'\n]\n'd'='e'"}) {
+    CAPTURE(text);
+    CHECK(guarded(text) == "passes");
+  }
+  CHECK(guarded("a = 1e999\"\xCC\xA0\"") == "1:10");
+  CHECK(guarded("a = true'\xCC\xA0'") == "1:9");
+  CHECK(guarded("a = 'b''c'") == "1:8");
+  CHECK(guarded("a = [1]'c'") == "1:8");
+  CHECK(guarded("a = [1.'c']") == "1:8");
+  CHECK(guarded("a = [[1='c']]") == "1:9");
+  CHECK(guarded("a = { b = 1.'c' }") == "1:13");
+  CHECK(guarded("a = 1{'c'}") == "1:7");
+}
+
+TEST_CASE("No character beyond ASCII follows a backslash, across line ends either", "[specimen]") {
+  CHECK(guarded("a = \"\"\"b \\\n  c\"\"\"") == "passes");
+  CHECK(guarded("a = 'b\\ö'") == "passes");
+  CHECK(guarded("a = \"\"\"b\\\n  ö\"\"\"") == "1:9");
+  CHECK(guarded("a = \"b\\ö\"") == "1:7");
+}
+
 TEST_CASE("Names of tables must begin like names; lists over several lines are no tables", "[specimen]") {
   for (const char* text : {"[a]", "[[a]]", "[ a ]", "[ \"a\" ]", "['a']", "[_]", "[-]", "[0]", "[]", "[", "[[", "[\n",
                            "a = [\n[+1, 2],\n[.5, 1]\n]", "a = [ # [\n[&]\n]", "a = \"\"\"\n[&]\n\"\"\""}) {
