@@ -9,7 +9,7 @@
 namespace whorl::diagnostics {
 namespace {
 
-constexpr int kSlip = 2;       // costs are doubled so that half a slip is whole
+constexpr int kSlip = 2;  // costs are doubled so that half a slip is whole
 constexpr int kCaseSlip = 1;
 constexpr std::size_t kLongestCompared = 64;
 
@@ -28,7 +28,8 @@ int slips(std::string_view a, std::string_view b) {
   for (std::size_t j = 0; j <= b.size(); ++j) at(0, j) = static_cast<int>(j) * kSlip;
   for (std::size_t i = 1; i <= a.size(); ++i) {
     for (std::size_t j = 1; j <= b.size(); ++j) {
-      int best = std::min({at(i - 1, j) + kSlip, at(i, j - 1) + kSlip, at(i - 1, j - 1) + exchange(a[i - 1], b[j - 1])});
+      int best =
+          std::min({at(i - 1, j) + kSlip, at(i, j - 1) + kSlip, at(i - 1, j - 1) + exchange(a[i - 1], b[j - 1])});
       if (i > 1 && j > 1 && lower(a[i - 1]) == lower(b[j - 2]) && lower(a[i - 2]) == lower(b[j - 1])) {
         best = std::min(best, at(i - 2, j - 2) + kSlip);
       }

@@ -8,9 +8,9 @@
 
 namespace whorl::diagnostics {
 
-/// While one exists, a signal that ends the process waits (up to two seconds) before it removes what is on the list: a file
-/// and its entry change together. Keep it to a few system calls. Where the end has already begun, the constructor does not
-/// return.
+/// While one exists, a signal that ends the process waits (up to two seconds) before it removes what is on the list: a
+/// file and its entry change together. Keep it to a few system calls. Where the end has already begun, the constructor
+/// does not return.
 class Uninterrupted {
  public:
   Uninterrupted();

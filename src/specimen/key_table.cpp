@@ -22,7 +22,8 @@ std::string quoted_words(const KeyRow& row) {
 
 const KeyRow* find_key(std::string_view table, std::string_view key) {
   const auto rows = key_table();
-  const auto row = std::find_if(rows.begin(), rows.end(), [&](const KeyRow& r) { return r.table == table && r.key == key; });
+  const auto row =
+      std::find_if(rows.begin(), rows.end(), [&](const KeyRow& r) { return r.table == table && r.key == key; });
   return row == rows.end() ? nullptr : &*row;
 }
 
@@ -86,7 +87,8 @@ std::string written_wish(const KeyRow& row) {
   switch (row.type) {
     case KeyType::kNumber: return fmt::format("a number {}", written_range(row));
     case KeyType::kWhole:
-      return fmt::format("{} {}", row.range.low == row.range.high ? "the number" : "a whole number", written_range(row));
+      return fmt::format("{} {}", row.range.low == row.range.high ? "the number" : "a whole number",
+                         written_range(row));
     case KeyType::kText: return fmt::format("a text of {} to {} characters, in quotes", row.range.low, row.range.high);
     case KeyType::kWord: return fmt::format("one of the words {}", quoted_words(row));
     case KeyType::kColour: return "a colour \"#rrggbb\"";

@@ -21,8 +21,8 @@ struct Range {
   }
 };
 
-/// One key. `fallback` is what holds where the file is silent, as TOML text; kRequired and kNoDefault are not TOML, nor is
-/// anything in round brackets, which describes a default that follows from other keys.
+/// One key. `fallback` is what holds where the file is silent, as TOML text; kRequired and kNoDefault are not TOML, nor
+/// is anything in round brackets, which describes a default that follows from other keys.
 struct KeyRow {
   std::string_view table;  // "" for the top of the file; "section.lobe" for tables in tables
   std::string_view key;

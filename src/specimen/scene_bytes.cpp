@@ -38,7 +38,8 @@ class OpenFile {
     for (;;) {
       const ssize_t count = read(fd_, to, most);
       if (count >= 0) return static_cast<std::size_t>(count);
-      if (errno == EISDIR) throw FileTrouble(fmt::format("cannot read {}: it is a folder; a scene file is wanted", name_));
+      if (errno == EISDIR)
+        throw FileTrouble(fmt::format("cannot read {}: it is a folder; a scene file is wanted", name_));
       if (errno != EINTR) throw FileTrouble(fmt::format("cannot read {}: {}", name_, reason(errno)));
     }
   }
@@ -88,7 +89,8 @@ void check_bytes(std::string_view bytes, ProblemList& problems) {
   } else if (without_byte_order_mark(bytes).find_first_not_of(" \t\r\n") == std::string_view::npos) {
     problems.add({}, "the file is blank; a scene begins with the line: format = 1");
   } else if (const std::size_t nul = bytes.find('\0'); nul != std::string_view::npos) {
-    problems.add(position_at(bytes, nul), "the file holds a NUL byte: it is binary, not a text; a scene is a text file in TOML");
+    problems.add(position_at(bytes, nul),
+                 "the file holds a NUL byte: it is binary, not a text; a scene is a text file in TOML");
   } else if (const auto bad = first_bad_byte(bytes)) {
     problems.add(position_at(bytes, *bad),
                  fmt::format("byte 0x{:02x} is not UTF-8; save the file with the encoding UTF-8",

@@ -19,7 +19,8 @@ constexpr std::size_t kLongestReason = 300;  // characters
 
 /// The rest of the text from a place on; columns count characters.
 std::string_view from_place(std::string_view text, diagnostics::Position place) {
-  for (std::uint32_t line = 1; line < place.line && !text.empty(); ++line) text.remove_prefix(std::min(text.find('\n'), text.size() - 1) + 1);
+  for (std::uint32_t line = 1; line < place.line && !text.empty(); ++line)
+    text.remove_prefix(std::min(text.find('\n'), text.size() - 1) + 1);
   for (std::uint32_t column = 1; column < place.column && !text.empty(); ++column) {
     do text.remove_prefix(1);
     while (!text.empty() && (static_cast<unsigned char>(text[0]) & 0xC0u) == 0x80u);

@@ -8,8 +8,9 @@
 
 namespace whorl::specimen {
 
-/// Reads and checks a scene file; "-" is standard input. Throws diagnostics::FileTrouble where it cannot be read (missing,
-/// a folder, no right to), else as parse_scene. A file of more than 1 MiB is refused without being read whole.
+/// Reads and checks a scene file; "-" is standard input. Throws diagnostics::FileTrouble where it cannot be read
+/// (missing, a folder, no right to), else as parse_scene. A file of more than 1 MiB is refused without being read
+/// whole.
 Specimen read_scene_file(const std::string& path);
 
 /// Checks `text` as a scene file named `source_name`. Throws diagnostics::InvalidInput with every fault that it has;

@@ -31,8 +31,9 @@ std::string_view last_part(std::string_view name) {
 void SceneReader::check_format() {
   const toml::node* node = root_.get("format");
   if (node != nullptr && node->is_integer() && node->as_integer()->get() > kFormat) {
-    problems_.add(position_of(*node), fmt::format("format = {}: this program reads format {}; a newer program is needed for this file",
-                                                  shown_value(*node), kFormat));
+    problems_.add(position_of(*node),
+                  fmt::format("format = {}: this program reads format {}; a newer program is needed for this file",
+                              shown_value(*node), kFormat));
   }
 }
 
@@ -40,8 +41,9 @@ TableReader SceneReader::table(std::string_view name) {
   const toml::node* node = root_.get(name);
   const toml::table* found = node != nullptr ? node->as_table() : nullptr;
   if (node != nullptr && found == nullptr) {
-    problems_.add(position_of(*node), fmt::format("\"{}\" is {}, wanted is a table: write {} in single brackets, its keys below", name,
-                                                  kind_of(*node), written_table(name)));
+    problems_.add(position_of(*node),
+                  fmt::format("\"{}\" is {}, wanted is a table: write {} in single brackets, its keys below", name,
+                              kind_of(*node), written_table(name)));
   }
   const bool broken = node != nullptr && found == nullptr;
   TableReader reader(found, name, found != nullptr ? position_of(*found) : kTop, problems_, broken);
@@ -55,15 +57,17 @@ std::vector<TableReader> SceneReader::list(std::string_view name, const toml::ta
   if (node == nullptr) return readers;
   const toml::array* array = node->as_array();
   const auto refuse = [&](const toml::node& wrong) {
-    problems_.add(position_of(wrong), fmt::format("\"{}\" {} {}, wanted is a list of tables: write {} in double brackets, once for each",
-                                                  name, array == nullptr ? "is" : "holds", kind_of(wrong), written_table(name)));
+    problems_.add(position_of(wrong),
+                  fmt::format("\"{}\" {} {}, wanted is a list of tables: write {} in double brackets, once for each",
+                              name, array == nullptr ? "is" : "holds", kind_of(wrong), written_table(name)));
   };
   if (array == nullptr) {
     refuse(*node);
     return readers;
   }
   if (array->size() > kMostInList) {
-    problems_.add(position_of(*node), fmt::format("{} times {}; at most {} are allowed", array->size(), written_table(name), kMostInList));
+    problems_.add(position_of(*node),
+                  fmt::format("{} times {}; at most {} are allowed", array->size(), written_table(name), kMostInList));
     return readers;
   }
   for (const toml::node& element : *array) {
@@ -126,12 +130,14 @@ Size SceneReader::read_size() {
       first = kinds[i];
       size = {{static_cast<SizeKind>(i), mm.where, true}, mm};
     } else {
-      problems_.add(mm.where, fmt::format("[size] states {} and {}: state exactly one, the others follow from the form", first, kinds[i]));
+      problems_.add(mm.where, fmt::format("[size] states {} and {}: state exactly one, the others follow from the form",
+                                          first, kinds[i]));
     }
   }
   if (first.empty() && !t.broken()) {
-    problems_.add(t.where(), fmt::format("[size] is missing its measurement: state exactly one of {}, {}, {}, {}, a number {}", kinds[0], kinds[1],
-                                         kinds[2], kinds[3], written_range(*find_key("size", kinds[0]))));
+    problems_.add(t.where(),
+                  fmt::format("[size] is missing its measurement: state exactly one of {}, {}, {}, {}, a number {}",
+                              kinds[0], kinds[1], kinds[2], kinds[3], written_range(*find_key("size", kinds[0]))));
   }
   return size;
 }

@@ -9,9 +9,9 @@
 namespace whorl::specimen {
 namespace {
 
-constexpr double kShortestGrowth = 0.25;    // whorls between the embryonic shell and the lip
+constexpr double kShortestGrowth = 0.25;     // whorls between the embryonic shell and the lip
 constexpr double kMostPixelsAcross = 30000;  // beyond it image viewers and printers give up
-constexpr double kNarrowestColumn = 2.0;    // mm
+constexpr double kNarrowestColumn = 2.0;     // mm
 
 void check_growth(const Specimen& s, ProblemList& problems) {
   const double last_start = s.growth.whorls - kShortestGrowth;
@@ -23,21 +23,24 @@ void check_growth(const Specimen& s, ProblemList& problems) {
   if (s.wall.columella > 0.0 && s.growth.T <= 0.0) {
     problems.add(s.wall.columella.where,
                  fmt::format("[wall] columella = {}: a pillar needs a spire, but [growth] T = 0 winds in one plane; "
-                             "leave columella out, or raise T", s.wall.columella.value));
+                             "leave columella out, or raise T",
+                             s.wall.columella.value));
   }
   for (const Lamp& lamp : s.lamps) {
     if (lamp.behind_lip > s.growth.whorls) {
-      problems.add(lamp.behind_lip.where, fmt::format("[[lamp]] behind_lip = {}: lies beyond the pole; must be at most whorls = {}",
-                                                      lamp.behind_lip.value, s.growth.whorls.value));
+      problems.add(lamp.behind_lip.where,
+                   fmt::format("[[lamp]] behind_lip = {}: lies beyond the pole; must be at most whorls = {}",
+                               lamp.behind_lip.value, s.growth.whorls.value));
     }
   }
 }
 
 void check_thickness(const char* key, const Stated<double>& thickness, const Specimen& s, ProblemList& problems) {
   if (!(thickness >= 0.5 * s.size.mm)) return;
-  problems.add(thickness.where, fmt::format("{} = {}: must be less than half of {} = {} mm, that is {} mm", key, thickness.value,
-                                            keys_of("size")[static_cast<std::size_t>(s.size.kind.value)], s.size.mm.value,
-                                            0.5 * s.size.mm));
+  problems.add(
+      thickness.where,
+      fmt::format("{} = {}: must be less than half of {} = {} mm, that is {} mm", key, thickness.value,
+                  keys_of("size")[static_cast<std::size_t>(s.size.kind.value)], s.size.mm.value, 0.5 * s.size.mm));
 }
 
 void check_page(const Plate& plate, ProblemList& problems) {
@@ -49,9 +52,12 @@ void check_page(const Plate& plate, ProblemList& problems) {
   }
   const double column_mm = (plate.width_mm - plate.gap_mm * (plate.columns - 1)) / plate.columns;
   if (plate.columns > 0 && column_mm < kNarrowestColumn) {
-    problems.add(plate.columns.given ? plate.columns.where : plate.gap_mm.where,
-                 fmt::format("[plate] columns = {} with gap = {} mm on width = {} mm leave {:.2f} mm for a panel; at least {} mm "
-                             "are wanted", plate.columns.value, plate.gap_mm.value, plate.width_mm.value, column_mm, kNarrowestColumn));
+    problems.add(
+        plate.columns.given ? plate.columns.where : plate.gap_mm.where,
+        fmt::format(
+            "[plate] columns = {} with gap = {} mm on width = {} mm leave {:.2f} mm for a panel; at least {} mm "
+            "are wanted",
+            plate.columns.value, plate.gap_mm.value, plate.width_mm.value, column_mm, kNarrowestColumn));
   }
 }
 
@@ -60,7 +66,8 @@ void check_page(const Plate& plate, ProblemList& problems) {
 void check_rules(const Specimen& specimen, ProblemList& problems) {
   check_growth(specimen, problems);
   check_thickness("[wall] thickness", specimen.wall.thickness_mm, specimen, problems);
-  if (specimen.lip.thickness_mm.given) check_thickness("[lip] thickness", specimen.lip.thickness_mm, specimen, problems);
+  if (specimen.lip.thickness_mm.given)
+    check_thickness("[lip] thickness", specimen.lip.thickness_mm, specimen, problems);
   check_page(specimen.plate, problems);
 }
 

@@ -22,7 +22,8 @@ Stages TableReader::checked_stages(const KeyRow& row, const toml::array& list) c
   const auto complain_at = [&](const toml::node& node, const std::string& what) {
     problems_.add(position_of(node), fmt::format("{}: {}", key, what));
   };
-  if (list.empty()) complain_at(list, "the list of stages is empty; state one number, or stages [[whorl, number], ...]");
+  if (list.empty())
+    complain_at(list, "the list of stages is empty; state one number, or stages [[whorl, number], ...]");
   if (list.size() > kMostStages) {
     complain_at(list, fmt::format("{} stages; at most {} are allowed", list.size(), kMostStages));
     return {};
@@ -39,14 +40,16 @@ Stages TableReader::checked_stages(const KeyRow& row, const toml::array& list) c
       continue;
     }
     if (!(*whorl >= 0.0 && *whorl <= kLastWhorl)) {
-      complain_at(node, fmt::format("stage {} lies at whorl {}; must be from 0 to {} whorls", i + 1, *whorl, kLastWhorl));
+      complain_at(node,
+                  fmt::format("stage {} lies at whorl {}; must be from 0 to {} whorls", i + 1, *whorl, kLastWhorl));
     }
     if (!row.range.holds(*value)) {
       complain_at(node, fmt::format("stage {} has the expansion {}; must be {}", i + 1, *value, written_range(row)));
     }
     if (!stages.empty() && !(*whorl > stages.back().whorl)) {
       complain_at(node, fmt::format("stage {} at whorl {} does not lie after the stage before it, at whorl {}; "
-                                    "stages must rise from the pole to the lip", i + 1, *whorl, stages.back().whorl));
+                                    "stages must rise from the pole to the lip",
+                                    i + 1, *whorl, stages.back().whorl));
     }
     stages.push_back({*whorl, *value});
   }

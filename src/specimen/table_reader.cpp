@@ -110,7 +110,8 @@ Stated<std::string> TableReader::text(std::string_view key) const {
     wrong_type(row, *node);
     return {"", position_of(*node), true};
   }
-  if (const std::string fault = fault_of_text(value->get(), row.range.high); !fault.empty()) complain(row, *node, fault);
+  if (const std::string fault = fault_of_text(value->get(), row.range.high); !fault.empty())
+    complain(row, *node, fault);
   return {value->get(), position_of(*node), true};
 }
 
@@ -130,8 +131,10 @@ Stated<int> TableReader::word_index(std::string_view key) const {
   const int index = index_of(value->get());
   if (index < static_cast<int>(words.size())) return {index, position_of(*node), true};
   const diagnostics::NearestWord nearest = diagnostics::nearest_word(value->get(), words);
-  complain(row, *node, nearest.close ? fmt::format("unknown word; did you mean \"{}\"? Wanted is {}", nearest.word, written_wish(row))
-                                     : fmt::format("unknown word; wanted is {}", written_wish(row)));
+  complain(row, *node,
+           nearest.close
+               ? fmt::format("unknown word; did you mean \"{}\"? Wanted is {}", nearest.word, written_wish(row))
+               : fmt::format("unknown word; wanted is {}", written_wish(row)));
   return {0, position_of(*node), true};
 }
 
@@ -145,7 +148,8 @@ Stated<Colour> TableReader::colour(std::string_view key) const {
     return {{}, position_of(*node), true};
   }
   const std::optional<Colour> colour = colour_in(value->get());
-  if (!colour) complain(row, *node, "is no colour; wanted is \"#rrggbb\", two hexadecimal digits each for red, green and blue");
+  if (!colour)
+    complain(row, *node, "is no colour; wanted is \"#rrggbb\", two hexadecimal digits each for red, green and blue");
   return {colour.value_or(Colour{}), position_of(*node), true};
 }
 

@@ -9,7 +9,9 @@
 namespace whorl::specimen {
 namespace {
 
-unsigned byte_at(std::string_view text, std::size_t i) { return i < text.size() ? static_cast<unsigned char>(text[i]) : 0u; }
+unsigned byte_at(std::string_view text, std::size_t i) {
+  return i < text.size() ? static_cast<unsigned char>(text[i]) : 0u;
+}
 
 /// Length of the well-formed sequence at `i`, 0 where there is none.
 std::size_t sequence_length(std::string_view text, std::size_t i) {
@@ -60,7 +62,8 @@ diagnostics::Position position_at(std::string_view text, std::size_t offset) {
   const std::string_view before = text.substr(0, offset);
   const std::size_t line_start = before.rfind('\n') + 1;  // npos + 1 is 0
   const auto line = 1 + std::count(before.begin(), before.end(), '\n');
-  return {static_cast<std::uint32_t>(line), static_cast<std::uint32_t>(1 + count_characters(before.substr(line_start)))};
+  return {static_cast<std::uint32_t>(line),
+          static_cast<std::uint32_t>(1 + count_characters(before.substr(line_start)))};
 }
 
 std::size_t count_characters(std::string_view text) {
@@ -69,13 +72,16 @@ std::size_t count_characters(std::string_view text) {
 }
 
 std::string fault_of_text(std::string_view text, double most_characters) {
-  if (text.find_first_not_of(' ') == std::string_view::npos) return "is blank; write something, or leave out a key that may be left out";
+  if (text.find_first_not_of(' ') == std::string_view::npos)
+    return "is blank; write something, or leave out a key that may be left out";
   const std::size_t characters = count_characters(text);
   if (static_cast<double>(characters) > most_characters) {
     return fmt::format("has {} characters; must be at most {}", characters, most_characters);
   }
   for (std::size_t i = 0; i < text.size(); ++i) {
-    if (is_control(text, i)) return fmt::format("holds a control character (byte {}: tab, new line or the like); it must be one plain line", i + 1);
+    if (is_control(text, i))
+      return fmt::format("holds a control character (byte {}: tab, new line or the like); it must be one plain line",
+                         i + 1);
   }
   return {};
 }

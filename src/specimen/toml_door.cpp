@@ -9,7 +9,9 @@
 namespace whorl::specimen {
 namespace {
 
-diagnostics::Position from_source(const toml::source_region& region) { return {region.begin.line, region.begin.column}; }
+diagnostics::Position from_source(const toml::source_region& region) {
+  return {region.begin.line, region.begin.column};
+}
 
 bool continues_character(char c) { return (static_cast<unsigned char>(c) & 0xC0u) == 0x80u; }
 

@@ -37,9 +37,7 @@ class Scanner {
   }
 
  private:
-  bool repeats(char c, std::size_t times) const {
-    return text_.substr(at_, times) == std::string(times, c);
-  }
+  bool repeats(char c, std::size_t times) const { return text_.substr(at_, times) == std::string(times, c); }
 
   /// Past one character that is neither quote nor comment.
   void step(char c) {
@@ -111,8 +109,9 @@ class Scanner {
   bool backslash_may_stand(ProblemList& problems) const {
     const std::size_t next = text_.find_first_not_of(" \t\r\n", at_ + 1);
     if (next == std::string_view::npos || static_cast<unsigned char>(text_[next]) < 0x80) return true;
-    problems.add(position_at(text_, at_), fmt::format("a backslash stands before \"{}\"; take it away, or write the text in one line",
-                                                      shown(first_character(text_.substr(next)))));
+    problems.add(position_at(text_, at_),
+                 fmt::format("a backslash stands before \"{}\"; take it away, or write the text in one line",
+                             shown(first_character(text_.substr(next)))));
     return false;
   }
 
@@ -121,24 +120,25 @@ class Scanner {
     const std::size_t start = at_++;
     if (at_ < text_.size() && text_[at_] == '[') ++at_;
     while (at_ < text_.size() && (text_[at_] == ' ' || text_[at_] == '\t')) ++at_;
-    const std::string_view good =
-        "ABCDEFGHIJKLMNOPQRSTUVWXYZabcdefghijklmnopqrstuvwxyz0123456789_-\"'";
+    const std::string_view good = "ABCDEFGHIJKLMNOPQRSTUVWXYZabcdefghijklmnopqrstuvwxyz0123456789_-\"'";
     // A header that breaks off, or an empty one, or one of a second bracket too late, is well told of by toml++.
     if (at_ >= text_.size() || std::string_view("]\r\n[").find(text_[at_]) != std::string_view::npos) return true;
     if (good.find(text_[at_]) != std::string_view::npos) return true;
     if (static_cast<unsigned char>(text_[at_]) >= 0x80) {
       complain_of_character(problems);
     } else {
-      problems.add(position_at(text_, start), fmt::format("the name of a table cannot begin with \"{}\"", shown(text_.substr(at_, 1))));
+      problems.add(position_at(text_, start),
+                   fmt::format("the name of a table cannot begin with \"{}\"", shown(text_.substr(at_, 1))));
     }
     return false;
   }
 
   void complain_of_character(ProblemList& problems) const {
     const std::string_view character = first_character(text_.substr(at_));
-    problems.add(position_at(text_, at_),
-                 fmt::format("the character \"{}\" (U+{:04X}) stands outside quotes; names of keys and tables, and all values but texts, "
-                             "are written in plain ASCII", shown(character), static_cast<unsigned>(code_point(character))));
+    problems.add(position_at(text_, at_), fmt::format("the character \"{}\" (U+{:04X}) stands outside quotes; names of "
+                                                      "keys and tables, and all values but texts, "
+                                                      "are written in plain ASCII",
+                                                      shown(character), static_cast<unsigned>(code_point(character))));
   }
 
   std::string_view text_;

@@ -34,7 +34,8 @@ TEST_CASE("Every scene that comes with the program is without faults", "[specime
   CHECK(count >= 6);
 }
 
-TEST_CASE("The scene after Moseley has the expansion and the width that his series of whorl widths gives", "[specimen]") {
+TEST_CASE("The scene after Moseley has the expansion and the width that his series of whorl widths gives",
+          "[specimen]") {
   const Specimen s = read_scene_file(std::string(WHORL_SCENE_DIR) + "/published/moseley_turbo_duplicatus.toml");
   const std::vector<double> widths_in = second_column("moseley_turbo_duplicatus.csv");
   REQUIRE(widths_in.size() == 8);

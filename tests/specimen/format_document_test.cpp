@@ -50,7 +50,8 @@ std::string documented(const KeyRow& row) {
 
 }  // namespace
 
-TEST_CASE("The document of the format holds every key with its range, default and meaning, under its table", "[specimen]") {
+TEST_CASE("The document of the format holds every key with its range, default and meaning, under its table",
+          "[specimen]") {
   const std::string text = document();
   REQUIRE(!text.empty());
   for (const KeyRow& row : key_table()) {

@@ -31,7 +31,8 @@ SceneText scene_with(const KeyRow& row, const std::string& value) {
 }
 
 bool is_numeric(const KeyRow& row) {
-  return row.type == KeyType::kNumber || row.type == KeyType::kWhole || row.type == KeyType::kStages || row.type == KeyType::kBar;
+  return row.type == KeyType::kNumber || row.type == KeyType::kWhole || row.type == KeyType::kStages ||
+         row.type == KeyType::kBar;
 }
 
 /// The least step that matters: whole numbers step by one.
@@ -57,7 +58,8 @@ TEST_CASE("Every numeric key accepts both ends of its range", "[specimen]") {
   }
 }
 
-TEST_CASE("Every numeric key refuses what lies just below or above its range and says key, value and range", "[specimen]") {
+TEST_CASE("Every numeric key refuses what lies just below or above its range and says key, value and range",
+          "[specimen]") {
   for (const KeyRow& row : key_table()) {
     if (!is_numeric(row)) continue;
     const double below = row.range.low - (row.range.low_open ? 0.0 : step_at(row, row.range.low));
@@ -80,7 +82,8 @@ TEST_CASE("No numeric key takes nan or an infinity", "[specimen]") {
     if (!is_numeric(row) || row.type == KeyType::kWhole) continue;
     for (const char* value : {"nan", "-nan", "inf", "-inf"}) {
       CAPTURE(named(row), value);
-      CHECK(contains(complaint_about(scene_with(row, value)), fmt::format("is no finite number; must be {}", written_range(row))));
+      CHECK(contains(complaint_about(scene_with(row, value)),
+                     fmt::format("is no finite number; must be {}", written_range(row))));
     }
   }
 }
@@ -103,7 +106,8 @@ TEST_CASE("Every key is read, and says what it found and wants where the type is
   for (const KeyRow& row : key_table()) {
     const std::string complaint = complaint_about(scene_with(row, "2001-02-03"));
     CAPTURE(named(row), complaint);
-    CHECK(contains(complaint, fmt::format("{} = 2001-02-03: found a date or time, wanted is {}", named(row), written_wish(row))));
+    CHECK(contains(complaint,
+                   fmt::format("{} = 2001-02-03: found a date or time, wanted is {}", named(row), written_wish(row))));
   }
 }
 
@@ -130,7 +134,8 @@ TEST_CASE("A key with one slip is recognised in its table", "[specimen]") {
   }
 }
 
-TEST_CASE("A key in the wrong table is shown its own table, and the nearest key of the one it stands in", "[specimen]") {
+TEST_CASE("A key in the wrong table is shown its own table, and the nearest key of the one it stands in",
+          "[specimen]") {
   for (const KeyRow& row : key_table()) {
     for (const char* table : {"growth", "look", "lip"}) {
       if (find_key(table, row.key) != nullptr) continue;

@@ -34,7 +34,9 @@ const char* const kScene =
     "[[panel]]\n"                               // 20
     "view = { azimuth = 1, elevation = 2 }\n";  // 21
 
-bool at(const Position& where, std::uint32_t line, std::uint32_t column) { return where.line == line && where.column == column; }
+bool at(const Position& where, std::uint32_t line, std::uint32_t column) {
+  return where.line == line && where.column == column;
+}
 
 }  // namespace
 
@@ -63,26 +65,26 @@ TEST_CASE("A fault is placed at the value, the unknown key, the table that lacks
   REQUIRE(problems.size() == 1);
   CHECK(at(problems[0].where, 3, 13));  // no TOML: the semicolon behind é
 
-  CHECK(complaint_about(
-            "format = 1\n"
-            "[specimen]\n"
-            "name = \"x\"\n"
-            "[growth]\n"
-            "whorls = 50\n"
-            "W = [[1, 2],\n"
-            "     [2, 0]]\n"
-            "D = 0\n"
-            "T = 0\n"
-            "  tilt = 3\n"
-            "[size]\n") ==
-        "1:1: [wall] thickness is missing: state a number from 0.001 to 100 mm\n"
-        "2:1: [specimen] coiling is missing: state one of the words \"dextral\", \"sinistral\"\n"
-        "5:10: [growth] whorls = 50: must be from 0.5 to 40 whorls\n"
-        "7:6: [growth] W: stage 2 has the expansion 0; must be more than 1, up to 1000000\n"
-        "10:3: unknown key \"tilt\" in [growth]; the nearest known one here is \"start\" (known: whorls, W, D, T, start, "
-        "W_distance, W_depth, W_section)\n"
-        "11:1: [size] is missing its measurement: state exactly one of shell_height, shell_width, aperture_height, "
-        "aperture_width, a number from 0.1 to 5000 mm\n");
+  CHECK(
+      complaint_about("format = 1\n"
+                      "[specimen]\n"
+                      "name = \"x\"\n"
+                      "[growth]\n"
+                      "whorls = 50\n"
+                      "W = [[1, 2],\n"
+                      "     [2, 0]]\n"
+                      "D = 0\n"
+                      "T = 0\n"
+                      "  tilt = 3\n"
+                      "[size]\n") ==
+      "1:1: [wall] thickness is missing: state a number from 0.001 to 100 mm\n"
+      "2:1: [specimen] coiling is missing: state one of the words \"dextral\", \"sinistral\"\n"
+      "5:10: [growth] whorls = 50: must be from 0.5 to 40 whorls\n"
+      "7:6: [growth] W: stage 2 has the expansion 0; must be more than 1, up to 1000000\n"
+      "10:3: unknown key \"tilt\" in [growth]; the nearest known one here is \"start\" (known: whorls, W, D, T, start, "
+      "W_distance, W_depth, W_section)\n"
+      "11:1: [size] is missing its measurement: state exactly one of shell_height, shell_width, aperture_height, "
+      "aperture_width, a number from 0.1 to 5000 mm\n");
 }
 
 TEST_CASE("What is printed of a fault is file, line, column and message", "[specimen]") {

@@ -17,8 +17,9 @@ bool same(const Colour& colour, int red, int green, int blue) {
 }
 
 bool same(const Stages& stages, const std::vector<std::pair<double, double>>& wanted) {
-  return std::equal(stages.begin(), stages.end(), wanted.begin(), wanted.end(),
-                    [](const Stage& stage, const auto& pair) { return stage.whorl == pair.first && stage.W == pair.second; });
+  return std::equal(
+      stages.begin(), stages.end(), wanted.begin(), wanted.end(),
+      [](const Stage& stage, const auto& pair) { return stage.whorl == pair.first && stage.W == pair.second; });
 }
 
 }  // namespace
@@ -115,24 +116,30 @@ TEST_CASE("Words mean what they say", "[specimen]") {
   CHECK(plate_with("quality", "\"proof\"").quality == Quality::kProof);
   CHECK(plate_with("quality", "\"print\"").quality == Quality::kPrint);
   CHECK(plate_with("bar", "\"auto\"").bar_mm == 0.0);
-  const std::pair<const char*, ViewName> views[] = {
-      {"\"apertural\"", ViewName::kApertural},       {"\"abapertural\"", ViewName::kAbapertural},
-      {"\"right lateral\"", ViewName::kRightLateral}, {"\"left lateral\"", ViewName::kLeftLateral},
-      {"\"apical\"", ViewName::kApical},             {"\"umbilical\"", ViewName::kUmbilical},
-      {"\"axial section\"", ViewName::kAxialSection}};
+  const std::pair<const char*, ViewName> views[] = {{"\"apertural\"", ViewName::kApertural},
+                                                    {"\"abapertural\"", ViewName::kAbapertural},
+                                                    {"\"right lateral\"", ViewName::kRightLateral},
+                                                    {"\"left lateral\"", ViewName::kLeftLateral},
+                                                    {"\"apical\"", ViewName::kApical},
+                                                    {"\"umbilical\"", ViewName::kUmbilical},
+                                                    {"\"axial section\"", ViewName::kAxialSection}};
   for (const auto& [word, view] : views) {
     CAPTURE(word);
     CHECK(parse_scene(SceneText().set("panel", "view", word).text(), "scene").plate.panels.at(0).view == view);
   }
-  const std::pair<const char*, SizeKind> sizes[] = {{"shell_height", SizeKind::kShellHeight}, {"shell_width", SizeKind::kShellWidth},
-                                                    {"aperture_height", SizeKind::kApertureHeight}, {"aperture_width", SizeKind::kApertureWidth}};
+  const std::pair<const char*, SizeKind> sizes[] = {{"shell_height", SizeKind::kShellHeight},
+                                                    {"shell_width", SizeKind::kShellWidth},
+                                                    {"aperture_height", SizeKind::kApertureHeight},
+                                                    {"aperture_width", SizeKind::kApertureWidth}};
   for (const auto& [key, kind] : sizes) {
     CAPTURE(key);
-    CHECK(parse_scene(SceneText().drop("size", "shell_height").set("size", key, "9").text(), "scene").size.kind == kind);
+    CHECK(parse_scene(SceneText().drop("size", "shell_height").set("size", key, "9").text(), "scene").size.kind ==
+          kind);
   }
 }
 
-TEST_CASE("A scene of only what is required has the defaults of the format, none of them marked as stated", "[specimen]") {
+TEST_CASE("A scene of only what is required has the defaults of the format, none of them marked as stated",
+          "[specimen]") {
   const Specimen s = parse_scene(SceneText().text(), "scene");
   CHECK(s.identity.mineral == Mineral::kAragonite);
   CHECK_FALSE(s.identity.mineral.given);

@@ -43,7 +43,8 @@ std::string repeated(const std::string& part, std::size_t times) {
 
 }  // namespace
 
-TEST_CASE("A file that is missing, a folder, or below a file is file trouble, and the message says which", "[specimen]") {
+TEST_CASE("A file that is missing, a folder, or below a file is file trouble, and the message says which",
+          "[specimen]") {
   const ScratchFolder folder;
   const std::string missing = (folder.path() / "missing.toml").string();
   const std::string file = folder.with_file("file.toml", SceneText().text());
@@ -63,13 +64,15 @@ TEST_CASE("A file of 50 MB is refused without being read whole", "[specimen]") {
     read_scene_file(path);
     FAIL("accepted");
   } catch (const InvalidInput& error) {
-    CHECK(error.what() == path + ": the file is larger than 1 MiB; a scene file has a few thousand bytes, is this the right file?");
+    CHECK(error.what() ==
+          path + ": the file is larger than 1 MiB; a scene file has a few thousand bytes, is this the right file?");
   }
 }
 
 TEST_CASE("Exactly 1 MiB is read, one byte more is not", "[specimen]") {
   std::string text = SceneText().text();
-  while (text.size() < 1024 * 1024) text += repeated("#", std::min<std::size_t>(1024 * 1024 - text.size() - 1, 4000)) + "\n";
+  while (text.size() < 1024 * 1024)
+    text += repeated("#", std::min<std::size_t>(1024 * 1024 - text.size() - 1, 4000)) + "\n";
   REQUIRE(text.size() == 1024 * 1024);
   CHECK(complaint_about(text) == "");
   CHECK(contains(complaint_about(text + "\n"), "larger than 1 MiB"));
@@ -96,13 +99,14 @@ TEST_CASE("A byte order mark and line ends of both kinds are read", "[specimen]"
 }
 
 TEST_CASE("UTF-8 is well-formed exactly where table 3-7 of the Unicode Standard says so", "[specimen]") {
-  for (const char* good : {"", "a", "\x7F", "\xC2\x80", "\xDF\xBF", "\xE0\xA0\x80", "\xED\x9F\xBF", "\xEE\x80\x80", "\xEF\xBF\xBF",
-                           "\xF0\x90\x80\x80", "\xF4\x8F\xBF\xBF"}) {
+  for (const char* good : {"", "a", "\x7F", "\xC2\x80", "\xDF\xBF", "\xE0\xA0\x80", "\xED\x9F\xBF", "\xEE\x80\x80",
+                           "\xEF\xBF\xBF", "\xF0\x90\x80\x80", "\xF4\x8F\xBF\xBF"}) {
     CAPTURE(good);
     CHECK_FALSE(first_bad_byte(good));
   }
-  for (const char* bad : {"\x80", "\xBF", "\xC0\x80", "\xC1\xBF", "\xC2", "\xC2\x7F", "\xC2\xC0", "\xE0\x9F\xBF", "\xE0\xA0", "\xED\xA0\x80",
-                          "\xED\xBF\xBF", "\xF0\x8F\xBF\xBF", "\xF4\x90\x80\x80", "\xF5\x80\x80\x80", "\xFF", "\xF0\x90\x80"}) {
+  for (const char* bad : {"\x80", "\xBF", "\xC0\x80", "\xC1\xBF", "\xC2", "\xC2\x7F", "\xC2\xC0", "\xE0\x9F\xBF",
+                          "\xE0\xA0", "\xED\xA0\x80", "\xED\xBF\xBF", "\xF0\x8F\xBF\xBF", "\xF4\x90\x80\x80",
+                          "\xF5\x80\x80\x80", "\xFF", "\xF0\x90\x80"}) {
     CAPTURE(bad);
     CHECK(first_bad_byte(bad) == 0u);
   }
@@ -111,7 +115,9 @@ TEST_CASE("UTF-8 is well-formed exactly where table 3-7 of the Unicode Standard 
 }
 
 TEST_CASE("Texts of the greatest length pass, longer ones and control characters of both sets do not", "[specimen]") {
-  const auto named = [](const std::string& name) { return complaint_about(SceneText().set("specimen", "name", '"' + name + '"')); };
+  const auto named = [](const std::string& name) {
+    return complaint_about(SceneText().set("specimen", "name", '"' + name + '"'));
+  };
   CHECK(named(repeated("ü", 200)) == "");
   CHECK(contains(named(repeated("ü", 201)), "has 201 characters; must be at most 200"));
   CHECK(contains(named(""), "is blank"));
@@ -120,7 +126,9 @@ TEST_CASE("Texts of the greatest length pass, longer ones and control characters
     CHECK(contains(named(std::string("a") + control), "holds a control character"));
   }
   CHECK(named("\\u00A0b") == "");
-  const auto noted = [](std::size_t length) { return complaint_about(SceneText().set("specimen", "note", '"' + std::string(length, 'n') + '"')); };
+  const auto noted = [](std::size_t length) {
+    return complaint_about(SceneText().set("specimen", "note", '"' + std::string(length, 'n') + '"'));
+  };
   CHECK(noted(2000) == "");
   CHECK(contains(noted(2001), "must be at most 2000"));
 }
@@ -128,19 +136,24 @@ TEST_CASE("Texts of the greatest length pass, longer ones and control characters
 TEST_CASE("Messages hold no control characters, whatever the file holds", "[specimen]") {
   const std::string hostile = "\"\\u001b[2J\\u009b\\u0007\"";
   SceneText scene;
-  scene.set("specimen", "coiling", hostile).set("look", "exterior", hostile).set("wall", hostile, "1").set("", hostile, "1");
+  scene.set("specimen", "coiling", hostile)
+      .set("look", "exterior", hostile)
+      .set("wall", hostile, "1")
+      .set("", hostile, "1");
   const std::string complaint = complaint_about(scene);
   CHECK(contains(complaint, "\\x1b[2J\\x9b\\x07"));
   for (const char c : complaint) CHECK((c == '\n' || static_cast<unsigned char>(c) >= 0x20));
 }
 
 TEST_CASE("Lines, tables in tables and lists without end are refused, not followed", "[specimen]") {
-  CHECK(contains(complaint_about(SceneText().text() + "# " + std::string(8191, 'x')), "this line has 8193 bytes; a line may have at most 8192"));
+  CHECK(contains(complaint_about(SceneText().text() + "# " + std::string(8191, 'x')),
+                 "this line has 8193 bytes; a line may have at most 8192"));
   const std::string deep = repeated("a.", 4000) + "a";
   CHECK(contains(complaint_about("[" + deep + "]\n" + deep + " = 1\n"), "unknown table \"a\""));
   CHECK(contains(complaint_about("a = " + repeated("[", 4000)), "this is not TOML"));
   CHECK(contains(complaint_about("a = " + repeated("{a=", 2500)), "this is not TOML"));
-  CHECK(contains(complaint_about(SceneText().text() + repeated("[[panel]]\nview = \"apical\"\n", 65)), "65 times [[panel]]; at most 64 are allowed"));
+  CHECK(contains(complaint_about(SceneText().text() + repeated("[[panel]]\nview = \"apical\"\n", 65)),
+                 "65 times [[panel]]; at most 64 are allowed"));
   std::string stages = "[[0, 2]";
   for (int i = 1; i <= 100; ++i) stages += fmt::format(", [{}, 2]", 0.1 * i);
   CHECK(contains(complaint_about(SceneText().set("growth", "W", stages + "]")), "101 stages; at most 100 are allowed"));

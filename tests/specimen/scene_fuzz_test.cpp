@@ -16,16 +16,50 @@ using whorl::support::SceneText;
 namespace {
 
 // Scraps that have upset parsers of numbers, texts and tables.
-const std::array<const char*, 36> kScraps{
-    "nan", "-inf", "1e999", "-0.0", "0x7fffffffffffffff", "9223372036854775808", "1_0", "''", "\"\"", "\"\"\"", "[[", "]]", "[", "]",
-    "{", "}", "=", ".", ",", "\n", "\r", "#", "\\u0000", "\xC3", "\xEF\xBB\xBF", "true", "1979-05-27T07:32:00Z", "[[panel]]\n", "format = 2\n",
-    "a.b.c = 1\n", "\xC3\xB6", "\xCC\xA0", "\xE2\x80\x9C", "[&]\n", "'''", "\\"};
+const std::array<const char*, 36> kScraps{"nan",
+                                          "-inf",
+                                          "1e999",
+                                          "-0.0",
+                                          "0x7fffffffffffffff",
+                                          "9223372036854775808",
+                                          "1_0",
+                                          "''",
+                                          "\"\"",
+                                          "\"\"\"",
+                                          "[[",
+                                          "]]",
+                                          "[",
+                                          "]",
+                                          "{",
+                                          "}",
+                                          "=",
+                                          ".",
+                                          ",",
+                                          "\n",
+                                          "\r",
+                                          "#",
+                                          "\\u0000",
+                                          "\xC3",
+                                          "\xEF\xBB\xBF",
+                                          "true",
+                                          "1979-05-27T07:32:00Z",
+                                          "[[panel]]\n",
+                                          "format = 2\n",
+                                          "a.b.c = 1\n",
+                                          "\xC3\xB6",
+                                          "\xCC\xA0",
+                                          "\xE2\x80\x9C",
+                                          "[&]\n",
+                                          "'''",
+                                          "\\"};
 
 /// The same things said in all the ways that TOML has.
 const char* const kManyWays =
-    "\xEF\xBB\xBF# Schneckenhaus, gr\xC3\xB6\xC3\x9F" "er\r\n"
+    "\xEF\xBB\xBF# Schneckenhaus, gr\xC3\xB6\xC3\x9F"
+    "er\r\n"
     "format = 0x1\n"
-    "specimen.name = \"\"\"\\\n  K\xC3\xA4" "ferchen \\u00B5 \"eins\" \"\"\"\n"
+    "specimen.name = \"\"\"\\\n  K\xC3\xA4"
+    "ferchen \\u00B5 \"eins\" \"\"\"\n"
     "specimen.\"coiling\" = 'dextral'   # rechts\n"
     "wall = { 'thickness' = 4.5e-1, growth = \"constant\" }\n"
     "lamp = [ { radius = 0.2 }, { radius = 0.1, behind_lip = 1 } ]\n"
@@ -56,8 +90,12 @@ class Mutator {
       case 1: text.replace(at, length, kScraps[below(kScraps.size())]); break;
       case 2: text.erase(at, length); break;
       case 3: text.insert(at, text.substr(below(text.size() + 1), 8 * length)); break;
-      case 4: if (at < text.size()) text[at] = static_cast<char>(below(256)); break;
-      case 5: if (at < text.size()) text[at] = static_cast<char>(static_cast<unsigned char>(text[at]) ^ (1u << below(8))); break;
+      case 4:
+        if (at < text.size()) text[at] = static_cast<char>(below(256));
+        break;
+      case 5:
+        if (at < text.size()) text[at] = static_cast<char>(static_cast<unsigned char>(text[at]) ^ (1u << below(8)));
+        break;
       case 6: replace_value(text, at); break;
       default: change_digit(text, at); break;
     }
@@ -80,9 +118,10 @@ class Mutator {
 
 /// What later stages rest on.
 bool is_sound(const Specimen& s) {
-  bool sound = s.growth.whorls >= 0.5 && s.growth.whorls <= 40.0 && s.growth.D < 1.0 && s.growth.T >= 0.0 && !s.growth.W.value.empty() &&
-               s.growth.start <= s.growth.whorls - 0.25 && s.size.mm > 0.0 && s.wall.thickness_mm > 0.0 && s.lip.thickness_mm > 0.0 &&
-               s.wall.thickness_mm < 0.5 * s.size.mm && s.plate.columns >= 1 && !s.plate.panels.empty() && !s.identity.name.value.empty();
+  bool sound = s.growth.whorls >= 0.5 && s.growth.whorls <= 40.0 && s.growth.D < 1.0 && s.growth.T >= 0.0 &&
+               !s.growth.W.value.empty() && s.growth.start <= s.growth.whorls - 0.25 && s.size.mm > 0.0 &&
+               s.wall.thickness_mm > 0.0 && s.lip.thickness_mm > 0.0 && s.wall.thickness_mm < 0.5 * s.size.mm &&
+               s.plate.columns >= 1 && !s.plate.panels.empty() && !s.identity.name.value.empty();
   for (const Stage& stage : s.growth.W.value) sound = sound && stage.W > 1.0 && std::isfinite(stage.W);
   for (const Panel& panel : s.plate.panels) sound = sound && panel.scale >= 0.1 && std::isfinite(panel.azimuth_deg);
   for (const Lamp& lamp : s.lamps) sound = sound && lamp.radius_mm > 0.0 && lamp.temperature_k >= 1000.0;
@@ -91,7 +130,8 @@ bool is_sound(const Specimen& s) {
 
 }  // namespace
 
-TEST_CASE("20,000 mutations of sound scenes are read as sound specimens or refused with at least one fault", "[specimen][fuzz]") {
+TEST_CASE("20,000 mutations of sound scenes are read as sound specimens or refused with at least one fault",
+          "[specimen][fuzz]") {
   const std::array<std::string, 3> sound{SceneText().text(), SceneText::with_every_key().text(), kManyWays};
   for (const std::string& text : sound) REQUIRE_NOTHROW(parse_scene(text, "sound"));
   Mutator mutator(20240501);

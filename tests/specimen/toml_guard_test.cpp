@@ -27,10 +27,10 @@ std::string guarded(const std::string& text) {
 }  // namespace
 
 TEST_CASE("Characters beyond ASCII pass inside quotes of all four kinds and in comments", "[specimen]") {
-  for (const char* text : {
-           "a = \"ö\"", "a = 'ö'", "a = \"\"\"ö\n\"ö\"\"\n\"\"\"", "a = '''ö\n'ö''\n'''", "# ö", "a = 1 # ö \" ö", "\"ö\" = 1", "['ö']",
-           "a = \"\\\"ö\"", "a = 'C:\\' # ö", "a = \"\"\"\\\"\"\"ö\"\"\"", "a = \"\"\"ö\"\"\"\"\" # ö", "a = '''ö''''' # ö", "a = \"\" # ö",
-           "\xEF\xBB\xBF# ö", "a = [ 'ö', # ö\n \"ö\" ]", "a = { \"ö\" = 'ö' }"}) {
+  for (const char* text : {"a = \"ö\"", "a = 'ö'", "a = \"\"\"ö\n\"ö\"\"\n\"\"\"", "a = '''ö\n'ö''\n'''", "# ö",
+                           "a = 1 # ö \" ö", "\"ö\" = 1", "['ö']", "a = \"\\\"ö\"", "a = 'C:\\' # ö",
+                           "a = \"\"\"\\\"\"\"ö\"\"\"", "a = \"\"\"ö\"\"\"\"\" # ö", "a = '''ö''''' # ö",
+                           "a = \"\" # ö", "\xEF\xBB\xBF# ö", "a = [ 'ö', # ö\n \"ö\" ]", "a = { \"ö\" = 'ö' }"}) {
     CAPTURE(text);
     CHECK(guarded(text) == "passes");
   }
@@ -48,8 +48,9 @@ TEST_CASE("A character beyond ASCII outside quotes and comments is stopped at it
 }
 
 TEST_CASE("Quotes begin where a key, a value or a part of them may begin", "[specimen]") {
-  for (const char* text : {"a='b'", "'a'.\"b\" = 1", "a = ['b','c']", "a = {'b'='c'}", "a = \"\"\"b\"\"\"\"\" ", "['a'.'b']", "\xEF\xBB\xBF'a' = 1",
-                           "a = {'b'.'c'='d','e'=['f',{'g'='h'}],i='j'}", "a = [\n'b',\n'c'\n]\n'd'='e'"}) {
+  for (const char* text :
+       {"a='b'", "'a'.\"b\" = 1", "a = ['b','c']", "a = {'b'='c'}", "a = \"\"\"b\"\"\"\"\" ", "['a'.'b']",
+        "\xEF\xBB\xBF'a' = 1", "a = {'b'.'c'='d','e'=['f',{'g'='h'}],i='j'}", "a = [\n'b',\n'c'\n]\n'd'='e'"}) {
     CAPTURE(text);
     CHECK(guarded(text) == "passes");
   }
@@ -89,5 +90,6 @@ TEST_CASE("A character is named by its number as the Unicode Standard writes it"
   CHECK(whorl::specimen::code_point("\xC3\xB6") == U'\u00F6');
   CHECK(whorl::specimen::code_point("\xE2\x82\xAC") == U'\u20AC');
   CHECK(whorl::specimen::code_point("\xF0\x9F\x90\x9A") == U'\U0001F41A');
-  CHECK(whorl::specimen::first_character("\xE2\x82\xAC" "2") == "\xE2\x82\xAC");
+  CHECK(whorl::specimen::first_character("\xE2\x82\xAC"
+                                         "2") == "\xE2\x82\xAC");
 }

@@ -32,12 +32,23 @@ SceneText SceneText::with_every_key() {
   scene.set("section.lobe", "at", "60.0").set("section.lobe", "reach", "0.2").set("section.lobe", "width", "25");
   scene.set("wall", "growth", "\"constant\"").set("wall", "columella", "0.18");
   scene.set("lip", "inclination", "12").set("lip", "thickness", "0.8");
-  scene.set("look", "exterior", "\"#010203\"").set("look", "interior", "\"#AABBCC\"").set("look", "section", "\"#ff8000\"");
+  scene.set("look", "exterior", "\"#010203\"")
+      .set("look", "interior", "\"#AABBCC\"")
+      .set("look", "section", "\"#ff8000\"");
   scene.set("look", "gloss", "0.75");
-  scene.set("light", "azimuth", "90").set("light", "elevation", "30").set("light", "softness", "5").set("light", "fill", "0.5");
-  scene.set("lamp", "behind_lip", "0.25").set("lamp", "radius", "0.5").set("lamp", "strength", "70").set("lamp", "temperature", "2700");
+  scene.set("light", "azimuth", "90")
+      .set("light", "elevation", "30")
+      .set("light", "softness", "5")
+      .set("light", "fill", "0.5");
+  scene.set("lamp", "behind_lip", "0.25")
+      .set("lamp", "radius", "0.5")
+      .set("lamp", "strength", "70")
+      .set("lamp", "temperature", "2700");
   scene.set("plate", "width", "85").set("plate", "resolution", "300").set("plate", "background", "\"clear\"");
-  scene.set("plate", "columns", "2").set("plate", "gap", "2.5").set("plate", "letters", "\"(a)\"").set("plate", "bar", "10.0");
+  scene.set("plate", "columns", "2")
+      .set("plate", "gap", "2.5")
+      .set("plate", "letters", "\"(a)\"")
+      .set("plate", "bar", "10.0");
   scene.set("plate", "quality", "\"draft\"");
   return scene.set("panel", "view", "{ azimuth = 30.0, elevation = 10.0 }").set("panel", "scale", "2.0");
 }
@@ -55,7 +66,8 @@ SceneText& SceneText::set(const std::string& table, const std::string& key, cons
 
 SceneText& SceneText::drop(const std::string& table, const std::string& key) {
   auto& keys = tables_[table];
-  keys.erase(std::remove_if(keys.begin(), keys.end(), [&](const auto& entry) { return entry.first == key; }), keys.end());
+  keys.erase(std::remove_if(keys.begin(), keys.end(), [&](const auto& entry) { return entry.first == key; }),
+             keys.end());
   return *this;
 }
 
