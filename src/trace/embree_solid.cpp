@@ -7,6 +7,7 @@
 #include "trace/embree_shim.h"
 
 #include <algorithm>
+#include <atomic>
 #include <chrono>
 #include <cmath>
 
@@ -49,6 +50,7 @@ struct EmbreeSolid::Impl {
   CellSet set;
   bool exact = false;
   double cell_seconds = 0.0, hierarchy_seconds = 0.0;
+  std::atomic<std::ptrdiff_t> hierarchy_bytes{0};
   RTCDevice device = nullptr;
   RTCScene scene = nullptr;
 
@@ -56,6 +58,11 @@ struct EmbreeSolid::Impl {
   ~Impl() {
     if (scene) rtcReleaseScene(scene);
     if (device) rtcReleaseDevice(device);
+  }
+
+  static bool note_memory(void* self, ssize_t bytes, bool) {
+    static_cast<Impl*>(self)->hierarchy_bytes += bytes;
+    return true;
   }
 
   bool march(const Cell& cell, const Ray& ray, CellHit& hit) const {
@@ -154,6 +161,7 @@ EmbreeSolid::EmbreeSolid(const field::Field& field, const SolidOptions& options)
   self.device = rtcNewDevice(nullptr);
   if (!self.device)
     throw diagnostics::Error(diagnostics::ExitCode::kUnexpected, "Embree could not be started on this machine");
+  rtcSetDeviceMemoryMonitorFunction(self.device, &Impl::note_memory, impl_.get());
   self.scene = rtcNewScene(self.device);
   rtcSetSceneFlags(self.scene, RTC_SCENE_FLAG_ROBUST);  // conservative node tests: neighbouring cells share faces
   RTCGeometry geometry = rtcNewGeometry(self.device, RTC_GEOMETRY_TYPE_USER);
@@ -251,6 +259,7 @@ const CellSet& EmbreeSolid::cells() const { return impl_->set; }
 const field::Field& EmbreeSolid::field() const { return impl_->field; }
 double EmbreeSolid::cell_seconds() const { return impl_->cell_seconds; }
 double EmbreeSolid::hierarchy_seconds() const { return impl_->hierarchy_seconds; }
+std::size_t EmbreeSolid::hierarchy_bytes() const { return static_cast<std::size_t>(impl_->hierarchy_bytes.load()); }
 void EmbreeSolid::set_exact(bool exact) { impl_->exact = exact; }
 
 }  // namespace whorl::trace

@@ -48,6 +48,7 @@ class EmbreeSolid final : public Surfaces {
   const field::Field& field() const;
   double cell_seconds() const;       // spent on the cells
   double hierarchy_seconds() const;  // spent on Embree's hierarchy
+  std::size_t hierarchy_bytes() const;  // that Embree holds
   /// Switches between cubics and the functions themselves. Not while rays are traced.
   void set_exact(bool exact);
 
