@@ -122,6 +122,11 @@ double Field::pillar(const Vec3& p) const noexcept {
   return (pillar.squared_radius.value(kPi * part) - p.x * p.x - p.y * p.y) / (2.0 * pillar.scale);
 }
 
+double Field::tube(const Vec3& p, double theta) const noexcept {
+  double unit;
+  return chain(in_section(p, theta), p, false, unit);
+}
+
 double Field::opening_penalty(double theta) const noexcept {
   const double past = std::max(0.0, theta - scene_.law.theta_start - 0.5 * kPi);
   return start_half_breadth_ * past * past;

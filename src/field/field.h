@@ -58,6 +58,9 @@ class Field {
   double value(const Term& term, const Vec3& p) const noexcept;
   /// Both functions of the passage nearest to `theta`, at the cost of little more than one.
   void whorl(const Vec3& p, double theta, double& outer, double& hollow) const noexcept;
+  /// The outside of the tube alone at the passage nearest to `theta`: without the flare towards the columella, and running
+  /// on past the lip.
+  double tube(const Vec3& p, double theta) const noexcept;
   /// By central differences over a thousandth of the passage's half-breadth. Not normalised.
   Vec3 gradient(const Term& term, const Vec3& p) const noexcept;
 

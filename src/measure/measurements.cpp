@@ -21,15 +21,13 @@ constexpr double kBehindLip = radians(60.0);
 
 void measure_sections(const field::Field& field, double error, Measurements& m) {
   const double theta = field.scene().law.theta_lip - kBehindLip;
-  const WhorlSection last = whorl_section(field, field::Part::kWhorl, theta);
-  const WhorlSection before = whorl_section(field, field::Part::kWhorl, theta - kTwoPi);
-  const WhorlSection lumen = whorl_section(field, field::Part::kWhorlHollow, theta);
+  const WhorlSection last = whorl_section(field, theta);
+  const WhorlSection before = whorl_section(field, theta - kTwoPi);
   const std::string where = fmt::format("in the half-plane {:.0f} degrees behind the lip", degrees(kBehindLip));
-  if (last.empty() || lumen.empty()) return;
-  // The inner side may be fused with the columella: the lumen's inner margin less the wall stands for it.
-  const double inner = lumen.rho_min - (last.rho_max - lumen.rho_max);
+  if (last.empty()) return;
+  const double inner = last.rho_min;
   m.raup_D = {inner / last.rho_max, 2.0 * error / last.rho_max,
-              "inner over outer margin of the last whorl, the inner one from the lumen less the wall, " + where};
+              "inner over outer margin of the last whorl, " + where};
   m.raup_S = {(last.z_max - last.z_min) / (last.rho_max - inner), 2.0 * error / (last.rho_max - inner),
               "whorl section's extent along the axis over that across it, " + where};
   const bool pair = !before.empty() && theta - kTwoPi > field.scene().law.theta_start;
@@ -66,9 +64,9 @@ Measurements measure_shell(const trace::EmbreeSolid& solid, specimen::Mineral mi
 
   const MouthExtent mouth = mouth_extent(field);
   m.aperture_height = {mouth.height, 2.0 * mouth.resolution,
-                       "extent along the axis of the mouth at the growth front, lip included, earlier whorls excluded"};
+                       "extent along the axis of the mouth at the growth front, lip and columella included, earlier whorls excluded"};
   m.aperture_width = {mouth.width, 2.0 * mouth.resolution,
-                      "extent away from the axis of the mouth at the growth front, lip included, earlier whorls excluded"};
+                      "extent away from the axis of the mouth at the growth front, lip and columella included, earlier whorls excluded"};
   double suture;
   if (suture_depth(solid, suture)) {
     m.last_whorl_height = {base - suture, error,

@@ -10,35 +10,39 @@
 namespace whorl::measure {
 namespace {
 
-using field::Place;
 using growth::HalfPlanePoint;
 
 class Mouth {
  public:
   explicit Mouth(const field::Field& field) : field_(field) {}
 
+  // In the tube at the growth front, and in no earlier tube.
   bool holds(HalfPlanePoint p) const {
     if (p.rho <= 0.0) return false;
     const scene::Scene& scene = field_.scene();
     const double theta =
         scene.law.theta_lip + growth::front_lead(scene.front.tan_inclination, scene.law.depth, p);
-    const Place place = field_.place_at({p.rho * std::cos(theta), p.rho * std::sin(theta), p.z});
-    return place.state != field::State::kOutside && place.owner.part == field::Part::kWhorl &&
-           std::abs(place.owner.theta - theta) < kPi;
+    const Vec3 at(p.rho * std::cos(theta), p.rho * std::sin(theta), p.z);
+    if (field_.tube(at, theta) <= 0.0 || field_.value({field::Part::kChamber, 0.0}, at) > 0.0) return false;
+    for (double earlier = theta - kTwoPi; earlier > scene.theta_begin; earlier -= kTwoPi)
+      if (field_.tube(at, earlier) > 0.0) return false;
+    return true;
   }
 
   // Moves from a place inside as far as it goes in direction (dr, dz), sidling along the edge, down to `finest` steps.
   HalfPlanePoint farthest(HalfPlanePoint p, double dr, double dz, double step, double finest) const {
+    // Rise for a step aside: from steep (a narrow horn beside the whorl before) to all but level (a rounded top).
+    constexpr double kRises[] = {4.0, 1.0, 0.3, 0.1, 0.03, 0.01, 1e-3, 1e-4};
+    const auto try_step = [&](double rise, double aside) {
+      const HalfPlanePoint q{p.rho + step * (rise * dr - aside * dz), p.z + step * (rise * dz + aside * dr)};
+      if (!holds(q)) return false;
+      p = q;
+      return true;
+    };
     while (step > finest) {
-      bool moved = false;
-      for (const double aside : {0.0, 0.6, -0.6, 1.5, -1.5, 4.0, -4.0}) {
-        const HalfPlanePoint q{p.rho + step * (dr - aside * dz), p.z + step * (dz + aside * dr)};
-        if (holds(q)) {
-          p = q;
-          moved = true;
-          break;
-        }
-      }
+      bool moved = try_step(1.0, 0.0);
+      for (const double rise : kRises)
+        if (!moved) moved = try_step(rise, 1.0) || try_step(rise, -1.0);
       if (!moved) step *= 0.5;
     }
     return p;

@@ -12,7 +12,7 @@ struct MouthExtent {
   double resolution = 0.0;
 };
 
-/// What lies inside the last whorl on the growth front of the lip and outside all earlier shell: lip included.
+/// What lies inside the tube at the growth front of the lip and outside all earlier whorls: lip and columella included.
 MouthExtent mouth_extent(const field::Field& field);
 
 /// Depth of the suture above the last whorl where it is read: on the flank opposite to the aperture, in apertural view.

@@ -19,12 +19,12 @@ double WhorlSection::support(double n_rho, double n_z) const {
   return bend < 0.0 ? b - (c - a) * (c - a) / (8.0 * bend) : b;
 }
 
-WhorlSection whorl_section(const field::Field& field, field::Part part, double theta) {
+WhorlSection whorl_section(const field::Field& field, double theta) {
   constexpr int kDirections = 1440;
   const growth::Station s = field.scene().law.at(theta);
   const double c = std::cos(theta), n = std::sin(theta);
   const auto value = [&](growth::HalfPlanePoint p) {
-    return field.value({part, theta}, Vec3(p.rho * c, p.rho * n, p.z));
+    return field.tube(Vec3(p.rho * c, p.rho * n, p.z), theta);
   };
   WhorlSection section;
   // Somewhere inside: the highest value on a coarse grid over the tube's reach.

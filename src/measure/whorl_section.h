@@ -19,8 +19,8 @@ struct WhorlSection {
   double support(double n_rho, double n_z) const;
 };
 
-/// The zero set of `part` (the whorl's outside or its lumen) of the passage at growth angle `theta`, overlapped parts too.
-WhorlSection whorl_section(const field::Field& field, field::Part part, double theta);
+/// The outside of the tube at growth angle `theta`, also where it is overlapped or fused with the columella.
+WhorlSection whorl_section(const field::Field& field, double theta);
 
 /// Semi-angle, in radians from the axis towards growth, of the straight line that touches both outlines on the apical
 /// side of the shell's outside: of the enveloping cone's generator.

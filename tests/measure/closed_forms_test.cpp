@@ -90,8 +90,8 @@ TEST_CASE("the enveloping cone has the closed form's angle", "[measure]") {
     CAPTURE(row.T, row.D, W);
     const test::Shell shell = shell_with_unit_margin(thin_tube(W, row.D, row.T));
     const double theta = shell.scene.law.theta_lip - radians(60.0);
-    const auto last = measure::whorl_section(shell.field, field::Part::kWhorl, theta);
-    const auto before = measure::whorl_section(shell.field, field::Part::kWhorl, theta - kTwoPi);
+    const auto last = measure::whorl_section(shell.field, theta);
+    const auto before = measure::whorl_section(shell.field, theta - kTwoPi);
     CHECK(degrees(measure::touching_angle(last, before)) == Approx(row.semi_angle).margin(0.2));
   }
 }

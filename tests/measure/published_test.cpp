@@ -26,8 +26,8 @@ std::vector<double> published_widths_mm() {
 
 // Across the axis from the outer margin of a whorl to that half a turn before, at one azimuth.
 double whorl_width(const field::Field& field, double theta) {
-  return measure::whorl_section(field, field::Part::kWhorl, theta).rho_max +
-         measure::whorl_section(field, field::Part::kWhorl, theta - kPi).rho_max;
+  return measure::whorl_section(field, theta).rho_max +
+         measure::whorl_section(field, theta - kPi).rho_max;
 }
 
 }  // namespace
