@@ -27,11 +27,13 @@ bool inside(const scene::Scene& scene, double theta, const PeriodicSpline& reach
   return std::hypot(q.x, q.y) < reach.value(std::atan2(q.y, q.x));
 }
 
-// Whether a point of the half-plane at `theta` is in the free lumen: in this whorl's, outside all earlier shell.
-bool in_lumen(const scene::Scene& scene, double theta, HalfPlanePoint p) {
-  if (p.rho <= 0.0 || !inside(scene, theta, hollow_at(scene, theta).reach, p)) return false;
+// Whether a point of the half-plane at `theta` is outside all shell that is older than the passage there.
+bool clear_of_earlier(const scene::Scene& scene, double theta, HalfPlanePoint p) {
+  if (p.rho <= 0.0) return false;
   for (double earlier = theta - kTwoPi; earlier > scene.law.theta_start; earlier -= kTwoPi)
     if (inside(scene, earlier, outer_at(scene, earlier).reach, p)) return false;
+  const scene::Chamber& chamber = scene.chamber;
+  if (std::hypot(p.rho / chamber.radius, (p.z - chamber.centre_z) / chamber.half_height) < 1.0) return false;
   const scene::Pillar& pillar = scene.pillar;
   if (pillar.present && p.z > pillar.top_z && p.z < pillar.bottom_z) {
     const double turn = kPi * (p.z - pillar.top_z) / (pillar.bottom_z - pillar.top_z);
@@ -40,10 +42,38 @@ bool in_lumen(const scene::Scene& scene, double theta, HalfPlanePoint p) {
   return true;
 }
 
+bool in_lumen(const scene::Scene& scene, double theta, HalfPlanePoint p) {
+  return inside(scene, theta, hollow_at(scene, theta).reach, p) && clear_of_earlier(scene, theta, p);
+}
+
+// Whether nothing solid is at a place of the tube or before its mouth.
+bool in_air(const scene::Scene& scene, double theta, HalfPlanePoint p) {
+  if (theta < scene.law.theta_start) return false;
+  const double front = scene.law.theta_lip + growth::front_lead(scene.front.tan_inclination, scene.law.depth, p);
+  return theta > front ? clear_of_earlier(scene, theta, p) : in_lumen(scene, theta, p);
+}
+
 struct Room {
   HalfPlanePoint centre{};
   double clearance = 0.0;
 };
+
+// Distance of a place from the nearest wall, at most `most`: walls lean, so that the nearest may lie in another half-plane.
+double clearance(const scene::Scene& scene, double theta, HalfPlanePoint centre, double most) {
+  constexpr int kPlanes = 24, kGrid = 48;  // to either side
+  const double farthest = std::asin(std::min(1.0, most / centre.rho)), step = most / kGrid;
+  double nearest = most;
+  for (int k = -kPlanes; k <= kPlanes; ++k) {
+    const double turn = farthest * k / kPlanes, c = std::cos(turn), s = std::sin(turn);
+    for (int j = -kGrid; j <= kGrid; ++j)
+      for (int i = -kGrid; i <= kGrid; ++i) {
+        const HalfPlanePoint p{centre.rho + i * step, centre.z + j * step};
+        const double apart = std::sqrt(std::pow(p.rho * c - centre.rho, 2) + std::pow(p.rho * s, 2) + std::pow(j * step, 2));
+        if (apart < nearest && !in_air(scene, theta + turn, p)) nearest = apart;
+      }
+  }
+  return std::max(0.0, nearest - step - most / kPlanes * 0.5);
+}
 
 // The centroid of the free lumen's section and its distance from the nearest wall, both to a grid step.
 Room room_at(const scene::Scene& scene, double theta) {
@@ -73,7 +103,7 @@ Room room_at(const scene::Scene& scene, double theta) {
         const HalfPlanePoint p = point(i, j);
         room.clearance = std::min(room.clearance, std::hypot(p.rho - room.centre.rho, p.z - room.centre.z));
       }
-  room.clearance = std::max(0.0, room.clearance - 2.0 * extent / kGrid);
+  room.clearance = clearance(scene, theta, room.centre, room.clearance);
   return room;
 }
 
