@@ -56,7 +56,7 @@ width = 60.0
 resolution = 800
 quality = "draft"
 letters = "none"
-background = "black"
+background = "clear"
 [[panel]]
 view = "apertural"
 )");
@@ -69,14 +69,15 @@ view = "apertural"
     return (rect.is_array() ? rect.at(i) : rect.at(key)).get<int>();
   };
   const int x0 = number("x", 0), y0 = number("y", 1), w = number("width", 2), h = number("height", 3);
-  const std::size_t red = image.channel("R");
+  const std::size_t alpha = image.channel("A");
+  constexpr float kWhole = 65535.0f;  // clear plates are 16 bit
 
-  // Rows of the panel that hold shell; a row half covered counts half at either end.
+  // Rows of the panel that are at least half covered somewhere: the pixel filter's skirt does not count.
   Extent rows;
   for (int y = y0; y < y0 + h; ++y) {
     float most = 0.0f;
-    for (int x = x0; x < x0 + w; ++x) most = std::max(most, image.at(x, y, red));
-    if (most > 25.0f) {
+    for (int x = x0; x < x0 + w; ++x) most = std::max(most, image.at(x, y, alpha));
+    if (most > 0.5f * kWhole) {
       if (rows.first < 0.0) rows.first = y;
       rows.last = y + 1;
     }
@@ -85,14 +86,13 @@ view = "apertural"
   CHECK(height == Approx(11.7).epsilon(0.002));
   CHECK(rows.length() * mm_per_pixel == Approx(height).margin(2.0 * mm_per_pixel));
 
-  // The bar: the longest run of pure white on the ground, with its antialiased ends.
+  // The bar: the longest run of whole ink below the panel, without its antialiased end.
   const json& bar = record.at("scale_bars").at(0);
   double longest = 0.0;
-  for (int y = 0; y < image.height; ++y) {
+  for (int y = y0 + h; y < image.height; ++y) {
     double run = 0.0;
     for (int x = 0; x < image.width; ++x) {
-      const float v = image.at(x, y, red);
-      run = v >= 254.0f ? run + 1.0 : 0.0;
+      run = image.at(x, y, alpha) > 0.99f * kWhole ? run + 1.0 : 0.0;
       longest = std::max(longest, run);
     }
   }
