@@ -52,7 +52,9 @@ double support(const trace::EmbreeSolid& solid, const Vec3& n, int grid) {
   for (std::size_t k = 0; k < kStarts; ++k) {
     double x = place(order[k] % static_cast<std::size_t>(grid)), y = place(order[k] / static_cast<std::size_t>(grid));
     double top = heights[order[k]], step = radius / grid;
-    while (step > 1e-7 * radius) {
+    // Along a keel the ascent is a narrow ridge: steps grow again while they succeed, and the climb is bounded.
+    constexpr int kMostMoves = 400;
+    for (int moves = 0; moves < kMostMoves && step > 1e-7 * radius;) {
       bool moved = false;
       for (const auto& [dx, dy] : {std::array{1.0, 0.0}, {-1.0, 0.0}, {0.0, 1.0}, {0.0, -1.0}, {0.7, 0.7}, {-0.7, 0.7},
                                    {0.7, -0.7}, {-0.7, -0.7}}) {
@@ -62,10 +64,11 @@ double support(const trace::EmbreeSolid& solid, const Vec3& n, int grid) {
           x += step * dx;
           y += step * dy;
           moved = true;
+          ++moves;
           break;
         }
       }
-      if (!moved) step *= 0.5;
+      step = moved ? std::min(2.0 * step, radius / grid) : 0.25 * step;
     }
     best = std::max(best, top);
   }
