@@ -62,18 +62,20 @@ void build_pillar(scene::Scene& scene, double columella, const Crossing& at_lip)
   const double margin = 0.05 * (end - tip);
   pillar.top_z = tip - margin;
   pillar.bottom_z = end + margin;
-  pillar.scale = columella * r;
-  std::vector<double> samples(2 * kHalf);
+  const double least_unit = columella * law.at(law.theta_start).half_breadth;
+  std::vector<double> samples(2 * kHalf), units(2 * kHalf);
   for (int i = 0; i <= kHalf; ++i) {
     const double z = pillar.top_z + (pillar.bottom_z - pillar.top_z) * i / kHalf;
     const double radius = columella * law.at(theta_at_depth(law, z)).half_breadth;
     const double up = std::max(0.0, (full_from - z) / (full_from - tip));
     const double down = std::max(0.0, (z - taper_from) / (end - taper_from));
     const double q = radius * radius * (1.0 - up * up) * (1.0 - down * down);
-    samples[static_cast<std::size_t>(i)] = q;
-    if (i > 0) samples[static_cast<std::size_t>(2 * kHalf - i)] = q;
+    const auto place = static_cast<std::size_t>(i), mirrored = static_cast<std::size_t>((2 * kHalf - i) % (2 * kHalf));
+    samples[place] = samples[mirrored] = q;
+    units[place] = units[mirrored] = std::max(radius, least_unit);
   }
   pillar.squared_radius = PeriodicSpline(samples);
+  pillar.unit = PeriodicSpline(units);
 }
 
 }  // namespace

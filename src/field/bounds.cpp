@@ -207,7 +207,8 @@ Interval Field::bounds(const Term& term, const Box3& box) const noexcept {
       const double span = pillar.bottom_z - pillar.top_z;
       const double a = std::clamp((box.min.z - pillar.top_z) / span, 0.0, 1.0);
       const double b = std::clamp((box.max.z - pillar.top_z) / span, 0.0, 1.0);
-      return (0.5 / pillar.scale) * (pillar.squared_radius.bounds(kPi * a, kPi * (b - a)) - rho2);
+      return over_positive(0.5 * (pillar.squared_radius.bounds(kPi * a, kPi * (b - a)) - rho2),
+                           pillar.unit.bounds(kPi * a, kPi * (b - a)));
     }
     case Part::kChamberOpening: {
       // A box across the seam half a turn from `theta` holds places of two passages.
@@ -248,8 +249,13 @@ double Field::steepness(const Term& term, const Box3& box) const noexcept {
   if (term.part == Part::kChamberHollow) return ellipsoid(c.hollow_radius, c.hollow_half_height);
   if (term.part == Part::kPillar) {
     const scene::Pillar& pillar = scene_.pillar;
-    const double along = pillar.squared_radius.slope_bound() * kPi / (pillar.bottom_z - pillar.top_z);
-    return std::hypot(rho, 0.5 * along) / pillar.scale;
+    const double span = pillar.bottom_z - pillar.top_z;
+    const double from = kPi * std::clamp((box.min.z - pillar.top_z) / span, 0.0, 1.0);
+    const double turn = kPi * std::clamp((box.max.z - pillar.top_z) / span, 0.0, 1.0) - from;
+    const double unit = pillar.unit.bounds(from, turn).lo;
+    const double along = 0.5 * pillar.squared_radius.slope_bound(from, turn) +
+                         bounds(term, box).magnitude() * pillar.unit.slope_bound(from, turn);
+    return std::hypot(rho, along * kPi / span) / unit;
   }
   // d/dq and d/dpsi of r (1 - t^2)/2 * normal_scale, carried into space: in the half-plane by the section's size, along
   // growth by the drift of section coordinates over the arc.

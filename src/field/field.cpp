@@ -119,7 +119,7 @@ void Field::whorl(const Vec3& p, double theta, double& outer, double& hollow) co
 double Field::pillar(const Vec3& p) const noexcept {
   const scene::Pillar& pillar = scene_.pillar;
   const double part = std::clamp((p.z - pillar.top_z) / (pillar.bottom_z - pillar.top_z), 0.0, 1.0);
-  return (pillar.squared_radius.value(kPi * part) - p.x * p.x - p.y * p.y) / (2.0 * pillar.scale);
+  return (pillar.squared_radius.value(kPi * part) - p.x * p.x - p.y * p.y) / (2.0 * pillar.unit.value(kPi * part));
 }
 
 double Field::tube(const Vec3& p, double theta) const noexcept {

@@ -110,4 +110,17 @@ double PeriodicSpline::slope_bound() const {
   return largest * static_cast<double>(n) / kTwoPi;
 }
 
+double PeriodicSpline::slope_bound(double from, double span) const {
+  if (is_constant()) return 0.0;
+  const auto n = static_cast<std::ptrdiff_t>(coefficients_.size());
+  const double per_radian = static_cast<double>(n) / kTwoPi;
+  const auto first = static_cast<std::ptrdiff_t>(std::floor(from * per_radian)) - 1;
+  const auto last = static_cast<std::ptrdiff_t>(std::floor((from + span) * per_radian)) + 2;
+  if (last - first >= n) return slope_bound();
+  const auto at = [&](std::ptrdiff_t i) { return coefficients_[static_cast<std::size_t>(((i % n) + n) % n)]; };
+  double largest = 0.0;
+  for (std::ptrdiff_t i = first; i < last; ++i) largest = std::max(largest, std::abs(at(i + 1) - at(i)));
+  return largest * per_radian;
+}
+
 }  // namespace whorl

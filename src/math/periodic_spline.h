@@ -28,8 +28,9 @@ class PeriodicSpline {
   /// never too narrow.
   Interval bounds(double from, double span) const;
   Interval bounds() const;
-  /// An upper bound of the derivative's absolute value.
+  /// An upper bound of the derivative's absolute value, over all angles or over [from, from + span].
   double slope_bound() const;
+  double slope_bound(double from, double span) const;
 
   /// Whether no coefficient differs by more than `tolerance`, times its size.
   bool close_to(const PeriodicSpline& other, double tolerance) const;

@@ -40,12 +40,12 @@ struct Chamber {
 };
 
 /// The columella: a pillar on the axis. Its squared radius by depth is a spline over [top_z, bottom_z] laid on half a turn
-/// (mirrored on the other half); it is negative beyond the pillar's tapering ends.
+/// (mirrored on the other half); it is negative beyond the pillar's tapering ends. `unit` is its radius before the ends
+/// taper, laid out likewise: it turns squared lengths into lengths that grow with the shell.
 struct Pillar {
   bool present = false;
   double top_z = 0.0, bottom_z = 0.0;
-  PeriodicSpline squared_radius{-1.0};
-  double scale = 1.0;  // its radius at the base: turns squared lengths into lengths
+  PeriodicSpline squared_radius{-1.0}, unit{1.0};
 
   /// Radius of the fillet by which whorls join the pillar, in half-breadths: kFillet down to `fillet_from_z`, none from
   /// `fillet_end_z` on, where the pillar's tip stands free and the azimuth loses its meaning on the axis below it.

@@ -7,6 +7,7 @@
 #include "support/shell_specimen.h"
 
 #include <random>
+#include <string>
 
 using namespace whorl;
 
@@ -30,6 +31,8 @@ double room_for_lamp(test::ShellPlan plan, double behind_lip) {
 TEST_CASE("A lamp as large as the room that is named for it is accepted and touches no wall, in any direction", "[compile]") {
   // Fast growth makes the walls lean: the nearest is not in the half-plane of the lamp.
   test::ShellPlan trumpet = test::globose_plan(), open = test::globose_plan();
+  trumpet.size_kind = open.size_kind = specimen::SizeKind::kApertureHeight;
+  trumpet.size_mm = open.size_mm = 12.0;
   trumpet.W = {{0.0, 10.0}};
   trumpet.whorls = 1.5;
   trumpet.D = 0.3;
@@ -43,7 +46,7 @@ TEST_CASE("A lamp as large as the room that is named for it is accepted and touc
   };
   std::mt19937 engine(8);
   std::normal_distribution<double> normal;
-  for (const Case& c : {Case{test::tall_plan(), 3.0}, Case{test::globose_plan(), 0.0}, Case{test::planispiral_plan(), 1.0},
+  for (const Case& c : {Case{test::tall_plan(), 3.0}, Case{open, 0.0}, Case{test::planispiral_plan(), 1.0},
                         Case{trumpet, 0.3}, Case{open, 0.2}}) {
     test::ShellPlan plan = c.plan;
     const double radius = 0.99 * room_for_lamp(plan, c.behind_lip);  // named to three digits

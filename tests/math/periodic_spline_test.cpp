@@ -94,6 +94,8 @@ TEST_CASE("A periodic spline's bounds hold its values over any stretch and its s
         REQUIRE(all.lo <= value + 1e-14);
         REQUIRE(value <= all.hi + 1e-14);
         REQUIRE(std::abs(slope) <= spline.slope_bound() * (1.0 + 1e-12));
+        REQUIRE(std::abs(slope) <= spline.slope_bound(from, span) * (1.0 + 1e-12));
+        REQUIRE(spline.slope_bound(from, span) <= spline.slope_bound());
       }
     }
   }
