@@ -74,8 +74,11 @@ bool clip(const Cell& cell, const Ray& ray, CellSegment& segment) {
     const float d = ray.direction[i];
     const float inverse = 1.0f / (std::abs(d) > 1e-30f ? d : std::copysign(1e-30f, d));
     const float to_centre = cell.centre[i] - ray.origin[i];
-    const float near = (to_centre - std::copysign(cell.half, d)) * inverse;
-    const float far = (to_centre + std::copysign(cell.half, d)) * inverse;
+    // Wider by what centre, half and their distance to the origin are rounded by: for a ray along the face this is all that
+    // counts, and neighbours that each miss it by a rounding would leave a slit.
+    const float reach = std::copysign(cell.half + padding(cell, i) + kUlps * std::abs(to_centre), d);
+    const float near = (to_centre - reach) * inverse;
+    const float far = (to_centre + reach) * inverse;
     t0 = std::max(t0, near - kUlps * std::abs(near));
     t1 = std::min(t1, far + kUlps * std::abs(far));
   }

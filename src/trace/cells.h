@@ -5,7 +5,9 @@
 #include "field/field.h"
 #include "trace/cubic.h"
 
+#include <cmath>
 #include <cstdint>
+#include <limits>
 #include <vector>
 
 namespace whorl::trace {
@@ -39,6 +41,12 @@ struct Cell {
   std::uint8_t term_count, owner_count;
   CellKind kind;
 };
+
+/// What rounding to floats may move a face of the cell by, along one axis: marching and hierarchy take cells for that much
+/// larger, so that neighbours overlap rather than part.
+inline float padding(const Cell& cell, int axis) {
+  return 4.0f * std::numeric_limits<float>::epsilon() * (std::abs(cell.centre[axis]) + cell.half);
+}
 
 struct CellSet {
   std::vector<Cell> cells;

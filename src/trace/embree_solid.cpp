@@ -74,15 +74,15 @@ struct EmbreeSolid::Impl {
 
   static void bounds(const RTCBoundsFunctionArguments* a) {
     const Cell& cell = static_cast<const Impl*>(a->geometryUserPtr)->set.cells[a->primID];
-    // A little more than the cell, so that the hierarchy never culls a face that the clip would keep.
-    const float half = cell.half * 1.00001f;
+    // A little more than the clip keeps, so that the hierarchy never culls what it would.
+    const auto half = [&](int i) { return cell.half * 1.00001f + 2.0f * padding(cell, i); };
     RTCBounds* b = a->bounds_o;
-    b->lower_x = cell.centre[0] - half;
-    b->lower_y = cell.centre[1] - half;
-    b->lower_z = cell.centre[2] - half;
-    b->upper_x = cell.centre[0] + half;
-    b->upper_y = cell.centre[1] + half;
-    b->upper_z = cell.centre[2] + half;
+    b->lower_x = cell.centre[0] - half(0);
+    b->lower_y = cell.centre[1] - half(1);
+    b->lower_z = cell.centre[2] - half(2);
+    b->upper_x = cell.centre[0] + half(0);
+    b->upper_y = cell.centre[1] + half(1);
+    b->upper_z = cell.centre[2] + half(2);
   }
 
   static void intersect(const RTCIntersectFunctionNArguments* a) {

@@ -4,6 +4,8 @@
 
 #include "trace/cubic.h"
 
+#include <algorithm>
+
 namespace whorl::trace {
 
 /// A cubic on [0, 1] in Bernstein form: its graph lies in the convex hull of the coefficients, so equal signs mean no root.
@@ -30,7 +32,7 @@ struct UnitCubic {
 
 /// The root in a bracket where the cubic changes sign: Newton, safeguarded by bisection, to the float limit.
 inline float bracketed_root(const UnitCubic& c, float lo, float hi, float f_lo, float f_hi) {
-  float s = lo - f_lo * (hi - lo) / (f_hi - f_lo);
+  float s = std::min(std::max(lo - f_lo * (hi - lo) / (f_hi - f_lo), lo), hi);
   for (int i = 0; i < 24; ++i) {
     const float f = c.value(s);
     if (f == 0.0f) return s;
