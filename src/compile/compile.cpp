@@ -3,6 +3,7 @@
 #include "compile/compile.h"
 
 #include "compile/axis.h"
+#include "compile/edge_patterns.h"
 #include "compile/lamps.h"
 #include "compile/tube.h"
 
@@ -87,6 +88,7 @@ scene::Scene compile_scene(const specimen::Specimen& specimen) {
   build_tube(scene, reach, specimen.wall.thickness_mm.where, specimen.lip.thickness_mm.where, faults);
   if (!faults.any()) build_axis(scene, specimen, reach, faults);
   if (!faults.any()) build_lamps(scene, specimen, faults);
+  if (!faults.any()) build_edge_patterns(scene, specimen, reach, faults);
   faults.raise(specimen.source);
 
   const growth::Exterior shell{scene.law, reach, tan_inclination};

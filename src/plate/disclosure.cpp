@@ -61,6 +61,15 @@ std::vector<Basis> basis_of(const specimen::Specimen& s) {
   add("look.interior", "interior colour", s.look.interior, kLook);
   add("look.section", "colour of cut faces", s.look.section, kLook);
   add("look.gloss", "gloss", s.look.gloss, kLook);
+  if (s.look.lip) add("look.lip", "colour of the lip", *s.look.lip, kLook);
+  if (s.look.callus) add("look.callus", "colour of the callus", *s.look.callus, kLook);
+  const auto painted = [&basis](const char* key, const char* words, bool stated) {
+    if (stated) basis.push_back({key, words, true, kLook});
+  };
+  painted("band", "colour bands", !s.colouring.bands.empty());
+  painted("flame", "flames", !s.colouring.flames.empty());
+  painted("spot", "spots", !s.colouring.spots.empty());
+  painted("pattern", "pattern computed along the growing edge", !s.colouring.patterns.empty());
   return basis;
 }
 

@@ -56,7 +56,7 @@ Studio::Studio(const specimen::Specimen& specimen) : specimen_(specimen) {
     if ((points_[i] - mouth).length() < nearby) points_.push_back(points_[i] + scene_->front.rim_radius * forward);
   const Box3& box = scene_->bounds;
   front_mm_ = 1.01 * std::max(box.min.length(), box.max.length());
-  materials_ = transport::make_materials(specimen.look, specimen.identity.mineral);
+  materials_ = transport::make_materials(*field_, specimen_);
   compile_seconds_ = now() - start;
 }
 

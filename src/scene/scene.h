@@ -4,6 +4,7 @@
 
 #include "growth/coiling_law.h"
 #include "growth/outline.h"
+#include "scene/edge_pattern.h"
 
 #include <algorithm>
 #include <cstdint>
@@ -83,6 +84,7 @@ struct Scene {
   Front front;
   growth::WallLaw wall;
   std::vector<Lamp> lamps;
+  std::vector<EdgePattern> edge_patterns;  // in the order in which they were stated
   Box3 bounds;              // of the solid, with a little room
   double height_mm = 0.0;   // along the axis, from the growth law
   bool start_raised = false;  // whorls too small to draw were left to the embryonic cap

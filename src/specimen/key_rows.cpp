@@ -13,6 +13,12 @@ constexpr Range kThickness{0.001, 100.0};
 constexpr Range kAnyTurn{-360.0, 360.0};
 constexpr Range kLine{1.0, 200.0};  // characters
 constexpr Range kNothing{};
+constexpr Range kShare{0.0, 1.0};
+constexpr Range kOnset{0.0, 40.0, false, true}, kEnd{0.0, 40.0, true, false};  // whorls from the pole
+constexpr Range kAround{-180.0, 360.0};  // directions round a section, degrees
+constexpr Range kRate{0.1, 1000.0};      // a whorl
+constexpr Range kSpread{0.0, 10000.0};   // mm^2 a whorl
+constexpr Range kSeed{0.0, 1e6};
 
 constexpr KeyRow kRows[] = {
     {"", "format", kWhole, {1.0, 1.0}, "", "", kRequired, "version of this format"},
@@ -57,6 +63,59 @@ constexpr KeyRow kRows[] = {
     {"look", "interior", kColour, kNothing, "", "", "\"#f1e6da\"", "colour of the inside"},
     {"look", "section", kColour, kNothing, "", "", "\"#b08d82\"", "colour of cut faces"},
     {"look", "gloss", kNumber, {0.0, 1.0}, "", "", "0.35", "0 matt to 1 polished"},
+    {"look", "lip", kColour, kNothing, "", "", kNoDefault, "colour of the lip; without it outside and inside blend across the rim"},
+    {"look", "lip_breadth", kNumber, kThickness, "mm", "", "(the thickness of the lip)", "how far the lip's colour or blending reaches back from the rim"},
+    {"look", "callus", kColour, kNothing, "", "", kNoDefault, "colour of the callus: earlier whorl and columella within the aperture"},
+    {"look", "callus_breadth", kNumber, {0.0, 100.0}, "mm", "", "0.0", "how far the callus spreads out of the aperture"},
+
+    {"band", "at", kNumber, kAround, "degrees", "", kRequired, "direction of the band's middle"},
+    {"band", "width", kNumber, {0.5, 360.0}, "degrees", "", kRequired, "width round the section"},
+    {"band", "colour", kColour, kNothing, "", "", kRequired, "colour at full strength"},
+    {"band", "opacity", kNumber, kShare, "", "", "1.0", "share of what lies below that it hides"},
+    {"band", "fade", kNumber, kShare, "", "", "0.2", "share of the half-width over which the edge fades"},
+    {"band", "onset", kNumber, kOnset, "whorls", "", "0.0", "where it begins, counted from the pole"},
+    {"band", "end", kNumber, kEnd, "whorls", "", "40.0", "where it ends, the lip at the latest"},
+    {"flame", "per_whorl", kNumber, {0.5, 500.0}, "", "", kRequired, "number in a whorl"},
+    {"flame", "breadth", kNumber, {0.01, 1.0}, "", "", "0.45", "greatest breadth / spacing"},
+    {"flame", "at", kNumber, kAround, "degrees", "", "0.0", "direction of the middle"},
+    {"flame", "width", kNumber, {1.0, 360.0}, "degrees", "", "360.0", "reach round the section"},
+    {"flame", "taper", kNumber, kShare, "", "", "0.0", "0 even, 1 to a point away from the apex"},
+    {"flame", "sway", kNumber, {0.0, 5.0}, "", "", "0.0", "height of the zigzag / spacing"},
+    {"flame", "bends", kNumber, {0.5, 50.0}, "", "", "4.0", "bends of the zigzag over the reach"},
+    {"flame", "irregularity", kNumber, kShare, "", "", "0.0", "0 regular to 1, in place and breadth"},
+    {"flame", "seed", kWhole, kSeed, "", "", "1", "of the irregularity"},
+    {"flame", "colour", kColour, kNothing, "", "", kRequired, "colour at full strength"},
+    {"flame", "opacity", kNumber, kShare, "", "", "1.0", "share of what lies below that it hides"},
+    {"flame", "fade", kNumber, kShare, "", "", "0.25", "share of the half-breadth over which the edge fades"},
+    {"flame", "onset", kNumber, kOnset, "whorls", "", "0.0", "where it begins, counted from the pole"},
+    {"flame", "end", kNumber, kEnd, "whorls", "", "40.0", "where it ends, the lip at the latest"},
+    {"spot", "per_whorl", kNumber, {0.5, 500.0}, "", "", kRequired, "number in a whorl"},
+    {"spot", "at", kNumber, kAround, "degrees", "", kRequired, "direction of the row"},
+    {"spot", "width", kNumber, {0.5, 180.0}, "degrees", "", "12.0", "height of a spot round the section"},
+    {"spot", "length", kNumber, {0.01, 2.0}, "", "", "0.5", "length of a spot along growth / spacing"},
+    {"spot", "stagger", kNumber, kShare, "", "", "0.0", "shift of the row / spacing"},
+    {"spot", "irregularity", kNumber, kShare, "", "", "0.0", "0 regular to 1, in place and size"},
+    {"spot", "seed", kWhole, kSeed, "", "", "1", "of the irregularity"},
+    {"spot", "colour", kColour, kNothing, "", "", kRequired, "colour at full strength"},
+    {"spot", "opacity", kNumber, kShare, "", "", "1.0", "share of what lies below that it hides"},
+    {"spot", "fade", kNumber, kShare, "", "", "0.3", "share of the radius over which the edge fades"},
+    {"spot", "onset", kNumber, kOnset, "whorls", "", "0.0", "where it begins, counted from the pole"},
+    {"spot", "end", kNumber, kEnd, "whorls", "", "40.0", "where it ends, the lip at the latest"},
+    {"pattern", "activator_decay", kNumber, kRate, "a whorl", "", kRequired, "rate r_a at which activator is removed"},
+    {"pattern", "inhibitor_decay", kNumber, kRate, "a whorl", "", kRequired, "rate r_b at which inhibitor is removed"},
+    {"pattern", "source", kNumber, kRate, "a whorl", "", "(activator_decay)", "source density s"},
+    {"pattern", "activator_base", kNumber, {0.0, 100.0}, "", "", "0.0", "basic production b_a of activator"},
+    {"pattern", "inhibitor_base", kNumber, {0.0, 10000.0}, "a whorl", "", "0.0", "basic production b_b of inhibitor"},
+    {"pattern", "activator_spread", kNumber, kSpread, "mm^2 a whorl", "", kRequired, "diffusion D_a of activator along the edge"},
+    {"pattern", "inhibitor_spread", kNumber, kSpread, "mm^2 a whorl", "", "0.0", "diffusion D_b of inhibitor along the edge"},
+    {"pattern", "variation", kNumber, {0.0, 0.9}, "", "", "0.05", "random difference of the source density along the edge"},
+    {"pattern", "threshold", kNumber, {0.01, 100.0}, "", "", "1.2", "pigment where activator / its steady level is above this"},
+    {"pattern", "seed", kWhole, kSeed, "", "", "1", "of the variation"},
+    {"pattern", "colour", kColour, kNothing, "", "", kRequired, "colour at full strength"},
+    {"pattern", "opacity", kNumber, kShare, "", "", "1.0", "share of what lies below that it hides"},
+    {"pattern", "fade", kNumber, kShare, "", "", "0.2", "share of the threshold over which the edge fades"},
+    {"pattern", "onset", kNumber, kOnset, "whorls", "", "0.0", "where it begins, counted from the pole"},
+    {"pattern", "end", kNumber, kEnd, "whorls", "", "40.0", "where it ends, the lip at the latest"},
 
     {"light", "azimuth", kNumber, kAnyTurn, "degrees", "", "135.0", "direction on the page, anticlockwise from the right"},
     {"light", "elevation", kNumber, {0.0, 90.0}, "degrees", "", "45.0", "angle out of the page, towards the reader"},

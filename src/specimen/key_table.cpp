@@ -52,7 +52,10 @@ std::vector<std::string> tables_with(std::string_view key) {
   return tables;
 }
 
-bool is_list(std::string_view table) { return table == "lamp" || table == "panel" || table == "section.lobe"; }
+bool is_list(std::string_view table) {
+  constexpr std::string_view kLists[] = {"section.lobe", "band", "flame", "spot", "pattern", "lamp", "panel"};
+  return std::find(std::begin(kLists), std::end(kLists), table) != std::end(kLists);
+}
 
 std::string written_table(std::string_view table) {
   if (table.empty()) return "the top of the file";

@@ -152,9 +152,18 @@ Lip SceneReader::read_lip(const Wall& wall) {
   return {t.number("inclination"), t.number("thickness", wall.thickness_mm)};
 }
 
-Look SceneReader::read_look() {
+Look SceneReader::read_look(const Lip& lip) {
   const TableReader t = table("look");
-  return {t.colour("exterior"), t.colour("interior"), t.colour("section"), t.number("gloss")};
+  Look look;
+  look.exterior = t.colour("exterior");
+  look.interior = t.colour("interior");
+  look.section = t.colour("section");
+  look.gloss = t.number("gloss");
+  look.lip = t.optional_colour("lip");
+  look.lip_breadth_mm = t.number("lip_breadth", lip.thickness_mm);
+  look.callus = t.optional_colour("callus");
+  look.callus_breadth_mm = t.number("callus_breadth");
+  return look;
 }
 
 Light SceneReader::read_light() {
@@ -225,7 +234,8 @@ Specimen SceneReader::read() {
   specimen.size = read_size();
   specimen.wall = read_wall();
   specimen.lip = read_lip(specimen.wall);
-  specimen.look = read_look();
+  specimen.look = read_look(specimen.lip);
+  specimen.colouring = read_colouring();
   specimen.light = read_light();
   specimen.lamps = read_lamps();
   specimen.plate = read_plate();

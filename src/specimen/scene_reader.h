@@ -31,7 +31,8 @@ class SceneReader {
   Size read_size();
   Wall read_wall();
   Lip read_lip(const Wall& wall);
-  Look read_look();
+  Look read_look(const Lip& lip);
+  Colouring read_colouring();
   Light read_light();
   std::vector<Lamp> read_lamps();
   Plate read_plate();

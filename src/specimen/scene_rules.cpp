@@ -61,6 +61,26 @@ void check_page(const Plate& plate, ProblemList& problems) {
   }
 }
 
+void check_span(const char* table, const Pigment& pigment, const Specimen& s, ProblemList& problems) {
+  if (pigment.onset >= pigment.end)
+    problems.add(pigment.onset.given ? pigment.onset.where : pigment.end.where,
+                 fmt::format("[[{}]] onset = {}: must be less than end = {}", table, pigment.onset.value,
+                             pigment.end.value));
+  else if (pigment.onset >= s.growth.whorls)
+    problems.add(pigment.onset.where, fmt::format("[[{}]] onset = {}: lies beyond the lip; must be less than whorls = {}",
+                                                  table, pigment.onset.value, s.growth.whorls.value));
+}
+
+void check_colouring(const Specimen& s, ProblemList& problems) {
+  for (const Band& band : s.colouring.bands) check_span("band", band.pigment, s, problems);
+  for (const Flame& flame : s.colouring.flames) check_span("flame", flame.pigment, s, problems);
+  for (const Spot& spot : s.colouring.spots) check_span("spot", spot.pigment, s, problems);
+  for (const EdgePattern& pattern : s.colouring.patterns) check_span("pattern", pattern.pigment, s, problems);
+  if (s.look.callus_breadth_mm.given && !s.look.callus)
+    problems.add(s.look.callus_breadth_mm.where,
+                 "[look] callus_breadth is stated without callus: state the colour of the callus as well");
+}
+
 }  // namespace
 
 void check_rules(const Specimen& specimen, ProblemList& problems) {
@@ -68,6 +88,7 @@ void check_rules(const Specimen& specimen, ProblemList& problems) {
   check_thickness("[wall] thickness", specimen.wall.thickness_mm, specimen, problems);
   if (specimen.lip.thickness_mm.given)
     check_thickness("[lip] thickness", specimen.lip.thickness_mm, specimen, problems);
+  check_colouring(specimen, problems);
   check_page(specimen.plate, problems);
 }
 

@@ -80,6 +80,46 @@ struct Lip {
 struct Look {
   Stated<Colour> exterior, interior, section;
   Stated<double> gloss;
+  std::optional<Stated<Colour>> lip, callus;
+  Stated<double> lip_breadth_mm, callus_breadth_mm;
+};
+
+/// Colour laid down along the growing edge, from `onset` to `end` in whorls; growth is counted along growth lines.
+struct Pigment {
+  Stated<Colour> colour;
+  Stated<double> opacity, fade, onset, end;
+};
+
+struct Band {
+  Stated<double> at_deg, width_deg;
+  Pigment pigment;
+};
+
+struct Flame {
+  Stated<double> per_whorl, breadth, at_deg, width_deg, taper, sway, bends, irregularity;
+  Stated<int> seed;
+  Pigment pigment;
+};
+
+struct Spot {
+  Stated<double> per_whorl, length, at_deg, width_deg, stagger, irregularity;
+  Stated<int> seed;
+  Pigment pigment;
+};
+
+/// Computed along the growing edge by an activator and its inhibitor; rates a whorl, spreads mm^2 a whorl.
+struct EdgePattern {
+  Stated<double> activator_decay, inhibitor_decay, source, activator_base, inhibitor_base;
+  Stated<double> activator_spread, inhibitor_spread, variation, threshold;
+  Stated<int> seed;
+  Pigment pigment;
+};
+
+struct Colouring {
+  std::vector<Band> bands;
+  std::vector<Flame> flames;
+  std::vector<Spot> spots;
+  std::vector<EdgePattern> patterns;
 };
 
 struct Light {
@@ -117,6 +157,7 @@ struct Specimen {
   Wall wall;
   Lip lip;
   Look look;
+  Colouring colouring;
   Light light;
   std::vector<Lamp> lamps;
   Plate plate;

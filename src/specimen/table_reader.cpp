@@ -141,7 +141,8 @@ Stated<int> TableReader::word_index(std::string_view key) const {
 Stated<Colour> TableReader::colour(std::string_view key) const {
   const KeyRow& row = row_of(key);
   const toml::node* node = expect(row);
-  if (node == nullptr) return {colour_in(inside_quotes(row.fallback)).value(), {}, false};
+  if (node == nullptr)
+    return {row.fallback == kRequired ? Colour{} : colour_in(inside_quotes(row.fallback)).value(), {}, false};
   const auto* value = node->as_string();
   if (value == nullptr) {
     wrong_type(row, *node);
@@ -151,6 +152,11 @@ Stated<Colour> TableReader::colour(std::string_view key) const {
   if (!colour)
     complain(row, *node, "is no colour; wanted is \"#rrggbb\", two hexadecimal digits each for red, green and blue");
   return {colour.value_or(Colour{}), position_of(*node), true};
+}
+
+std::optional<Stated<Colour>> TableReader::optional_colour(std::string_view key) const {
+  if (!states(key)) return std::nullopt;
+  return colour(key);
 }
 
 Stated<double> TableReader::bar(std::string_view key) const {

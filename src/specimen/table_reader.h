@@ -39,6 +39,7 @@ class TableReader {
   /// Without control characters, not blank, of the stated length.
   Stated<std::string> text(std::string_view key) const;
   Stated<Colour> colour(std::string_view key) const;
+  std::optional<Stated<Colour>> optional_colour(std::string_view key) const;
   Stated<Stages> stages(std::string_view key) const;
   std::optional<Stated<Stages>> optional_stages(std::string_view key) const;
   /// "auto" is 0.

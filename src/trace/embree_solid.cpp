@@ -137,6 +137,7 @@ struct EmbreeSolid::Impl {
     if (length > 0.0) gradient *= (hollow ? 1.0 : -1.0) / length;
     hit.normal = Vec3f(gradient);
     hit.part = hollow || before == State::kLumen ? Part::kInterior : Part::kExterior;
+    hit.parietal = !hollow && before == State::kLumen;
     const double theta = term.part == field::Part::kWhorl || term.part == field::Part::kWhorlHollow
                              ? term.theta
                              : field.scene().law.theta_start;

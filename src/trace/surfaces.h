@@ -25,6 +25,7 @@ struct Hit {
   Vec3f position;           // on the surface
   Vec3f normal;             // unit, out of the shell, towards the air
   Part part = Part::kNothing;
+  bool parietal = false;    // outside of earlier shell or of the columella, met within a later lumen
   float turn = 0.0f;        // whorls from the pole at this place
   float around_deg = 0.0f;  // section angle: 0 away from the axis, 90 towards the apex
   float safe_offset = 0.0f; // a new ray must start this far along the normal to be clear of this surface, mm

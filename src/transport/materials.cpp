@@ -12,8 +12,9 @@ Vec3f linear(const specimen::Colour& c) { return Vec3f(shaders_cpu::srgb_decode_
 
 }  // namespace
 
-shaders_cpu::CoatedDiffuse Materials::surface(trace::Part part) const noexcept {
-  switch (part) {
+shaders_cpu::CoatedDiffuse Materials::surface(const trace::Hit& hit) const noexcept {
+  if (paint && hit.part != trace::Part::kCutFace) return {paint->albedo(hit), coat.get()};
+  switch (hit.part) {
     case trace::Part::kInterior: return {interior, coat.get()};
     case trace::Part::kOrnament: return {ornament, coat.get()};
     case trace::Part::kCutFace: return {section_display, nullptr};
@@ -27,12 +28,14 @@ std::shared_ptr<const shaders_cpu::CoatAlbedo> make_coat(specimen::Mineral miner
   return std::make_shared<const shaders_cpu::CoatAlbedo>(index, shaders_cpu::alpha_of_gloss(gloss));
 }
 
-Materials make_materials(const specimen::Look& look, specimen::Mineral mineral) {
+Materials make_materials(const field::Field& field, const specimen::Specimen& specimen) {
+  const specimen::Look& look = specimen.look;
   Materials m;
   m.exterior = m.ornament = linear(look.exterior.value);
   m.interior = linear(look.interior.value);
   m.section_display = linear(look.section.value);
-  m.coat = make_coat(mineral, look.gloss.value);
+  m.coat = make_coat(specimen.identity.mineral, look.gloss.value);
+  m.paint = std::make_shared<const Paint>(field, look, specimen.colouring);
   return m;
 }
 

@@ -5,6 +5,7 @@
 #include "shaders_cpu/surface/coated_diffuse.h"
 #include "specimen/specimen.h"
 #include "trace/surfaces.h"
+#include "transport/paint.h"
 
 #include <memory>
 
@@ -16,14 +17,16 @@ struct Materials {
   Vec3f section_display{0.5f};                           // a cut face prints as exactly this, unlit
   std::shared_ptr<const shaders_cpu::CoatAlbedo> coat;   // none: plain matt surfaces
 
-  /// The surface of a part as light sees it; a cut face counts as matt shell of its own colour.
-  shaders_cpu::CoatedDiffuse surface(trace::Part part) const noexcept;
+  std::shared_ptr<const Paint> paint;                    // none: the colours above, even
+
+  /// The surface at a hit as light sees it; a cut face counts as matt shell of its own colour.
+  shaders_cpu::CoatedDiffuse surface(const trace::Hit& hit) const noexcept;
 };
 
 /// A coat of the mineral's index with the roughness of a gloss (0 matt .. 1 polished).
 std::shared_ptr<const shaders_cpu::CoatAlbedo> make_coat(specimen::Mineral mineral, double gloss);
 
-/// Materials as a scene file states them; ornament takes the colour of the outside.
-Materials make_materials(const specimen::Look& look, specimen::Mineral mineral);
+/// Materials as a scene file states them; ornament takes the colour of the outside. The field must outlive them.
+Materials make_materials(const field::Field& field, const specimen::Specimen& specimen);
 
 }  // namespace whorl::transport

@@ -50,7 +50,7 @@ struct PathTracer::Vertex {
       : start(hit.position + hit.normal * hit.safe_offset),
         outward(hit.normal),
         basis(facing(hit.normal, to_viewer)),
-        surface(materials.surface(hit.part), basis.to_local(to_viewer)) {}
+        surface(materials.surface(hit), basis.to_local(to_viewer)) {}
 
   /// Light can only come from above both normals: the shell is opaque.
   bool open_to(const Vec3f& direction, const Vec3f& wi) const noexcept { return wi.z > 0.0f && direction.dot(outward) > 0.0f; }

@@ -126,7 +126,7 @@ class Panel {
       facts.part = static_cast<std::uint8_t>(trace::Part::kLamp);
     } else {
       facts.part = static_cast<std::uint8_t>(met.hit.part);
-      facts.albedo = job_.materials.surface(met.hit.part).albedo;
+      facts.albedo = job_.materials.surface(met.hit).albedo;
       facts.turn = met.hit.turn;
       facts.around_deg = met.hit.around_deg;
     }

@@ -14,15 +14,22 @@ using whorl::support::SceneText;
 
 namespace {
 
+std::string sound_value(const KeyRow& row) {
+  if (row.type == KeyType::kColour) return "\"#112233\"";
+  if (row.type == KeyType::kView) return "\"apical\"";
+  return row.key == "reach" ? "0.1" : "1";
+}
+
 /// A sound scene in which `row` may take any value of its range, with `value` (TOML text) in that place.
 SceneText scene_with(const KeyRow& row, const std::string& value) {
   SceneText scene;
   scene.set("growth", "whorls", "40").set("size", "shell_height", "5000");
   const std::string table(row.table), key(row.key);
   if (table == "size") scene.drop("size", "shell_height").set("wall", "thickness", "0.001");
-  if (table == "section.lobe") scene.set(table, "at", "0").set(table, "reach", "0.1");
-  if (table == "lamp") scene.set(table, "radius", "0.1");
-  if (table == "panel") scene.set(table, "view", "\"apical\"");
+  if (key == "callus_breadth") scene.set("look", "callus", "\"#000000\"");
+  if (table != "panel.view" && is_list(table))
+    for (const KeyRow& other : key_table())
+      if (other.table == table && other.fallback == kRequired) scene.set(table, std::string(other.key), sound_value(other));
   if (table == "panel.view") {
     const std::string other = key == "azimuth" ? "elevation" : "azimuth";
     return scene.set("panel", "view", fmt::format("{{ {} = {}, {} = 0 }}", key, value, other));

@@ -68,6 +68,36 @@ TEST_CASE("Every key of a scene arrives with its value", "[specimen]") {
   CHECK(same(s.look.interior, 0xAA, 0xBB, 0xCC));
   CHECK(same(s.look.section, 255, 128, 0));
   CHECK(s.look.gloss == 0.75);
+  REQUIRE((s.look.lip && s.look.callus));
+  CHECK(same(*s.look.lip, 4, 5, 6));
+  CHECK(s.look.lip_breadth_mm == 1.25);
+  CHECK(same(*s.look.callus, 7, 8, 9));
+  CHECK(s.look.callus_breadth_mm == 1.5);
+
+  const auto is_pigment = [](const Pigment& p, int red) {
+    return same(p.colour, red, 10, 11) && p.opacity == 0.625 && p.fade == 0.375 && p.onset == 1.5 && p.end == 6.5;
+  };
+  REQUIRE(s.colouring.bands.size() == 1);
+  CHECK((s.colouring.bands[0].at_deg == 45.0 && s.colouring.bands[0].width_deg == 12.5));
+  CHECK(is_pigment(s.colouring.bands[0].pigment, 0x11));
+  REQUIRE(s.colouring.flames.size() == 1);
+  const Flame& flame = s.colouring.flames[0];
+  CHECK((flame.per_whorl == 14.0 && flame.breadth == 0.4 && flame.at_deg == 10.0 && flame.width_deg == 150.0));
+  CHECK((flame.taper == 0.6 && flame.sway == 0.7 && flame.bends == 3.0 && flame.irregularity == 0.1 && flame.seed == 5));
+  CHECK(is_pigment(flame.pigment, 0x12));
+  REQUIRE(s.colouring.spots.size() == 1);
+  const Spot& spot = s.colouring.spots[0];
+  CHECK((spot.per_whorl == 20.0 && spot.length == 0.3 && spot.at_deg == -30.0 && spot.width_deg == 9.0));
+  CHECK((spot.stagger == 0.5 && spot.irregularity == 0.2 && spot.seed == 6));
+  CHECK(is_pigment(spot.pigment, 0x13));
+  REQUIRE(s.colouring.patterns.size() == 1);
+  const EdgePattern& pattern = s.colouring.patterns[0];
+  CHECK((pattern.activator_decay == 60.0 && pattern.inhibitor_decay == 40.0 && pattern.source == 50.0));
+  CHECK((pattern.activator_base == 0.01 && pattern.inhibitor_base == 2.0 && pattern.variation == 0.15));
+  CHECK((pattern.activator_spread == 0.5 && pattern.inhibitor_spread == 0.25 && pattern.threshold == 1.75));
+  CHECK(pattern.seed == 7);
+  CHECK(is_pigment(pattern.pigment, 0x14));
+
   CHECK(s.light.azimuth_deg == 90.0);
   CHECK(s.light.elevation_deg == 30.0);
   CHECK(s.light.softness_deg == 5.0);
@@ -162,6 +192,11 @@ TEST_CASE("A scene of only what is required has the defaults of the format, none
   CHECK(same(s.look.interior, 0xf1, 0xe6, 0xda));
   CHECK(same(s.look.section, 0xb0, 0x8d, 0x82));
   CHECK(s.look.gloss == 0.35);
+  CHECK_FALSE((s.look.lip || s.look.callus));
+  CHECK(s.look.lip_breadth_mm == s.lip.thickness_mm.value);
+  CHECK(s.look.callus_breadth_mm == 0.0);
+  CHECK((s.colouring.bands.empty() && s.colouring.flames.empty()));
+  CHECK((s.colouring.spots.empty() && s.colouring.patterns.empty()));
   CHECK(s.light.azimuth_deg == 135.0);
   CHECK(s.light.elevation_deg == 45.0);
   CHECK(s.light.softness_deg == 12.0);
@@ -182,6 +217,14 @@ TEST_CASE("A scene of only what is required has the defaults of the format, none
     CHECK(s.plate.panels[i].view == usual[i]);
     CHECK(s.plate.panels[i].scale == 1.0);
   }
+}
+
+TEST_CASE("The source density of a pattern follows its activator's decay where it is not stated", "[specimen]") {
+  SceneText scene = SceneText().set("pattern", "activator_decay", "30").set("pattern", "inhibitor_decay", "40");
+  scene.set("pattern", "activator_spread", "1").set("pattern", "colour", "\"#000000\"");
+  const EdgePattern pattern = parse_scene(scene.text(), "scene").colouring.patterns.at(0);
+  CHECK(pattern.source == 30.0);
+  CHECK(pattern.inhibitor_spread == 0.0);
 }
 
 TEST_CASE("A short shell begins early enough for a quarter whorl to be left", "[specimen]") {

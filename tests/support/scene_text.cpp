@@ -36,6 +36,28 @@ SceneText SceneText::with_every_key() {
       .set("look", "interior", "\"#AABBCC\"")
       .set("look", "section", "\"#ff8000\"");
   scene.set("look", "gloss", "0.75");
+  scene.set("look", "lip", "\"#040506\"")
+      .set("look", "lip_breadth", "1.25")
+      .set("look", "callus", "\"#070809\"")
+      .set("look", "callus_breadth", "1.5");
+  const auto pigment = [&scene](const char* table, const char* red) {
+    scene.set(table, "colour", fmt::format("\"#{}0a0b\"", red)).set(table, "opacity", "0.625").set(table, "fade", "0.375");
+    scene.set(table, "onset", "1.5").set(table, "end", "6.5");
+  };
+  scene.set("band", "at", "45").set("band", "width", "12.5");
+  pigment("band", "11");
+  scene.set("flame", "per_whorl", "14").set("flame", "breadth", "0.4").set("flame", "at", "10").set("flame", "width", "150");
+  scene.set("flame", "taper", "0.6").set("flame", "sway", "0.7").set("flame", "bends", "3").set("flame", "seed", "5");
+  scene.set("flame", "irregularity", "0.1");
+  pigment("flame", "12");
+  scene.set("spot", "per_whorl", "20").set("spot", "length", "0.3").set("spot", "at", "-30").set("spot", "width", "9");
+  scene.set("spot", "stagger", "0.5").set("spot", "irregularity", "0.2").set("spot", "seed", "6");
+  pigment("spot", "13");
+  scene.set("pattern", "activator_decay", "60").set("pattern", "inhibitor_decay", "40").set("pattern", "source", "50");
+  scene.set("pattern", "activator_base", "0.01").set("pattern", "inhibitor_base", "2").set("pattern", "seed", "7");
+  scene.set("pattern", "activator_spread", "0.5").set("pattern", "inhibitor_spread", "0.25");
+  scene.set("pattern", "variation", "0.15").set("pattern", "threshold", "1.75");
+  pigment("pattern", "14");
   scene.set("light", "azimuth", "90")
       .set("light", "elevation", "30")
       .set("light", "softness", "5")
