@@ -35,3 +35,6 @@ add_library(whorl_embree INTERFACE)
 target_link_libraries(whorl_embree INTERFACE embree)
 target_compile_definitions(whorl_embree INTERFACE WHORL_EMBREE_MAJOR=${WHORL_EMBREE_MAJOR})
 set(WHORL_EMBREE whorl_embree)
+
+# Least squares for fitting: 2.1 in Debian 12, 2.2 in Debian 13. It brings Eigen.
+find_package(Ceres REQUIRED)

@@ -20,19 +20,18 @@ std::string quoted_words(const KeyRow& row) {
 
 }  // namespace
 
-const KeyRow* find_key(std::string_view table, std::string_view key) {
-  const auto rows = key_table();
+const KeyRow* find_key(std::string_view table, std::string_view key, std::span<const KeyRow> rows) {
   const auto row =
       std::find_if(rows.begin(), rows.end(), [&](const KeyRow& r) { return r.table == table && r.key == key; });
   return row == rows.end() ? nullptr : &*row;
 }
 
-std::vector<std::string_view> keys_of(std::string_view table) {
+std::vector<std::string_view> keys_of(std::string_view table, std::span<const KeyRow> rows) {
   std::vector<std::string_view> keys;
   const auto add = [&](std::string_view key) {
     if (std::find(keys.begin(), keys.end(), key) == keys.end()) keys.push_back(key);
   };
-  for (const KeyRow& row : key_table()) {
+  for (const KeyRow& row : rows) {
     if (row.table == table) {
       add(row.key);
     } else if (table.empty()) {
@@ -44,16 +43,17 @@ std::vector<std::string_view> keys_of(std::string_view table) {
   return keys;
 }
 
-std::vector<std::string> tables_with(std::string_view key) {
+std::vector<std::string> tables_with(std::string_view key, std::span<const KeyRow> rows) {
   std::vector<std::string> tables;
-  for (const KeyRow& row : key_table()) {
+  for (const KeyRow& row : rows) {
     if (row.key == key) tables.push_back(written_table(row.table));
   }
   return tables;
 }
 
 bool is_list(std::string_view table) {
-  constexpr std::string_view kLists[] = {"section.lobe", "band", "flame", "spot", "pattern", "lamp", "panel"};
+  constexpr std::string_view kLists[] = {"section.lobe", "band",  "flame",       "spot",  "pattern",
+                                         "lamp",         "panel", "measurement", "series"};
   return std::find(std::begin(kLists), std::end(kLists), table) != std::end(kLists);
 }
 
@@ -99,6 +99,8 @@ std::string written_wish(const KeyRow& row) {
     case KeyType::kView:
       return fmt::format("one of the views {}, or {{ azimuth = .., elevation = .. }}", quoted_words(row));
     case KeyType::kBar: return fmt::format("\"auto\" or a length {}", written_range(row));
+    case KeyType::kNumbers: return fmt::format("a list of numbers {}", written_range(row));
+    case KeyType::kReading: return fmt::format("a number {}, or a diameter as \"85 (63)\"", written_range(row));
   }
   return {};
 }

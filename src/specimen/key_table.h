@@ -9,7 +9,7 @@
 
 namespace whorl::specimen {
 
-enum class KeyType { kNumber, kWhole, kText, kWord, kColour, kStages, kView, kBar };
+enum class KeyType { kNumber, kWhole, kText, kWord, kColour, kStages, kView, kBar, kNumbers, kReading };
 
 /// A closed or half-open range of numbers; for texts, of the number of characters.
 struct Range {
@@ -39,12 +39,14 @@ inline constexpr std::string_view kNoDefault = "none";
 
 /// All rows, tables together, in the order of the documentation.
 std::span<const KeyRow> key_table();
+/// The rows of a measurement file.
+std::span<const KeyRow> measurement_key_table();
 /// Null where there is no such key.
-const KeyRow* find_key(std::string_view table, std::string_view key);
+const KeyRow* find_key(std::string_view table, std::string_view key, std::span<const KeyRow> rows = key_table());
 /// The keys of one table; of the top of the file also the names of the tables.
-std::vector<std::string_view> keys_of(std::string_view table);
+std::vector<std::string_view> keys_of(std::string_view table, std::span<const KeyRow> rows = key_table());
 /// The tables that know a key of that name, as they are written: "[wall]", "[[lamp]]".
-std::vector<std::string> tables_with(std::string_view key);
+std::vector<std::string> tables_with(std::string_view key, std::span<const KeyRow> rows = key_table());
 
 /// "[wall]", "[[lamp]]", "the top of the file".
 std::string written_table(std::string_view table);

@@ -39,7 +39,7 @@ class OpenFile {
       const ssize_t count = read(fd_, to, most);
       if (count >= 0) return static_cast<std::size_t>(count);
       if (errno == EISDIR)
-        throw FileTrouble(fmt::format("cannot read {}: it is a folder; a scene file is wanted", name_));
+        throw FileTrouble(fmt::format("cannot read {}: it is a folder; a file is wanted", name_));
       if (errno != EINTR) throw FileTrouble(fmt::format("cannot read {}: {}", name_, reason(errno)));
     }
   }
@@ -79,18 +79,19 @@ std::string fetch_bytes(const std::string& path) {
   return bytes;
 }
 
-void check_bytes(std::string_view bytes, ProblemList& problems) {
+void check_bytes(std::string_view bytes, ProblemList& problems, const FileKind& kind) {
   if (bytes.size() > kLargestScene) {
-    problems.add({}, "the file is larger than 1 MiB; a scene file has a few thousand bytes, is this the right file?");
+    problems.add({}, fmt::format("the file is larger than 1 MiB; a {} has a few thousand bytes, is this the right file?",
+                                 kind.name));
   } else if (bytes.empty()) {
-    problems.add({}, "the file is empty; a scene begins with the line: format = 1");
+    problems.add({}, fmt::format("the file is empty; {}", kind.beginning));
   } else if (bytes.starts_with("\xFF\xFE") || bytes.starts_with("\xFE\xFF")) {
     problems.add({}, "the file is UTF-16; save it with the encoding UTF-8");
   } else if (without_byte_order_mark(bytes).find_first_not_of(" \t\r\n") == std::string_view::npos) {
-    problems.add({}, "the file is blank; a scene begins with the line: format = 1");
+    problems.add({}, fmt::format("the file is blank; {}", kind.beginning));
   } else if (const std::size_t nul = bytes.find('\0'); nul != std::string_view::npos) {
     problems.add(position_at(bytes, nul),
-                 "the file holds a NUL byte: it is binary, not a text; a scene is a text file in TOML");
+                 fmt::format("the file holds a NUL byte: it is binary, not a text; a {} is a text", kind.name));
   } else if (const auto bad = first_bad_byte(bytes)) {
     problems.add(position_at(bytes, *bad),
                  fmt::format("byte 0x{:02x} is not UTF-8; save the file with the encoding UTF-8",

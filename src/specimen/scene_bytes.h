@@ -17,7 +17,12 @@ inline constexpr std::size_t kLongestLine = 8192;  // bytes
 /// "-" is standard input. Reads one byte more than kLargestScene at most. Throws FileTrouble.
 std::string fetch_bytes(const std::string& path);
 
+/// What a file is for, in messages: "scene file", and how it begins.
+struct FileKind {
+  std::string_view name = "scene file", beginning = "a scene begins with the line: format = 1";
+};
+
 /// Complains of too large or empty files, of bytes that are no text, of overlong lines.
-void check_bytes(std::string_view bytes, ProblemList& problems);
+void check_bytes(std::string_view bytes, ProblemList& problems, const FileKind& kind = {});
 
 }  // namespace whorl::specimen

@@ -40,7 +40,7 @@ std::optional<Colour> colour_in(std::string_view text) {
 }  // namespace
 
 const KeyRow& TableReader::row_of(std::string_view key) const {
-  const KeyRow* row = find_key(name_, key);
+  const KeyRow* row = find_key(name_, key, rows_);
   if (row == nullptr) throw std::logic_error(fmt::format("no row for the key {}", written_key(name_, key)));
   return *row;
 }

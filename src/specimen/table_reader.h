@@ -19,8 +19,8 @@ class TableReader {
   /// `table` may be null: the file does not have it. `where` is then the place for what is missing. `broken` says that
   /// something else stands there, which has been complained of: what is missing is then no further fault.
   TableReader(const toml::table* table, std::string_view name, diagnostics::Position where, ProblemList& problems,
-              bool broken = false)
-      : table_(table), name_(name), where_(where), problems_(problems), broken_(broken) {}
+              bool broken = false, std::span<const KeyRow> rows = key_table())
+      : table_(table), name_(name), where_(where), problems_(problems), broken_(broken), rows_(rows) {}
 
   bool states(std::string_view key) const { return node_of(key) != nullptr; }
   /// Null where the file does not have this table.
@@ -36,6 +36,14 @@ class TableReader {
   Stated<double> number(std::string_view key) const;
   Stated<double> number(std::string_view key, double fallback) const;
   Stated<int> whole(std::string_view key) const;
+  /// NaN for those that are no number in range.
+  std::vector<Stated<double>> numbers(std::string_view key) const;
+  /// A number, or "85 (63)": the whole diameter and, in brackets, the one at which the rest was measured.
+  struct ReadingValue {
+    Stated<double> value;
+    std::optional<double> in_brackets;
+  };
+  ReadingValue reading(std::string_view key) const;
   /// Without control characters, not blank, of the stated length.
   Stated<std::string> text(std::string_view key) const;
   Stated<Colour> colour(std::string_view key) const;
@@ -70,6 +78,7 @@ class TableReader {
   diagnostics::Position where_;
   ProblemList& problems_;
   bool broken_;
+  std::span<const KeyRow> rows_;
 };
 
 }  // namespace whorl::specimen

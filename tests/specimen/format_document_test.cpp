@@ -31,6 +31,8 @@ std::string allowed(const KeyRow& row) {
     }
     case KeyType::kBar: return fmt::format("`\"auto\"`, or a number {}", written_range(row));
     case KeyType::kStages: return fmt::format("number or stages, {}", written_range(row));
+    case KeyType::kNumbers: return fmt::format("list of numbers, {}", written_range(row));
+    case KeyType::kReading: return fmt::format("number, {}, or `\"85 (63)\"`", written_range(row));
     case KeyType::kWhole: return fmt::format("whole number, {}", written_range(row));
     case KeyType::kNumber: return fmt::format("number, {}", written_range(row));
   }

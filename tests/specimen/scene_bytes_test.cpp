@@ -50,7 +50,7 @@ TEST_CASE("A file that is missing, a folder, or below a file is file trouble, an
   const std::string file = folder.with_file("file.toml", SceneText().text());
   CHECK(trouble_with(missing) == fmt::format("cannot open {}: No such file or directory", missing));
   CHECK(trouble_with(folder.path().string()) ==
-        fmt::format("cannot read {}: it is a folder; a scene file is wanted", folder.path().string()));
+        fmt::format("cannot read {}: it is a folder; a file is wanted", folder.path().string()));
   CHECK(contains(trouble_with(file + "/below.toml"), "Not a directory"));
   CHECK(trouble_with("") == "cannot open : No such file or directory");
   CHECK(read_scene_file(file).source == file);

@@ -1,0 +1,70 @@
+// SPDX-License-Identifier: Apache-2.0
+// What was measured on specimens, read from a measurement file: TOML for one specimen, CSV for many.
+#pragma once
+
+#include "specimen/definitions.h"
+#include "specimen/specimen.h"
+
+#include <optional>
+#include <string>
+#include <vector>
+
+namespace whorl::specimen {
+
+/// When in growth a measurement was taken.
+struct GrowthStage {
+  enum class Kind {
+    kLip,         // the whole shell
+    kBehindLip,   // so many whorls before the lip
+    kAtWhorl,     // so many whorls from the pole
+    kAtDiameter,  // where the sum of the radii half a turn apart was so many mm
+  };
+  Kind kind = Kind::kLip;
+  double value = 0.0;
+};
+
+/// One value as measured. Lengths in mm, angles in degrees, counts in whorls.
+struct Reading {
+  Definition definition{};
+  GrowthStage stage;
+  double value = 0.0;
+  double step = 0.0;            // of the instrument; 0 where a standard error is stated
+  double standard_error = 0.0;  // stated, or step / sqrt(12): a reading is rounded to its step
+  int series = -1;              // index of the series it belongs to
+  diagnostics::Position where;
+};
+
+/// Successive whorls measured alike. `turn` = 1 for readings a whole turn apart, 0.5 for half turns.
+struct Series {
+  Definition definition{};
+  double turn = 1.0;
+  std::optional<double> scatter;  // natural irregularity as a fraction of the value; estimated where not stated
+  std::vector<double> values;     // from the apex to the lip, mm
+  diagnostics::Position where;
+};
+
+/// Parameters that the user states rather than fits.
+struct Held {
+  std::optional<double> whorls, W, D, T, S, start, roll_deg, columella;
+};
+
+struct MeasuredSpecimen {
+  Identity identity;
+  Held held;
+  std::vector<Reading> readings;  // those of series too
+  std::vector<Series> series;
+  double tolerance = 0.02;  // misfit that still counts as fitting, as a fraction of the value
+  diagnostics::Position where;
+};
+
+struct MeasurementFile {
+  std::string source;
+  std::vector<MeasuredSpecimen> specimens;
+};
+
+/// Reads and checks a measurement file; "-" is standard input. A name that ends in .csv is a table, one in .toml is TOML;
+/// else the first line decides. Throws diagnostics::FileTrouble or, with every fault of the file, diagnostics::InvalidInput.
+MeasurementFile read_measurement_file(const std::string& path);
+MeasurementFile parse_measurements(std::string text, std::string source_name);
+
+}  // namespace whorl::specimen
