@@ -97,7 +97,7 @@ bool suture_depth(const trace::EmbreeSolid& solid, double& z) {
     ray.t_max = static_cast<float>(radius);
     trace::Hit hit;
     hit_any = solid.closest(ray, hit);
-    return hit_any && kTwoPi * static_cast<double>(hit.turn) > azimuth - kPi;
+    return hit_any && kTwoPi * static_cast<double>(solid.growth_place(hit).turn) > azimuth - kPi;
   };
   constexpr int kSteps = 2000;
   const double top = scene.bounds.min.z, bottom = scene.law.at(azimuth).depth;

@@ -120,10 +120,9 @@ struct EmbreeSolid::Impl {
   }
 
   void describe(const Cell& cell, const CellTerm& term, State before, Hit& hit) const {
-    const Vec3 p(hit.position);
     Vec3 gradient;
     if (exact || cell.kind == CellKind::kExact) {
-      gradient = field.gradient({term.part, term.theta}, p);
+      gradient = field.gradient({term.part, term.theta}, Vec3(hit.position));
     } else {
       float g[3];
       const float scale = 1.0f / cell.half;
@@ -138,13 +137,9 @@ struct EmbreeSolid::Impl {
     hit.normal = Vec3f(gradient);
     hit.part = hollow || before == State::kLumen ? Part::kInterior : Part::kExterior;
     hit.parietal = !hollow && before == State::kLumen;
-    const double theta = term.part == field::Part::kWhorl || term.part == field::Part::kWhorlHollow
-                             ? term.theta
-                             : field.scene().law.theta_start;
-    double growth, around;
-    field.coordinates(p, theta, growth, around);
-    hit.turn = static_cast<float>(growth / kTwoPi);
-    hit.around_deg = static_cast<float>(degrees(around));
+    hit.passage = term.part == field::Part::kWhorl || term.part == field::Part::kWhorlHollow
+                      ? term.theta
+                      : field.scene().law.theta_start;
     // Clear of the cell's own error, of the neighbours', and of the rounding of a place in the shell.
     hit.safe_offset = static_cast<float>(3.0 * set.tolerance_mm + 1e-6 * field.scene().height_mm);
   }
@@ -206,6 +201,12 @@ bool EmbreeSolid::occluded(const Ray& ray) const noexcept {
   embree::prepare(payload);
   embree::trace_any(impl_->scene, query, payload);
   return query.tfar < 0.0f;
+}
+
+GrowthPlace EmbreeSolid::growth_place(const Hit& hit) const noexcept {
+  double growth, around;
+  impl_->field.coordinates(Vec3(hit.position), hit.passage, growth, around);
+  return {static_cast<float>(growth / kTwoPi), static_cast<float>(degrees(around))};
 }
 
 void EmbreeSolid::crossings(const Ray& ray, State start, std::vector<Crossing>& out) const {

@@ -40,6 +40,7 @@ class EmbreeSolid final : public Surfaces {
 
   bool closest(const Ray& ray, Hit& hit) const noexcept override;
   bool occluded(const Ray& ray) const noexcept override;
+  GrowthPlace growth_place(const Hit& hit) const noexcept override;
 
   /// Every change of state along the ray, front to back. The ray starts in the state `start`.
   void crossings(const Ray& ray, field::State start, std::vector<Crossing>& out) const;

@@ -32,16 +32,12 @@ bool SectionedSolid::closest(const Ray& ray, Hit& hit) const noexcept {
   if (!enters || !solid_at(kept, kept.t_min)) return solid_.closest(kept, hit);
   const Vec3 p = Vec3(kept.origin) + static_cast<double>(kept.t_min) * Vec3(kept.direction);
   const field::Place place = solid_.field().place_at(p);
-  const double theta = place.owner.part == field::Part::kWhorl ? place.owner.theta : solid_.field().scene().law.theta_start;
-  double growth, around;
-  solid_.field().coordinates(p, theta, growth, around);
   hit = {};
   hit.t = kept.t_min;
   hit.position = Vec3f(p);
   hit.normal = Vec3f(normal_);
   hit.part = Part::kCutFace;
-  hit.turn = static_cast<float>(growth / kTwoPi);
-  hit.around_deg = static_cast<float>(degrees(around));
+  hit.passage = place.owner.part == field::Part::kWhorl ? place.owner.theta : solid_.field().scene().law.theta_start;
   hit.safe_offset = static_cast<float>(1e-6 * solid_.field().scene().height_mm);
   return true;
 }

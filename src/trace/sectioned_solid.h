@@ -14,6 +14,7 @@ class SectionedSolid final : public Surfaces {
 
   bool closest(const Ray& ray, Hit& hit) const noexcept override;
   bool occluded(const Ray& ray) const noexcept override;
+  GrowthPlace growth_place(const Hit& hit) const noexcept override { return solid_.growth_place(hit); }
 
  private:
   // Narrows the ray to the half that is kept; false where it misses it. `enters` where it comes in through the plane.

@@ -25,10 +25,14 @@ struct Hit {
   Vec3f position;           // on the surface
   Vec3f normal;             // unit, out of the shell, towards the air
   Part part = Part::kNothing;
-  bool parietal = false;    // outside of earlier shell or of the columella, met within a later lumen
-  float turn = 0.0f;        // whorls from the pole at this place
+  bool parietal = false;    // outside of earlier shell or of the columella, met within a later lumen  float safe_offset = 0.0f; // a new ray must start this far along the normal to be clear of this surface, mm
+  double passage = 0.0;     // growth angle, within half a turn, of the tube's passage whose surface this is
+};
+
+/// A place in the coordinates of growth.
+struct GrowthPlace {
+  float turn = 0.0f;        // whorls from the pole
   float around_deg = 0.0f;  // section angle: 0 away from the axis, 90 towards the apex
-  float safe_offset = 0.0f; // a new ray must start this far along the normal to be clear of this surface, mm
 };
 
 /// An opaque solid. Every function may be called from any thread at once.
@@ -40,6 +44,8 @@ class Surfaces {
   virtual bool closest(const Ray& ray, Hit& hit) const noexcept = 0;
   /// Whether anything is hit in [t_min, t_max].
   virtual bool occluded(const Ray& ray) const noexcept = 0;
+  /// Where in growth a hit of this solid lies. Apart from `closest`, since most rays never ask and it costs as much.
+  virtual GrowthPlace growth_place(const Hit& hit) const noexcept = 0;
 };
 
 }  // namespace whorl::trace

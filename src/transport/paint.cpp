@@ -77,6 +77,11 @@ Paint::Paint(const field::Field& field, const specimen::Look& look, const specim
   }
 }
 
+double Paint::growth_angle(const trace::Hit& hit) const noexcept {
+  const auto azimuth = static_cast<double>(std::atan2(hit.position.y, hit.position.x));
+  return hit.passage + std::remainder(azimuth - hit.passage, kTwoPi);
+}
+
 double Paint::behind_rim(const Vec3& p, double theta) const noexcept {
   const scene::Scene& s = field_.scene();
   const double rho = std::hypot(p.x, p.y);
@@ -89,13 +94,15 @@ Vec3f Paint::outside(const trace::Hit& hit) const noexcept {
   if (layers_.empty()) return colour;
   const scene::Scene& s = field_.scene();
   const Vec3 p(hit.position);
-  const double theta = kTwoPi * static_cast<double>(hit.turn);
+  double theta, around;
+  field_.coordinates(p, hit.passage, theta, around);
+  const auto around_deg = static_cast<float>(degrees(around));
   const double lead = growth::front_lead(s.front.tan_inclination, s.law.at(theta).depth, {std::hypot(p.x, p.y), p.z});
   const double growth = (theta - lead) / kTwoPi;
   const auto turn = static_cast<float>(growth);
   for (const Layer& layer : layers_) {
     if (turn < layer.onset || turn > layer.end + kOnsetFade) continue;
-    float share = layer.opacity * std::visit(Cover{growth, hit.around_deg, layer.threshold, layer.fade}, layer.shape);
+    float share = layer.opacity * std::visit(Cover{growth, around_deg, layer.threshold, layer.fade}, layer.shape);
     if (layer.onset > 0.0f) share *= std::min(1.0f, (turn - layer.onset) / kOnsetFade);
     share *= fall(turn, layer.end, layer.end + kOnsetFade);
     colour = mixed(colour, layer.colour, share);
@@ -110,7 +117,7 @@ float Paint::callus_share(const trace::Hit& hit) const noexcept {
   const scene::Scene& s = field_.scene();
   const Vec3 p(hit.position);
   const double last = s.law.theta_lip + std::remainder(std::atan2(p.y, p.x) - s.law.theta_lip, kTwoPi);
-  if (kTwoPi * static_cast<double>(hit.turn) > last - 0.5 * kTwoPi) return 0.0f;
+  if (growth_angle(hit) > last - 0.5 * kTwoPi) return 0.0f;
   const double along = behind_rim(p, last), across = std::min(0.0, field_.tube(p, last));
   return fall(std::hypot(along, across), static_cast<double>(kWhole) * callus_breadth_, callus_breadth_);
 }
@@ -121,7 +128,7 @@ Vec3f Paint::albedo(const trace::Hit& hit) const noexcept {
     const float share = callus_share(hit);
     if (share > 0.0f) return mixed(inside ? interior_ : outside(hit), *callus_, share);
   }
-  const double theta = kTwoPi * static_cast<double>(hit.turn);
+  const double theta = growth_angle(hit);
   // Only the last half whorl can reach the rim.
   const bool near_rim = !hit.parietal && theta > field_.scene().law.theta_lip - kPi;
   const double behind = near_rim ? std::max(0.0, behind_rim(Vec3(hit.position), theta)) : lip_breadth_;

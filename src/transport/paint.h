@@ -37,6 +37,7 @@ class Paint {
     float opacity, onset, end;       // in whorls
     float threshold = 1.0f, fade = 0.0f;  // of a computed pattern
   };
+  double growth_angle(const trace::Hit& hit) const noexcept;
   Vec3f outside(const trace::Hit& hit) const noexcept;
 
   const field::Field& field_;

@@ -127,8 +127,9 @@ class Panel {
     } else {
       facts.part = static_cast<std::uint8_t>(met.hit.part);
       facts.albedo = job_.materials.surface(met.hit).albedo;
-      facts.turn = met.hit.turn;
-      facts.around_deg = met.hit.around_deg;
+      const trace::GrowthPlace grown = job_.shell->growth_place(met.hit);
+      facts.turn = grown.turn;
+      facts.around_deg = grown.around_deg;
     }
     facts.normal = Vec3f(job_.camera.page.to_frame(Vec3(normal)));
     return facts;

@@ -30,8 +30,6 @@ class Ball final : public trace::Surfaces {
     hit.normal = (ray.origin + ray.direction * t - centre_).normalized();
     hit.position = centre_ + hit.normal * radius_;
     hit.part = part_;
-    hit.turn = 1.5f;
-    hit.around_deg = 30.0f;
     hit.safe_offset = kSafeOffset;
     return true;
   }
@@ -39,6 +37,7 @@ class Ball final : public trace::Surfaces {
     trace::Hit unused;
     return closest(ray, unused);
   }
+  trace::GrowthPlace growth_place(const trace::Hit&) const noexcept override { return {1.5f, 30.0f}; }
 
  private:
   Vec3f centre_;
@@ -76,6 +75,7 @@ class OpenSphere final : public trace::Surfaces {
     trace::Hit unused;
     return closest(ray, unused);
   }
+  trace::GrowthPlace growth_place(const trace::Hit&) const noexcept override { return {}; }
 
  private:
   float radius_, rim_z_;
@@ -105,6 +105,7 @@ class Card final : public trace::Surfaces {
     trace::Hit unused;
     return closest(ray, unused);
   }
+  trace::GrowthPlace growth_place(const trace::Hit&) const noexcept override { return {}; }
 
  private:
   Vec3f centre_, normal_;
@@ -117,6 +118,7 @@ class Void final : public trace::Surfaces {
  public:
   bool closest(const trace::Ray&, trace::Hit&) const noexcept override { return false; }
   bool occluded(const trace::Ray&) const noexcept override { return false; }
+  trace::GrowthPlace growth_place(const trace::Hit&) const noexcept override { return {}; }
 };
 
 }  // namespace whorl::test

@@ -190,7 +190,7 @@ TEST_CASE("Hits lie on the true surface to the tolerance, their normals point in
       const double band = 2.0 * tolerance * h + 2e-7 * h;
       off += shell.at(p + band * n) == State::kSolid || shell.at(p - band * n) != State::kSolid;
       normals_off += std::abs(n.length() - 1.0) > 1e-5 || n.dot(Vec3(ray.direction)) > 0.05;
-      const double turn = static_cast<double>(hit.turn);
+      const double turn = static_cast<double>(solid.growth_place(hit).turn);
       CHECK((turn > 0.0 && turn < shell.plan.whorls + 0.6));
       CHECK(hit.safe_offset >= static_cast<float>(2.0 * tolerance * h));
     }

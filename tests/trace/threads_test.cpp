@@ -15,8 +15,8 @@ using trace::Hit;
 namespace {
 
 bool same(const Hit& a, const Hit& b) {
-  return a.t == b.t && a.position == b.position && a.normal == b.normal && a.part == b.part && a.turn == b.turn &&
-         a.around_deg == b.around_deg && a.safe_offset == b.safe_offset;
+  return a.t == b.t && a.position == b.position && a.normal == b.normal && a.part == b.part && a.passage == b.passage &&
+         a.safe_offset == b.safe_offset;
 }
 
 bool same(const trace::Cell& a, const trace::Cell& b) {

@@ -34,8 +34,7 @@ struct Shell {
     trace::Hit hit;
     hit.position = Vec3f(Vec3(p.rho * std::cos(theta), p.rho * std::sin(theta), p.z));
     hit.part = trace::Part::kExterior;
-    hit.turn = static_cast<float>(theta / kTwoPi);
-    hit.around_deg = static_cast<float>(degrees(psi));
+    hit.passage = theta;
     return hit;
   }
 };
@@ -55,7 +54,7 @@ TEST_CASE("Without a stated lip the outside and the inside meet half and half at
   trace::Hit hit = shell.outside(lip, 0.0);
   const double rho = std::hypot(hit.position.x, hit.position.y);
   hit = shell.outside(lip + shell.scene.front.rim_radius / rho, 0.0);
-  CHECK(shell.paint.behind_rim(Vec3(hit.position), kTwoPi * static_cast<double>(hit.turn)) == Approx(0.0).margin(2e-3));
+  CHECK(shell.paint.behind_rim(Vec3(hit.position), hit.passage) == Approx(0.0).margin(2e-3));
   const Vec3f out = shell.paint.albedo(hit);
   hit.part = trace::Part::kInterior;
   const Vec3f in = shell.paint.albedo(hit);

@@ -135,6 +135,7 @@ class FaultyBall final : public trace::Surfaces {
     return true;
   }
   bool occluded(const trace::Ray& ray) const noexcept override { return ball_.occluded(ray); }
+  trace::GrowthPlace growth_place(const trace::Hit& hit) const noexcept override { return ball_.growth_place(hit); }
 
  private:
   test::Ball ball_{Vec3f(0.0f), 1.0f};
