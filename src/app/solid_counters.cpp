@@ -7,9 +7,9 @@ namespace whorl::app {
 nlohmann::ordered_json solid_counters(const trace::EmbreeSolid& solid) {
   const trace::CellSet& set = solid.cells();
   const scene::Scene& scene = solid.field().scene();
-  return {{"cells", set.cells.size()},
-          {"cell_functions", set.terms.size()},
-          {"exact_cells", set.exact_cells},
+  return {{"cells", set.size()},
+          {"cell_functions", set.functions()},
+          {"exact_cells", set.exact_cells()},
           {"cell_bytes", set.bytes()},
           {"cell_tolerance_mm", set.tolerance_mm},
           {"primitives", 2 * scene.stations.size() + scene.ellipsoids.size()}};

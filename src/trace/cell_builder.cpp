@@ -32,11 +32,17 @@ struct Owner {
   Term opening_term() const { return {Part::kChamberOpening, opening_theta}; }
 };
 
-constexpr std::size_t kMostTerms = 24;
+constexpr std::size_t kMostFunctions = 24;
 constexpr int kSpreadDepth = 4;        // the octree's upper levels, built by one thread, hand the rest to all
 constexpr double kFitBelow = 0.6;      // of the smallest half-breadth at hand: above this cells are split unfitted
 constexpr double kRelative = 0.05;     // error allowed as a part of the function's own value
 constexpr int kFinest = 13;            // levels below the root: a cell of 1/8192 of the shell
+
+// A function over a box, as a cubic (none where the cell will be marched exactly).
+struct Fitted {
+  Cubic cubic;
+  FunctionFacts facts;
+};
 
 struct Job {
   Box3 box;
@@ -65,9 +71,9 @@ class Builder {
 
  private:
   bool fit(const Box3& box, std::vector<Owner>& owners);
-  void emit(const Box3& box, const std::vector<Owner>& owners, const std::vector<CellTerm>& terms, bool exact);
-  bool verified(const Box3& box, const Term& term, const float* cubic) const;
-  bool fit_term_values(const Box3& box, const Term& term, CellTerm& cell_term, Sign& sign) const;
+  void emit(const Box3& box, const std::vector<Owner>& owners, const std::vector<Fitted>& fitted, bool exact);
+  bool verified(const Box3& box, const Term& term, const Cubic& cubic) const;
+  bool fit_term_values(const Box3& box, const Term& term, Fitted& out, Sign& sign) const;
 
   const field::Field& field_;
   double tolerance_, smallest_half_;
@@ -150,7 +156,7 @@ std::vector<Owner> Builder::for_child(const Box3& parent, const Box3& child, std
 
 // Whether the cubic is true where it matters: on its own zero set, found along the edges, the middle lines of the faces
 // and those of the cell (away from the fitted points, whose residuals flatter), and not far off at the corners.
-bool Builder::verified(const Box3& box, const Term& term, const float* cubic) const {
+bool Builder::verified(const Box3& box, const Term& term, const Cubic& cubic) const {
   const Vec3 c = 0.5 * (box.min + box.max);
   const double half = 0.5 * (box.max.x - box.min.x);
   for (int corner = 0; corner < 8; ++corner) {
@@ -177,7 +183,7 @@ bool Builder::verified(const Box3& box, const Term& term, const float* cubic) co
 }
 
 // Fits one function; false where no cubic is near enough.
-bool Builder::fit_term_values(const Box3& box, const Term& term, CellTerm& out, Sign& sign) const {
+bool Builder::fit_term_values(const Box3& box, const Term& term, Fitted& out, Sign& sign) const {
   const Vec3 c = 0.5 * (box.min + box.max);
   const double half = 0.5 * (box.max.x - box.min.x);
   std::array<double, kFitNodes * kFitNodes * kFitNodes> values;
@@ -193,61 +199,60 @@ bool Builder::fit_term_values(const Box3& box, const Term& term, CellTerm& out, 
       }
   const CubicFit fit = fit_cubic(values);
   if (fit.left_out > 3.0 * tolerance_ + kRelative * least) return false;
-  std::copy(fit.cubic.begin(), fit.cubic.end(), out.cubic);
+  out.cubic = fit.cubic;
   if (!verified(box, term, out.cubic)) return false;
   const double swing = fit.swing + 2.0 * tolerance_;
   if (fit.middle > swing + kRelative * std::abs(fit.middle)) sign = Sign::kPositive;
   if (-fit.middle > swing + kRelative * std::abs(fit.middle)) sign = Sign::kNegative;
-  out.part = term.part;
-  out.theta = term.theta;
-  out.steepness = static_cast<float>(field_.steepness(term, box));
+  out.facts = {term.theta, static_cast<float>(field_.steepness(term, box)), term.part};
   return true;
 }
 
-void Builder::emit(const Box3& box, const std::vector<Owner>& owners, const std::vector<CellTerm>& terms, bool exact) {
+void Builder::emit(const Box3& box, const std::vector<Owner>& owners, const std::vector<Fitted>& fitted, bool exact) {
   Cell cell{};
   for (int i = 0; i < 3; ++i) cell.centre[i] = static_cast<float>(0.5 * (box.min[i] + box.max[i]));
   cell.half = static_cast<float>(0.5 * (box.max.x - box.min.x));
-  cell.first_term = static_cast<std::uint32_t>(out_.terms.size());
-  cell.first_owner = static_cast<std::uint32_t>(out_.owners.size());
+  std::vector<Cubic> cubics;
+  std::vector<FunctionFacts> facts;
   const auto index = [&](Sign sign, const Term& term) -> std::int8_t {
     if (sign == Sign::kPositive) return CellOwner::kAlways;
     if (sign == Sign::kNegative) return CellOwner::kNever;
-    for (const CellTerm& t : terms)
-      if (t.part == term.part && t.theta == term.theta) {
-        out_.terms.push_back(t);
-        return static_cast<std::int8_t>(out_.terms.size() - 1 - cell.first_term);
+    for (const Fitted& f : fitted)
+      if (f.facts.part == term.part && f.facts.theta == term.theta) {
+        cubics.push_back(f.cubic);
+        facts.push_back(f.facts);
+        return static_cast<std::int8_t>(cubics.size() - 1);
       }
     return CellOwner::kNever;
   };
+  std::vector<CellOwner> program;
   for (const Owner& o : owners)
-    out_.owners.push_back({index(o.outer, o.outer_term()), index(o.hollow, o.hollow_term()),
-                           index(o.opening, o.opening_term())});
-  cell.term_count = static_cast<std::uint8_t>(out_.terms.size() - cell.first_term);
-  cell.owner_count = static_cast<std::uint8_t>(owners.size());
-  const CellOwner* program = out_.owners.data() + cell.first_owner;
+    program.push_back({index(o.outer, o.outer_term()), index(o.hollow, o.hollow_term()), index(o.opening, o.opening_term())});
+  const auto owner_count = static_cast<int>(program.size());
   cell.kind = CellKind::kByGrowthOrder;
-  if (cell.term_count == 1) {
-    const bool if_positive = decide(program, cell.owner_count, 1u) == field::State::kSolid;
-    const bool if_negative = decide(program, cell.owner_count, 0u) == field::State::kSolid;
-    if (if_positive && !if_negative) cell.kind = CellKind::kSolidWherePositive;
-    if (!if_positive && if_negative) cell.kind = CellKind::kSolidWhereNegative;
+  if (cubics.size() == 1) {
+    const field::State if_positive = decide(program.data(), owner_count, 1u), if_negative = decide(program.data(), owner_count, 0u);
+    if (if_positive == field::State::kSolid && if_negative != field::State::kSolid) {
+      cell.kind = CellKind::kSolidWherePositive;
+      cell.air = if_negative;
+    }
+    if (if_positive != field::State::kSolid && if_negative == field::State::kSolid) {
+      cell.kind = CellKind::kSolidWhereNegative;
+      cell.air = if_positive;
+    }
   }
-  if (exact) {
-    cell.kind = CellKind::kExact;
-    ++out_.exact_cells;
-  }
-  out_.cells.push_back(cell);
+  if (exact) cell.kind = CellKind::kExact;
+  out_.add(cell, cubics, program, facts);
 }
 
 // Fits every open function; true when the cell is settled (kept, or found to hold no boundary after all).
 bool Builder::fit(const Box3& box, std::vector<Owner>& owners) {
-  std::vector<CellTerm> terms;
+  std::vector<Fitted> all_fitted;
   const auto settle = [&](Sign& sign, const Term& term) {
     if (sign != Sign::kUnknown) return true;
-    CellTerm fitted{};
+    Fitted fitted{};
     if (!fit_term_values(box, term, fitted, sign)) return false;
-    if (sign == Sign::kUnknown) terms.push_back(fitted);
+    if (sign == Sign::kUnknown) all_fitted.push_back(fitted);
     return true;
   };
   for (Owner& o : owners) {
@@ -256,8 +261,8 @@ bool Builder::fit(const Box3& box, std::vector<Owner>& owners) {
     if (!settle(o.hollow, o.hollow_term()) || !settle(o.opening, o.opening_term())) return false;
   }
   if (!simplify(owners)) return true;
-  if (terms.size() > kMostTerms) return false;
-  emit(box, owners, terms, false);
+  if (all_fitted.size() > kMostFunctions) return false;
+  emit(box, owners, all_fitted, false);
   return true;
 }
 
@@ -278,21 +283,17 @@ void Builder::build(const Box3& box, const std::vector<Owner>& parent_owners) {
     if (fit(box, fitted)) return;
   }
   if (half <= smallest_half_) {
-    std::vector<CellTerm> terms;
+    std::vector<Fitted> unfitted;
     const auto take = [&](Sign sign, const Term& term) {
       if (sign != Sign::kUnknown) return;
-      CellTerm t{};
-      t.part = term.part;
-      t.theta = term.theta;
-      t.steepness = static_cast<float>(field_.steepness(term, box));
-      terms.push_back(t);
+      unfitted.push_back({{}, {term.theta, static_cast<float>(field_.steepness(term, box)), term.part}});
     };
     for (const Owner& o : owners) {
       take(o.outer, o.outer_term());
       take(o.hollow, o.hollow_term());
       take(o.opening, o.opening_term());
     }
-    emit(box, owners, terms, true);
+    emit(box, owners, unfitted, true);
     return;
   }
   const Vec3 c = 0.5 * (box.min + box.max);
@@ -314,8 +315,8 @@ CellSet build_cells(const field::Field& field, double tolerance_mm) {
 
   CellSet all;
   all.tolerance_mm = tolerance_mm;
-  all.smallest_half = half / std::exp2(kFinest);
-  const Builder upper(field, tolerance_mm, all.smallest_half, all);
+  const double smallest_half = half / std::exp2(kFinest);
+  const Builder upper(field, tolerance_mm, smallest_half, all);
   std::vector<Job> jobs{{root, upper.all_owners(root)}};
   for (int depth = 0; depth < kSpreadDepth; ++depth) {
     std::vector<Job> next;
@@ -333,17 +334,10 @@ CellSet build_cells(const field::Field& field, double tolerance_mm) {
 
   std::vector<CellSet> parts(jobs.size());
   parallel_for(jobs.size(), 1, [&](std::size_t i) {
-    Builder(field, tolerance_mm, all.smallest_half, parts[i]).build(jobs[i].box, jobs[i].owners);
+    Builder(field, tolerance_mm, smallest_half, parts[i]).build(jobs[i].box, jobs[i].owners);
   });
   for (CellSet& part : parts) {
-    for (Cell cell : part.cells) {
-      cell.first_term += static_cast<std::uint32_t>(all.terms.size());
-      cell.first_owner += static_cast<std::uint32_t>(all.owners.size());
-      all.cells.push_back(cell);
-    }
-    all.terms.insert(all.terms.end(), part.terms.begin(), part.terms.end());
-    all.owners.insert(all.owners.end(), part.owners.begin(), part.owners.end());
-    all.exact_cells += part.exact_cells;
+    all.append(part);
     part = {};
   }
   return all;

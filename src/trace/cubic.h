@@ -19,7 +19,7 @@ using Cubic = std::array<float, kCubicTerms>;
 
 /// T is float or Float4.
 template <class T>
-inline T evaluate(const float* c, T x, T y, T z) {
+inline T evaluate(const Cubic& c, T x, T y, T z) {
   const T x0 = c[0] + x * (c[1] + x * (c[2] + x * c[3]));
   const T y1 = c[4] + x * (c[5] + x * c[6]);
   const T y2 = c[7] + x * c[8] + y * c[9];
@@ -29,7 +29,7 @@ inline T evaluate(const float* c, T x, T y, T z) {
 }
 
 /// Gradient by the local coordinates.
-inline void gradient(const float* c, float x, float y, float z, float g[3]) {
+inline void gradient(const Cubic& c, float x, float y, float z, float g[3]) {
   g[0] = c[1] + x * (2.0f * c[2] + 3.0f * x * c[3]) + y * (c[5] + 2.0f * x * c[6] + y * c[8]) +
          z * (c[11] + 2.0f * x * c[12] + y * c[14] + z * c[17]);
   g[1] = c[4] + x * (c[5] + x * c[6]) + y * (2.0f * (c[7] + x * c[8]) + 3.0f * y * c[9]) +

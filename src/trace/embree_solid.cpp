@@ -21,12 +21,10 @@ double seconds_since(std::chrono::steady_clock::time_point start) {
 }
 
 struct Query : embree::Payload {
+  explicit Query(const Ray& r) : ray(r) { embree::prepare(*this); }
+  CellRay ray;
   std::vector<std::uint32_t>* visited = nullptr;  // gather cells instead of looking for a hit
 };
-
-Ray ray_of(const RTCRay& r) {
-  return {{r.org_x, r.org_y, r.org_z}, {r.dir_x, r.dir_y, r.dir_z}, r.tnear, r.tfar};
-}
 
 void fill(RTCRay& r, const Ray& ray) {
   r.org_x = ray.origin.x;
@@ -65,15 +63,15 @@ struct EmbreeSolid::Impl {
     return true;
   }
 
-  bool march(const Cell& cell, const Ray& ray, CellHit& hit) const {
+  bool march(const Cell& cell, const CellRay& ray, float t_min, float t_max, CellHit& hit) const {
     CellSegment segment;
-    if (!clip(cell, ray, segment)) return false;
+    if (!clip(cell, ray, t_min, t_max, segment)) return false;
     if (exact || cell.kind == CellKind::kExact) return first_solid_exact(field, set, cell, ray, segment, hit);
-    return first_solid(set, cell, ray, segment, hit);
+    return first_solid(cell, ray, segment, hit);
   }
 
   static void bounds(const RTCBoundsFunctionArguments* a) {
-    const Cell& cell = static_cast<const Impl*>(a->geometryUserPtr)->set.cells[a->primID];
+    const Cell& cell = static_cast<const Impl*>(a->geometryUserPtr)->set.cell(a->primID);
     // A little more than the clip keeps, so that the hierarchy never culls what it would.
     const auto half = [&](int i) { return cell.half * 1.00001f + 2.0f * padding(cell, i); };
     RTCBounds* b = a->bounds_o;
@@ -89,15 +87,16 @@ struct EmbreeSolid::Impl {
     if (!a->valid[0]) return;
     const Impl& self = *static_cast<const Impl*>(a->geometryUserPtr);
     auto* rayhit = reinterpret_cast<RTCRayHit*>(a->rayhit);
+    const auto* query = reinterpret_cast<const Query*>(a->context);
     CellHit hit;
-    const bool found = self.march(self.set.cells[a->primID], ray_of(rayhit->ray), hit);
+    const bool found = self.march(self.set.cell(a->primID), query->ray, rayhit->ray.tnear, rayhit->ray.tfar, hit);
     embree::report(a, found);
     if (!found) return;
     rayhit->ray.tfar = hit.t;
     rayhit->hit.geomID = a->geomID;
     rayhit->hit.primID = a->primID;
     rayhit->hit.instID[0] = a->context->instID[0];
-    rayhit->hit.u = static_cast<float>(hit.term);  // which surface, and which air it was met from
+    rayhit->hit.u = static_cast<float>(hit.function);  // which surface, and which air it was met from
     rayhit->hit.v = static_cast<float>(static_cast<int>(hit.before));
     rayhit->hit.Ng_x = rayhit->hit.Ng_y = 0.0f;
     rayhit->hit.Ng_z = 1.0f;
@@ -113,32 +112,33 @@ struct EmbreeSolid::Impl {
       query->visited->push_back(a->primID);
     } else {
       CellHit hit;
-      found = self.march(self.set.cells[a->primID], ray_of(*ray), hit);
+      found = self.march(self.set.cell(a->primID), query->ray, ray->tnear, ray->tfar, hit);
     }
     embree::report(a, found);
     if (found) ray->tfar = -std::numeric_limits<float>::infinity();
   }
 
-  void describe(const Cell& cell, const CellTerm& term, State before, Hit& hit) const {
+  void describe(const Cell& cell, std::uint32_t function, State before, Hit& hit) const {
+    const FunctionFacts& facts = set.facts(cell)[function];
     Vec3 gradient;
     if (exact || cell.kind == CellKind::kExact) {
-      gradient = field.gradient({term.part, term.theta}, Vec3(hit.position));
+      gradient = field.gradient(facts.term(), Vec3(hit.position));
     } else {
       float g[3];
       const float scale = 1.0f / cell.half;
-      trace::gradient(term.cubic, (hit.position.x - cell.centre[0]) * scale, (hit.position.y - cell.centre[1]) * scale,
+      trace::gradient(cell.cubics()[function], (hit.position.x - cell.centre[0]) * scale, (hit.position.y - cell.centre[1]) * scale,
                       (hit.position.z - cell.centre[2]) * scale, g);
       gradient = {g[0], g[1], g[2]};
     }
-    const bool hollow = term.part == field::Part::kWhorlHollow || term.part == field::Part::kChamberHollow ||
-                        term.part == field::Part::kChamberOpening;
+    const bool hollow = facts.part == field::Part::kWhorlHollow || facts.part == field::Part::kChamberHollow ||
+                        facts.part == field::Part::kChamberOpening;
     const double length = gradient.length();
     if (length > 0.0) gradient *= (hollow ? 1.0 : -1.0) / length;
     hit.normal = Vec3f(gradient);
     hit.part = hollow || before == State::kLumen ? Part::kInterior : Part::kExterior;
     hit.parietal = !hollow && before == State::kLumen;
-    hit.passage = term.part == field::Part::kWhorl || term.part == field::Part::kWhorlHollow
-                      ? term.theta
+    hit.passage = facts.part == field::Part::kWhorl || facts.part == field::Part::kWhorlHollow
+                      ? facts.theta
                       : field.scene().law.theta_start;
     // Clear of the cell's own error, of the neighbours', and of the rounding of a place in the shell.
     hit.safe_offset = static_cast<float>(3.0 * set.tolerance_mm + 1e-6 * field.scene().height_mm);
@@ -161,7 +161,7 @@ EmbreeSolid::EmbreeSolid(const field::Field& field, const SolidOptions& options)
   self.scene = rtcNewScene(self.device);
   rtcSetSceneFlags(self.scene, RTC_SCENE_FLAG_ROBUST);  // conservative node tests: neighbouring cells share faces
   RTCGeometry geometry = rtcNewGeometry(self.device, RTC_GEOMETRY_TYPE_USER);
-  rtcSetGeometryUserPrimitiveCount(geometry, static_cast<unsigned>(self.set.cells.size()));
+  rtcSetGeometryUserPrimitiveCount(geometry, static_cast<unsigned>(self.set.size()));
   rtcSetGeometryUserData(geometry, impl_.get());
   rtcSetGeometryBoundsFunction(geometry, &Impl::bounds, nullptr);
   rtcSetGeometryIntersectFunction(geometry, &Impl::intersect);
@@ -182,23 +182,20 @@ bool EmbreeSolid::closest(const Ray& ray, Hit& hit) const noexcept {
   fill(query.ray, ray);
   query.hit.geomID = RTC_INVALID_GEOMETRY_ID;
   query.hit.instID[0] = RTC_INVALID_GEOMETRY_ID;
-  Query payload;
-  embree::prepare(payload);
+  Query payload(ray);
   embree::trace_closest(impl_->scene, query, payload);
   if (query.hit.geomID == RTC_INVALID_GEOMETRY_ID) return false;
-  const Cell& cell = impl_->set.cells[query.hit.primID];
-  const CellTerm& term = impl_->set.terms[cell.first_term + static_cast<std::uint32_t>(query.hit.u)];
+  const Cell& cell = impl_->set.cell(query.hit.primID);
   hit.t = query.ray.tfar;
   hit.position = ray.origin + hit.t * ray.direction;
-  impl_->describe(cell, term, static_cast<State>(static_cast<int>(query.hit.v)), hit);
+  impl_->describe(cell, static_cast<std::uint32_t>(query.hit.u), static_cast<State>(static_cast<int>(query.hit.v)), hit);
   return true;
 }
 
 bool EmbreeSolid::occluded(const Ray& ray) const noexcept {
   RTCRay query;
   fill(query, ray);
-  Query payload;
-  embree::prepare(payload);
+  Query payload(ray);
   embree::trace_any(impl_->scene, query, payload);
   return query.tfar < 0.0f;
 }
@@ -215,8 +212,7 @@ void EmbreeSolid::crossings(const Ray& ray, State start, std::vector<Crossing>& 
   visited.clear();
   RTCRay query;
   fill(query, ray);
-  Query payload;
-  embree::prepare(payload);
+  Query payload(ray);
   payload.visited = &visited;
   embree::trace_any(impl_->scene, query, payload);
 
@@ -228,7 +224,7 @@ void EmbreeSolid::crossings(const Ray& ray, State start, std::vector<Crossing>& 
   legs.clear();
   for (const std::uint32_t id : visited) {
     CellSegment segment;
-    if (clip(impl_->set.cells[id], ray, segment) && segment.t1 > segment.t0) legs.push_back({segment, id});
+    if (clip(impl_->set.cell(id), payload.ray, ray.t_min, ray.t_max, segment) && segment.t1 > segment.t0) legs.push_back({segment, id});
   }
   std::sort(legs.begin(), legs.end(), [](const Leg& a, const Leg& b) {
     return a.segment.t0 != b.segment.t0 ? a.segment.t0 < b.segment.t0 : a.cell < b.cell;
@@ -238,20 +234,20 @@ void EmbreeSolid::crossings(const Ray& ray, State start, std::vector<Crossing>& 
   Change change[kCapacity];
   float reached = ray.t_min;
   for (Leg& leg : legs) {
-    const Cell& cell = impl_->set.cells[leg.cell];
+    const Cell& cell = impl_->set.cell(leg.cell);
     leg.segment.t0 = std::max(leg.segment.t0, reached);  // clips overlap by their rounding
     if (leg.segment.t1 <= leg.segment.t0) continue;
     reached = leg.segment.t1;
     State entry;
     const int count = impl_->exact || cell.kind == CellKind::kExact
-                          ? changes_exact(impl_->field, impl_->set, cell, ray, leg.segment, entry, change, kCapacity)
-                          : changes(impl_->set, cell, ray, leg.segment, entry, change, kCapacity);
-    const CellTerm* terms = impl_->set.terms.data() + cell.first_term;
-    if (entry != state) out.push_back({leg.segment.t0, state, entry, terms[0].part, terms[0].theta});
+                          ? changes_exact(impl_->field, impl_->set, cell, payload.ray, leg.segment, entry, change, kCapacity)
+                          : changes(cell, payload.ray, leg.segment, entry, change, kCapacity);
+    const FunctionFacts* functions = impl_->set.facts(cell);
+    if (entry != state) out.push_back({leg.segment.t0, state, entry, functions[0].part, functions[0].theta});
     state = entry;
     for (int i = 0; i < count; ++i) {
-      const CellTerm& term = terms[change[i].term];
-      out.push_back({change[i].t, state, change[i].after, term.part, term.theta});
+      const FunctionFacts& met = functions[change[i].function];
+      out.push_back({change[i].t, state, change[i].after, met.part, met.theta});
       state = change[i].after;
     }
   }

@@ -21,35 +21,36 @@ struct Sample {
   double safe;  // distance to any change of sign, by the bounds of steepness
 };
 
+Vec3 vec(const Float4& v) { return {static_cast<double>(v[0]), static_cast<double>(v[1]), static_cast<double>(v[2])}; }
+
 class Marcher {
  public:
-  Marcher(const field::Field& field, const CellSet& set, const Cell& cell, const Ray& ray)
+  Marcher(const field::Field& field, const CellSet& set, const Cell& cell, const CellRay& ray)
       : field_(field),
-        terms_(set.terms.data() + cell.first_term),
-        owners_(set.owners.data() + cell.first_owner),
+        functions_(set.facts(cell)),
         cell_(cell),
-        origin_(ray.origin),
-        direction_(ray.direction) {}
+        origin_(vec(ray.origin)),
+        direction_(vec(ray.direction)) {}
 
   Sample at(double t) const {
     const Vec3 p = origin_ + t * direction_;
     Sample sample{State::kOutside, 0, 1e300};
-    for (int k = 0; k < cell_.term_count; ++k) {
-      const CellTerm& term = terms_[k];
+    for (int k = 0; k < cell_.function_count; ++k) {
+      const FunctionFacts& f = functions_[k];
       double v;
-      const bool pair = term.part == field::Part::kWhorl && k + 1 < cell_.term_count &&
-                        terms_[k + 1].part == field::Part::kWhorlHollow && terms_[k + 1].theta == term.theta;
+      const bool pair = f.part == field::Part::kWhorl && k + 1 < cell_.function_count &&
+                        functions_[k + 1].part == field::Part::kWhorlHollow && functions_[k + 1].theta == f.theta;
       if (pair) {
         double hollow;
-        field_.whorl(p, term.theta, v, hollow);
+        field_.whorl(p, f.theta, v, hollow);
         note(sample, k + 1, hollow);
       } else {
-        v = field_.value({term.part, term.theta}, p);
+        v = field_.value(f.term(), p);
       }
       note(sample, k, v);
       if (pair) ++k;
     }
-    sample.state = decide(owners_, cell_.owner_count, sample.positive);
+    sample.state = decide(cell_.owners(), cell_.owner_count, sample.positive);
     return sample;
   }
 
@@ -83,14 +84,14 @@ class Marcher {
     return false;
   }
 
-  // The term whose sign differs between two samples, nearest to zero at t where several do.
+  // The function whose sign differs between two samples, nearest to zero at t where several do.
   std::uint8_t changed(double t, const Sample& a, const Sample& b) const {
     const std::uint64_t differ = a.positive ^ b.positive;
     std::uint8_t best = 0;
     double least = 1e300;
-    for (int k = 0; k < cell_.term_count; ++k) {
+    for (int k = 0; k < cell_.function_count; ++k) {
       if (differ && !(differ >> k & 1u)) continue;
-      const double v = std::abs(field_.value({terms_[k].part, terms_[k].theta}, origin_ + t * direction_));
+      const double v = std::abs(field_.value(functions_[k].term(), origin_ + t * direction_));
       if (v < least) {
         least = v;
         best = static_cast<std::uint8_t>(k);
@@ -102,19 +103,18 @@ class Marcher {
  private:
   void note(Sample& sample, int k, double v) const {
     if (v > 0.0) sample.positive |= std::uint64_t{1} << k;
-    sample.safe = std::min(sample.safe, std::abs(v) / terms_[k].steepness);
+    sample.safe = std::min(sample.safe, std::abs(v) / static_cast<double>(functions_[k].steepness));
   }
 
   const field::Field& field_;
-  const CellTerm* terms_;
-  const CellOwner* owners_;
+  const FunctionFacts* functions_;
   const Cell& cell_;
   Vec3 origin_, direction_;
 };
 
 }  // namespace
 
-bool first_solid_exact(const field::Field& field, const CellSet& set, const Cell& cell, const Ray& ray,
+bool first_solid_exact(const field::Field& field, const CellSet& set, const Cell& cell, const CellRay& ray,
                        CellSegment segment, CellHit& hit) {
   const Marcher march(field, set, cell, ray);
   Sample now = march.at(segment.t0);
@@ -137,7 +137,7 @@ bool first_solid_exact(const field::Field& field, const CellSet& set, const Cell
   return false;
 }
 
-int changes_exact(const field::Field& field, const CellSet& set, const Cell& cell, const Ray& ray, CellSegment segment,
+int changes_exact(const field::Field& field, const CellSet& set, const Cell& cell, const CellRay& ray, CellSegment segment,
                   State& at_start, Change* out, int capacity) {
   const Marcher march(field, set, cell, ray);
   Sample now = march.at(segment.t0);

@@ -25,7 +25,8 @@ struct Hit {
   Vec3f position;           // on the surface
   Vec3f normal;             // unit, out of the shell, towards the air
   Part part = Part::kNothing;
-  bool parietal = false;    // outside of earlier shell or of the columella, met within a later lumen  float safe_offset = 0.0f; // a new ray must start this far along the normal to be clear of this surface, mm
+  bool parietal = false;    // outside of earlier shell or of the columella, met within a later lumen
+  float safe_offset = 0.0f; // a new ray must start this far along the normal to be clear of this surface, mm
   double passage = 0.0;     // growth angle, within half a turn, of the tube's passage whose surface this is
 };
 

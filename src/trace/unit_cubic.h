@@ -46,9 +46,30 @@ inline float bracketed_root(const UnitCubic& c, float lo, float hi, float f_lo, 
   return s;
 }
 
+/// The root of a cubic whose coefficients rise, or fall, all the way, and whose ends differ in sign: Newton until its next step
+/// is lost in rounding by its own bound, e' <= e^2 max|f''| / (2 min|f'|), both from the coefficients.
+inline float monotone_root(const UnitCubic& c) {
+  const float d0 = c.b1 - c.b0, d1 = c.b2 - c.b1, d2 = c.b3 - c.b2;
+  const float least_slope = 3.0f * std::min(std::min(std::abs(d0), std::abs(d1)), std::abs(d2));
+  const float bend = 6.0f * std::max(std::abs(d1 - d0), std::abs(d2 - d1));
+  constexpr float kRounding = 3e-8f;  // half a unit in the last place at 1/2
+  float s = c.b0 / (c.b0 - c.b3);
+  for (int i = 0; i < 5; ++i) {
+    const float step = c.value(s) / c.slope(s);
+    s = std::min(std::max(s - step, 0.0f), 1.0f);
+    if (bend * step * step <= 2.0f * kRounding * least_slope) return s;
+  }
+  return bracketed_root(c, 0.0f, 1.0f, c.b0, c.b3);
+}
+
 /// All places in [0, 1] where the cubic changes sign, in order; at most three. Ends are not places.
 inline int sign_changes(const UnitCubic& c, float out[3]) {
   if (c.one_sign()) return 0;
+  if ((c.b0 < c.b1 && c.b1 < c.b2 && c.b2 < c.b3) || (c.b0 > c.b1 && c.b1 > c.b2 && c.b2 > c.b3)) {  // monotone
+    if ((c.b0 > 0.0f) == (c.b3 > 0.0f)) return 0;
+    out[0] = monotone_root(c);
+    return 1;
+  }
   // Stationary points part the interval into monotone pieces.
   const float a = c.b3 - 3.0f * (c.b2 - c.b1) - c.b0, b = 2.0f * (c.b2 - 2.0f * c.b1 + c.b0), e = c.b1 - c.b0;
   float at[4] = {0.0f, 1.0f, 1.0f, 1.0f};

@@ -104,7 +104,7 @@ TEST_CASE("Rays along axes, signed zeros, cell faces and edges hit what walking 
     const Vec3 size = shell.scene.bounds.max - shell.scene.bounds.min;
     std::vector<Ray> rays;
     for (int i = 0; i < 1200; ++i) {
-      const trace::Cell& cell = set.cells[(static_cast<std::size_t>(i) * 7919u) % set.cells.size()];
+      const trace::Cell& cell = set.cell((static_cast<std::size_t>(i) * 7919u) % set.size());
       const int axis = i % 3, u = (axis + 1) % 3, v = (axis + 2) % 3;
       Ray ray;
       const float sign = i % 2 == 0 ? 1.0f : -1.0f;

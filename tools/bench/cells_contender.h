@@ -10,7 +10,7 @@ namespace whorl::bench {
 class CellsContender final : public Contender {
  public:
   CellsContender(const field::Field& field, const trace::SolidOptions& options) : solid_(field, options) {
-    elements = solid_.cells().cells.size();
+    elements = solid_.cells().size();
     build_seconds = solid_.cell_seconds();
     hierarchy_seconds = solid_.hierarchy_seconds();
     bytes = solid_.cells().bytes() + solid_.hierarchy_bytes();

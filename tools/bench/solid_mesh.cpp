@@ -89,7 +89,8 @@ void keep_near(const field::Field& field, const Vec3& centre, double radius, std
 std::vector<openvdb::Coord> candidate_leaves(const trace::CellSet& cells, double voxel_mm) {
   std::vector<openvdb::Coord> origins;
   const double reach = (kBand + 1.0) * voxel_mm, leaf_mm = kLeaf * voxel_mm;
-  for (const trace::Cell& cell : cells.cells) {
+  for (std::size_t c = 0; c < cells.size(); ++c) {
+    const trace::Cell& cell = cells.cell(c);
     std::array<int, 3> low{}, high{};
     for (std::size_t i = 0; i < 3; ++i) {
       const double centre = static_cast<double>(cell.centre[i]), half = static_cast<double>(cell.half) + reach;
