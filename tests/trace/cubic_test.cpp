@@ -47,7 +47,7 @@ struct Polynomial {
 
 double evaluate(const trace::Cubic& cubic, const Vec3& v) {
   return static_cast<double>(
-      trace::evaluate(cubic.data(), static_cast<float>(v.x), static_cast<float>(v.y), static_cast<float>(v.z)));
+      trace::evaluate(cubic, static_cast<float>(v.x), static_cast<float>(v.y), static_cast<float>(v.z)));
 }
 
 Vec3 random_place(std::mt19937& engine) {
@@ -71,7 +71,7 @@ TEST_CASE("A fit gives a cubic back to the accuracy of floats, with its gradient
       worst = std::max(worst, std::abs(evaluate(fit.cubic, v) - value));
       in_range = in_range && std::abs(value - fit.middle) <= fit.swing + 1e-12;
       float g[3];
-      trace::gradient(fit.cubic.data(), static_cast<float>(v.x), static_cast<float>(v.y), static_cast<float>(v.z), g);
+      trace::gradient(fit.cubic, static_cast<float>(v.x), static_cast<float>(v.y), static_cast<float>(v.z), g);
       for (int k = 0; k < 3; ++k) {
         Vec3 a = v, b = v;
         a[k] -= 1e-5;
@@ -132,7 +132,7 @@ TEST_CASE("Four places at once are evaluated like each alone", "[trace]") {
       y[i] = draw(engine);
       z[i] = draw(engine);
     }
-    const trace::Float4 together = trace::evaluate(cubic.data(), x, y, z);
-    for (int i = 0; i < 4; ++i) CHECK(together[i] == trace::evaluate(cubic.data(), x[i], y[i], z[i]));
+    const trace::Float4 together = trace::evaluate(cubic, x, y, z);
+    for (int i = 0; i < 4; ++i) CHECK(together[i] == trace::evaluate(cubic, x[i], y[i], z[i]));
   }
 }
