@@ -57,10 +57,10 @@ void keep_only(specimen::Specimen& specimen, const std::vector<plate::View>& vie
 int plate_command(const Options& options, Progress& progress) {
   specimen::Specimen specimen = specimen::read_scene_file(options.scene);
   specimen = plate::at_quality(specimen, options.quality.value_or(specimen.plate.quality.value));
-  make_out_folder(options.out);
 
   progress.step("compiling the shell");
   plate::Studio studio(specimen);
+  make_out_folder(options.out);  // only now: a faulty scene leaves no trace
   if (options.only_panel) {
     keep_only(specimen, plate::views_of(specimen), *options.only_panel);
   }

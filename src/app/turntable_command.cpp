@@ -35,10 +35,10 @@ int turntable_command(const Options& options, Progress& progress) {
   job.run.seed = options.seed;
   job.run.threads = thread_count();
   job.run.exact = options.exact;
-  make_out_folder(options.out);
 
   progress.step("compiling the shell");
   sequence::Turntable turntable(job);
+  make_out_folder(options.out);  // only now: a faulty scene leaves no trace
   note_on_shell(turntable.scene(), progress);
   if (turntable.kept() > 0) progress.note(fmt::format("{} frames are whole already and are kept", turntable.kept()));
   const std::size_t count = turntable.missing().size();

@@ -101,7 +101,9 @@ void build_axis(scene::Scene& scene, const specimen::Specimen& specimen, const P
   const double least = scene.wall.at_lip / law.half_breadth;
   if (crosses && columella < least) {
     const bool by_D = specimen.growth.D < 0.0;
-    faults.add(by_D ? specimen.growth.D.where : specimen.section.S.where,
+    diagnostics::Position where = specimen.growth.D.where;
+    if (!by_D) where = specimen.section.lobes.empty() ? specimen.section.roll_deg.where : specimen.section.lobes.front().reach.where;
+    faults.add(where,
                fmt::format("{}: the whorls cross the axis by {:.3g} half-breadths; {}",
                            by_D ? fmt::format("[growth] D = {:g}", specimen.growth.D.value)
                                 : std::string("[section] roll and lobes"),

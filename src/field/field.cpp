@@ -35,7 +35,10 @@ struct Field::InSection {
 };
 
 Field::Field(const scene::Scene& scene)
-    : scene_(scene), start_half_breadth_(scene.law.at(scene.law.theta_start).half_breadth) {}
+    : scene_(scene), start_half_breadth_(scene.law.at(scene.law.theta_start).half_breadth) {
+  for (const scene::Station& s : scene.stations)
+    greatest_reach_ = std::max(greatest_reach_, scene.outlines[s.outer].reach.bounds().hi);
+}
 
 Field::InSection Field::in_section(const Vec3& p, double theta) const noexcept {
   InSection at;
@@ -180,6 +183,13 @@ void Field::passages(double phi, double& first, double& last) const noexcept {
   last = phi + kTwoPi * std::floor((scene_.theta_end - phi) / kTwoPi);
 }
 
+// Beyond the support of every outline the length levels off at under -0.5 half-breadths, and a flare adds at most a quarter.
+bool Field::out_of_reach(double theta, const Vec3& p) const noexcept {
+  if (!scene_.ellipsoids.empty()) return false;
+  const growth::SectionPoint q = scene_.law.to_section(scene_.law.at(theta), {std::sqrt(p.x * p.x + p.y * p.y), p.z});
+  return q.x * q.x + q.y * q.y > kS2 * greatest_reach_ * greatest_reach_;
+}
+
 Place Field::place_at(const Vec3& p) const noexcept {
   double first, last;
   passages(std::atan2(p.y, p.x), first, last);
@@ -191,6 +201,7 @@ Place Field::place_at(const Vec3& p) const noexcept {
   }
   if (scene_.pillar.present && value({Part::kPillar, 0.0}, p) > 0.0) return {State::kSolid, {Part::kPillar, 0.0}};
   for (double theta = first; theta <= last + 1e-9; theta += kTwoPi) {
+    if (out_of_reach(theta, p)) continue;
     double outer, hollow;
     whorl(p, theta, outer, hollow);
     if (outer > 0.0) return {hollow > 0.0 ? State::kLumen : State::kSolid, {Part::kWhorl, theta}};

@@ -88,6 +88,7 @@ class Field {
   InSection in_section(const Vec3& p, double theta) const noexcept;
   // Signed length inside a chain's surface, and the length that one unit of section coordinates spans at this section angle.
   double chain(const InSection& at, const Vec3& p, bool hollow, double& unit) const noexcept;
+  bool out_of_reach(double theta, const Vec3& p) const noexcept;
   double front(const InSection& at) const noexcept;
   double opening_penalty(double theta) const noexcept;
   void piece_bounds(const Box3& box, Interval rho, Interval theta, Interval& outer, Interval& hollow) const noexcept;
@@ -95,6 +96,7 @@ class Field {
 
   const scene::Scene& scene_;
   double start_half_breadth_;
+  double greatest_reach_ = 0.0;  // of any outer outline
 };
 
 }  // namespace whorl::field

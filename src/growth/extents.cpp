@@ -20,6 +20,22 @@ bool inside_outline(const Exterior& shell, double theta, HalfPlanePoint p) {
   return std::hypot(q.x, q.y) < shell.reach.value(std::atan2(q.y, q.x));
 }
 
+// Corners of the convex hull, counter-clockwise, by the monotone chain (Andrew 1979, Inform. Process. Lett. 9(5)).
+std::vector<Vec2> convex_hull(std::vector<Vec2> points) {
+  std::sort(points.begin(), points.end(), [](const Vec2& a, const Vec2& b) { return a.x != b.x ? a.x < b.x : a.y < b.y; });
+  std::vector<Vec2> hull;
+  for (int pass = 0; pass < 2; ++pass) {
+    const std::size_t base = hull.size();
+    for (const Vec2& p : points) {
+      while (hull.size() >= base + 2 && (hull.back() - hull[hull.size() - 2]).cross(p - hull.back()) <= 0.0) hull.pop_back();
+      hull.push_back(p);
+    }
+    if (!hull.empty()) hull.pop_back();  // the other chain begins with it
+    std::reverse(points.begin(), points.end());
+  }
+  return hull;
+}
+
 }  // namespace
 
 ChamberShape embryonic_chamber(const CoilingLaw& law) {
@@ -86,15 +102,24 @@ std::vector<Vec3> surface_points(const Exterior& shell, int turn_steps, int arou
                         chamber.radius * std::sin(polar) * std::sin(azimuth),
                         chamber.centre_z - chamber.half_height * std::cos(polar)});
     }
+  // Width and mouth are the last whorls'; earlier ones count for the apex only, and along growth their depth has its extremes
+  // at the ends.
+  constexpr double kFine = 1.5 * kTwoPi;
+  constexpr int kCoarser = 6;
+  const double start = shell.law.theta_start;
   for (int j = 0; j < around; ++j) {
-    const double psi = kTwoPi * j / around, end = front_theta(shell, psi);
-    const int steps = std::max(1, static_cast<int>(std::ceil((end - shell.law.theta_start) / kTwoPi * turn_steps)));
-    for (int i = 0; i <= steps; ++i) {
-      const double theta = shell.law.theta_start + (end - shell.law.theta_start) * i / steps;
-      HalfPlanePoint p = outline_point(shell, theta, psi);
-      p.rho = std::max(p.rho, 0.0);
-      points.push_back(in_space(p, theta));
-    }
+    const double psi = kTwoPi * j / around, end = front_theta(shell, psi), fine_from = std::max(start, end - kFine);
+    const auto walk = [&](double from, double to, int per_turn) {
+      const int steps = std::max(1, static_cast<int>(std::ceil((to - from) / kTwoPi * per_turn)));
+      for (int i = 0; i <= steps; ++i) {
+        const double theta = from + (to - from) * i / steps;
+        HalfPlanePoint p = outline_point(shell, theta, psi);
+        p.rho = std::max(p.rho, 0.0);
+        points.push_back(in_space(p, theta));
+      }
+    };
+    if (fine_from > start) walk(start, fine_from, std::max(1, turn_steps / kCoarser));
+    walk(fine_from, end, turn_steps);
   }
   return points;
 }
@@ -110,24 +135,16 @@ double height_of(const std::vector<Vec3>& points) {
 
 double width_of(const std::vector<Vec3>& points) {
   // The greatest caliper width is the greatest distance of two points of the projection onto the plane across the axis:
-  // it is reached between points that are extreme in some direction, so those are enough.
-  constexpr int kDirections = 720;
+  // two corners of its convex hull.
   double farthest = 0.0;
   for (const Vec3& p : points) farthest = std::max(farthest, std::hypot(p.x, p.y));
-  std::vector<Vec3> outer;  // a point nearer to the axis than half of the farthest can't end the greatest width
+  std::vector<Vec2> outer;  // a point nearer to the axis than half of the farthest can't end the greatest width
   for (const Vec3& p : points)
-    if (std::hypot(p.x, p.y) >= 0.5 * farthest) outer.push_back(p);
-  std::vector<const Vec3*> extreme;
-  for (int i = 0; i < kDirections; ++i) {
-    const double a = kTwoPi * i / kDirections, c = std::cos(a), s = std::sin(a);
-    const auto best = std::max_element(outer.begin(), outer.end(), [&](const Vec3& p, const Vec3& q) {
-      return p.x * c + p.y * s < q.x * c + q.y * s;
-    });
-    extreme.push_back(&*best);
-  }
+    if (std::hypot(p.x, p.y) >= 0.5 * farthest) outer.emplace_back(p.x, p.y);
+  const std::vector<Vec2> hull = convex_hull(std::move(outer));
   double width = 0.0;
-  for (const Vec3* p : extreme)
-    for (const Vec3* q : extreme) width = std::max(width, std::hypot(p->x - q->x, p->y - q->y));
+  for (std::size_t i = 0; i < hull.size(); ++i)
+    for (std::size_t j = i + 1; j < hull.size(); ++j) width = std::max(width, (hull[i] - hull[j]).length());
   return width;
 }
 
