@@ -83,7 +83,7 @@ int plate_command(const Options& options, Progress& progress) {
   for (std::size_t i = 0; i < plan.panels.size(); ++i) {
     const FigurePanel& panel = plan.panels[i];
     const double share = static_cast<double>(panel.rect.width) * panel.rect.height / area;
-    films.push_back(studio.picture(panel.view, panel.camera(studio.front_mm()), samples, options.seed,
+    films.push_back(studio.picture(panel.view, panel.look, panel.camera(studio.front_mm()), samples, options.seed,
                                    static_cast<std::uint32_t>(i), PictureProgress(progress, before, share)));
     before += share;
   }

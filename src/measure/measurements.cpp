@@ -48,10 +48,6 @@ void measure_sections(const field::Field& field, double error, Measurements& m) 
 
 }  // namespace
 
-double mineral_density(specimen::Mineral mineral) {
-  return mineral == specimen::Mineral::kAragonite ? 2.93 : 2.7102;
-}
-
 Measurements measure_shell(const trace::EmbreeSolid& solid, specimen::Mineral mineral, const MeasureOptions& options) {
   const field::Field& field = solid.field();
   const scene::Scene& scene = field.scene();

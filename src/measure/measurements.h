@@ -36,9 +36,6 @@ struct MeasureOptions {
   std::uint64_t seed = 0;  // of those lines
 };
 
-/// g/cm3. Aragonite 2.93 (SSHADE database, mineral record Aragonite), calcite 2.7102 (Handbook of Mineralogy, sheet Calcite).
-double mineral_density(specimen::Mineral mineral);
-
 /// Measures the solid that rays meet. Uses all threads.
 Measurements measure_shell(const trace::EmbreeSolid& solid, specimen::Mineral mineral, const MeasureOptions& options);
 

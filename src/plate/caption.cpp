@@ -54,15 +54,40 @@ std::string size_phrase(const specimen::Specimen& specimen, const RunFacts& run)
   return "";
 }
 
+/// "apertural view, whitened"
+std::string panel_words(const FigurePanel& panel, const specimen::Specimen& specimen) {
+  std::string words = panel.eye ? pair_label(panel) : panel.view.label;
+  if (panel.look == specimen::PanelLook::kWhitened) words += ", whitened";
+  if (panel.look == specimen::PanelLook::kRadiograph) words += ", " + radiograph_label(specimen.radiograph);
+  if (panel.eye) words += fmt::format(", stereo pair for parallel viewing ({:g}°)", specimen.stereo.angle_deg.value);
+  return words;
+}
+
+/// What was computed instead of done to a specimen.
+std::string looks_sentence(const FigurePlan& plan, const specimen::Specimen& specimen) {
+  const auto shows = [&plan](specimen::PanelLook look) {
+    return std::any_of(plan.panels.begin(), plan.panels.end(), [look](const FigurePanel& p) { return p.look == look; });
+  };
+  std::string text;
+  if (shows(specimen::PanelLook::kWhitened)) text += " The whitening is computed: no specimen was coated.";
+  if (shows(specimen::PanelLook::kRadiograph))
+    text += fmt::format(" The radiograph is computed from the wall of the model (exp(-µt), {:g} keV, {}) and no X-ray picture of a "
+                        "specimen.",
+                        specimen.radiograph.energy_kev.value, mineral_word(specimen.identity.mineral));
+  return text;
+}
+
 /// "A, apertural view. B, apical view." or, without letters, "Apertural view, apical view."
-std::string views_sentence(const FigurePlan& plan) {
+std::string views_sentence(const FigurePlan& plan, const specimen::Specimen& specimen) {
   std::string text;
   for (const FigurePanel& panel : plan.panels) {
+    if (panel.eye == Eye::kRight) continue;
+    const std::string words = panel_words(panel, specimen);
     if (panel.letter.empty()) {
-      text += (text.empty() ? "" : ", ") + panel.view.label;
+      text += (text.empty() ? "" : ", ") + words;
       continue;
     }
-    text += (text.empty() ? "" : ". ") + panel.letter + ", " + panel.view.label;
+    text += (text.empty() ? "" : ". ") + panel.letter + ", " + words;
   }
   return capital(text) + ".";
 }
@@ -71,8 +96,8 @@ std::string panel_names(const FigurePlan& plan, const LayoutBar& bar) {
   std::vector<std::string> names;
   for (std::size_t i = 0; i < plan.panels.size(); ++i) {
     const FigurePanel& panel = plan.panels[i];
-    if (bar.panel < 0 ? panel.relative_scale != 1.0 : bar.panel != static_cast<int>(i)) continue;
-    names.push_back(panel.letter.empty() ? panel.view.label : panel.letter);
+    if (panel.eye == Eye::kRight || !bar_belongs_to(bar, plan, i)) continue;
+    names.push_back(panel.letter.empty() ? (panel.eye ? pair_label(panel) : panel.view.label) : panel.letter);
   }
   return in_words(names);
 }
@@ -96,7 +121,8 @@ std::string views_in_short(const FigurePlan& plan) {
   int free = 0;
   for (const FigurePanel& panel : plan.panels) {
     constexpr std::string_view kView = " view";
-    const std::string& label = panel.view.label;
+    if (panel.eye == Eye::kRight) continue;
+    const std::string label = panel.eye ? pair_label(panel) : panel.view.label;
     std::string item = label;
     if (panel.view.name == specimen::ViewName::kFree) {
       ++free;
@@ -127,10 +153,10 @@ std::string make_caption(const FigurePlan& plan, const specimen::Specimen& speci
   if (!id.author.value.empty()) text += " (author: " + id.author.value + ")";
   text += fmt::format(". {} shell of {} whorls, {}. ", capital(coiling_word(specimen)),
                       plain_number(specimen.growth.whorls.value), size_phrase(specimen, run));
-  text += views_sentence(plan) + " " + bars_sentence(plan) + " Orthographic, lit from " + light_words(specimen.light) + ".\n\n";
+  text += views_sentence(plan, specimen) + " " + bars_sentence(plan) + " Orthographic, lit from " + light_words(specimen.light) + ".\n\n";
 
   text += "The figure shows a " + std::string(kDisclosureClass) + " (Whorlwright " + run.version +
-          "), no photograph of a specimen. " + kTypeSentence;
+          "), no photograph of a specimen. " + std::string(kTypeSentence) + looks_sentence(plan, specimen);
   const std::vector<Basis> basis = basis_of(specimen);
   const std::string stated = shaping_words(basis, true), assumed = shaping_words(basis, false);
   if (!stated.empty()) text += " Stated: " + stated + ".";

@@ -89,6 +89,10 @@ std::string shaping_words(const std::vector<Basis>& basis, bool given) {
   return in_words(items);
 }
 
+const char* mineral_word(specimen::Mineral mineral) {
+  return mineral == specimen::Mineral::kAragonite ? "aragonite" : "calcite";
+}
+
 std::string light_words(const specimen::Light& light) {
   if (light.elevation_deg.value > kFrontal) return "the front";
   static const char* const kSides[8] = {"the right", "upper right", "above", "upper left",

@@ -26,6 +26,8 @@ std::string shaping_words(const std::vector<Basis>& basis, bool given);
 /// "a", "a and b", "a, b and c".
 std::string in_words(const std::vector<std::string>& items);
 
+const char* mineral_word(specimen::Mineral mineral);
+
 /// The key light's direction on the page: "upper left", "the right", "the front" ...
 std::string light_words(const specimen::Light& light);
 

@@ -3,6 +3,7 @@
 #include "plate/figure_plan.h"
 
 #include "diagnostics/error.h"
+#include "plate/text_mask.h"
 
 #include <fmt/format.h>
 
@@ -26,7 +27,62 @@ double letter_room_mm(specimen::Letters letters, std::size_t count) {
   return (count > 26 ? 2.0 : 1.0) * kWidest + (letters == specimen::Letters::kLowerInBrackets ? kBrackets : 0.0);
 }
 
+/// Behind the letter, on its base line.
+void put_label(const specimen::Specimen& specimen, const LayoutRequest& request, const LayoutPanel& place, FigurePanel& panel) {
+  const double per_mm = request.resolution_ppi / kMmPerInch;
+  panel.label = radiograph_label(specimen.radiograph);
+  constexpr double kSpace = 1.2;  // mm, between letter and label
+  panel.label_left = place.letter_left + static_cast<int>(std::lround((request.letter_room_mm > 0.0 ? request.letter_room_mm + kSpace : 0.0) * per_mm));
+  panel.label_base = place.letter_top + static_cast<int>(std::lround(kCapHeight * kLetterPoints / 72.0 * request.resolution_ppi));
+  const TextMask mask = text_mask(panel.label, kLabelPoints, request.resolution_ppi, Weight::kRegular);
+  const int room = place.rect.right() - panel.label_left;
+  if (mask.width > room)
+    throw diagnostics::InvalidInput(
+        specimen.source,
+        {{specimen.plate.width_mm.where,
+          fmt::format("\"{}\" is {:.1f} mm long in 8 pt, and its panel leaves {:.1f} mm for it; make `width` or the panel's "
+                      "`scale` larger, or `columns` or `gap` smaller",
+                      panel.label, mask.width / per_mm, std::max(0.0, room / per_mm))}});
+}
+
+/// Left picture on the left, for parallel viewing.
+void part_pair(const FigurePanel& pair, double spacing_px, std::vector<FigurePanel>& panels) {
+  FigurePanel left = pair, right = pair;
+  left.view = eye_view(pair.view, Eye::kLeft);
+  right.view = eye_view(pair.view, Eye::kRight);
+  left.eye = Eye::kLeft;
+  right.eye = Eye::kRight;
+  // Between the pictures, in proportion to what each has on that side of its pole.
+  const Extents& e = pair.extents_mm;
+  const double between = std::clamp(e.right / e.width(), 0.0, 1.0);
+  const int cut = static_cast<int>(std::lround(pair.pole_px.x + (between - 0.5) * spacing_px));
+  left.rect.width = cut;
+  right.rect.x += cut;
+  right.rect.width -= cut;
+  left.pole_px.x -= 0.5 * spacing_px;
+  right.pole_px.x += 0.5 * spacing_px - cut;
+  right.letter.clear();
+  right.label.clear();
+  panels.push_back(left);
+  panels.push_back(right);
+}
+
 }  // namespace
+
+bool bar_belongs_to(const LayoutBar& bar, const FigurePlan& plan, std::size_t index) {
+  const FigurePanel& panel = plan.panels[index];
+  if (bar.panel < 0) return panel.relative_scale == 1.0;
+  return bar.panel == static_cast<int>(index) || (panel.eye == Eye::kRight && bar.panel + 1 == static_cast<int>(index));
+}
+
+std::string pair_label(const FigurePanel& picture) {
+  const std::string& label = picture.view.label;
+  return label.substr(0, label.size() - (picture.eye == Eye::kLeft ? kLeftEye : kRightEye).size());
+}
+
+std::string radiograph_label(const specimen::Radiograph& radiograph) {
+  return fmt::format("computed radiograph, {:g} keV", radiograph.energy_kev.value);
+}
 
 transport::Camera FigurePanel::camera(double front_mm) const {
   transport::Camera camera;
@@ -44,16 +100,25 @@ std::vector<View> views_of(const specimen::Specimen& specimen) {
   const double lip_rad = kTwoPi * specimen.growth.whorls.value;
   std::vector<View> views;
   for (const specimen::Panel& panel : specimen.plate.panels)
-    views.push_back(make_view(panel, lip_rad, specimen.identity.coiling.value));
+    views.push_back(make_view(panel, specimen.stereo, lip_rad, specimen.identity.coiling.value));
   return views;
 }
 
 Extents extents_in(const View& view, const std::vector<Vec3>& points_mm) {
+  if (view.stereo_deg > 0.0) {
+    Extents wide = extents_in(eye_view(view, Eye::kLeft), points_mm);
+    const Extents other = extents_in(eye_view(view, Eye::kRight), points_mm);
+    wide.left = std::max(wide.left, other.left);
+    wide.right = std::max(wide.right, other.right);
+    wide.above = std::max(wide.above, other.above);
+    wide.below = std::max(wide.below, other.below);
+    return wide;  // with the corner that the left picture leaves to the letter
+  }
   Extents extents;
   bool first = true;
   for (const Vec3& point : points_mm) {
     const Vec3 page = view.page_to_shell.to_frame(point);
-    if (view.cut && page.z > 0.0) continue;
+    if (view.cut && view.fixed_page.to_frame(point).z > 0.0) continue;
     const Extents one{-page.x, page.x, page.y, -page.y, page.y - page.x};
     if (first) extents = one;
     first = false;
@@ -96,7 +161,9 @@ FigurePlan plan_figure(const specimen::Specimen& specimen, const std::vector<Vie
           specimen.source,
           {{plate.panels[i].view.where,
             fmt::format("panel {} ({}) shows nothing of the shell; choose another view", i + 1, views[i].label)}});
-    request.views.push_back({extents_mm[i], stance_of(views[i]), plate.panels[i].scale});
+    request.views.push_back({extents_mm[i], stance_of(views[i]), plate.panels[i].scale,
+                             views[i].stereo_deg > 0.0 ? specimen.stereo.spacing_mm.value : 0.0,
+                             plate.panels[i].look == specimen::PanelLook::kRadiograph});
   }
 
   const Layout layout = lay_out(request);
@@ -119,7 +186,14 @@ FigurePlan plan_figure(const specimen::Specimen& specimen, const std::vector<Vie
     panel.pole_px = Vec2(place.pole_x - place.rect.x, place.pole_y - place.rect.y);
     panel.letter_left = place.letter_left;
     panel.letter_top = place.letter_top;
-    plan.panels.push_back(panel);
+    panel.look = plate.panels[i].look;
+    if (panel.look == specimen::PanelLook::kRadiograph) put_label(specimen, request, place, panel);
+    for (std::size_t k = 0; k < layout.bars.size(); ++k)
+      if (layout.bars[k].panel == static_cast<int>(i)) plan.bars[k].panel = static_cast<int>(plan.panels.size());
+    if (views[i].stereo_deg > 0.0)
+      part_pair(panel, place.pair_spacing, plan.panels);
+    else
+      plan.panels.push_back(panel);
   }
   return plan;
 }

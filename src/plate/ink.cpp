@@ -26,6 +26,12 @@ Ink label_ink(const FigurePlan& plan, const LayoutBar& bar) {
   return ink_of(std::move(mask), left, top);
 }
 
+Ink words_ink(const FigurePlan& plan, const FigurePanel& panel) {
+  TextMask mask = text_mask(panel.label, kLabelPoints, plan.resolution_ppi, Weight::kRegular);
+  const int top = panel.label_base - mask.base;
+  return ink_of(std::move(mask), panel.label_left, top);
+}
+
 }  // namespace
 
 std::vector<Ink> letter_ink(const FigurePlan& plan) {
@@ -52,6 +58,8 @@ Ink bar_ink(const LayoutBar& bar) {
 
 std::vector<Ink> all_ink(const FigurePlan& plan) {
   std::vector<Ink> ink = letter_ink(plan);
+  for (const FigurePanel& panel : plan.panels)
+    if (!panel.label.empty()) ink.push_back(words_ink(plan, panel));
   for (const LayoutBar& bar : plan.bars) {
     ink.push_back(bar_ink(bar));
     ink.push_back(label_ink(plan, bar));

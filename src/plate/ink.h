@@ -20,7 +20,7 @@ std::vector<Ink> letter_ink(const FigurePlan& plan);
 /// A bar with exact coverage: its inked width, summed along a row, is its length in pixels.
 Ink bar_ink(const LayoutBar& bar);
 
-/// Everything: letters, bars, labels.
+/// Everything: letters, bars, their labels and those of panels.
 std::vector<Ink> all_ink(const FigurePlan& plan);
 
 }  // namespace whorl::plate

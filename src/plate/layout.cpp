@@ -54,16 +54,49 @@ struct Column {
   int left = 0, right = 0;
 };
 
+/// Pixels for a mm of shell: the most that fill `room` and leave each half of a stereo pair within its spacing.
+template <class Widths>
+double largest_scale(const LayoutRequest& request, const Measures& px, double room, const Widths& widths) {
+  const auto sum = [&](double scale) {
+    double total = 0.0;
+    for (const double one : widths(scale)) total += one;
+    return total;
+  };
+  double most = std::numeric_limits<double>::infinity();
+  bool paired = false;
+  for (const LayoutView& view : request.views) {
+    if (view.pair_spacing_mm == 0.0) continue;
+    paired = true;
+    most = std::min(most, (view.pair_spacing_mm * px.per_mm - 2.0 * px.margin) / (view.scale * view.extents_mm.width()));
+  }
+  if (!paired) return room / sum(1.0);
+  if (sum(0.0) >= room)
+    refuse(request, request.plate_where,
+           fmt::format("stereo pairs and the panels beside them leave no room on a plate of {} mm; make `width` larger, or "
+                       "`columns`, `gap` or the `spacing` of [stereo] smaller",
+                       plain_number(request.width_mm)));
+  if (sum(most) <= room) return most;
+  double low = 0.0, high = most;  // the sum rises with the scale
+  for (int i = 0; i < 100; ++i) {
+    const double middle = 0.5 * (low + high);
+    (sum(middle) <= room ? low : high) = middle;
+  }
+  return low;
+}
+
 /// Sets the common scale and returns the columns; each is wide enough on both sides of its centre line, where the axes are.
 std::vector<Column> set_columns(const LayoutRequest& request, const Measures& px, int count, Layout& layout) {
-  std::vector<double> half(static_cast<std::size_t>(count), 0.0);
-  for (std::size_t i = 0; i < request.views.size(); ++i) {
-    const LayoutView& view = request.views[i];
-    double& widest = half[i % half.size()];
-    widest = std::max(widest, view.scale * std::max(view.extents_mm.left, view.extents_mm.right));
-  }
-  double sum = 0.0;
-  for (const double one : half) sum += 2.0 * one;
+  const auto column_of = [count](std::size_t i) { return i % static_cast<std::size_t>(count); };
+  const auto widths = [&](double pixels_per_shell_mm) {
+    std::vector<double> wide(static_cast<std::size_t>(count), 0.0);
+    for (std::size_t i = 0; i < request.views.size(); ++i) {
+      const LayoutView& view = request.views[i];
+      double& widest = wide[column_of(i)];
+      widest = std::max(widest, 2.0 * view.scale * std::max(view.extents_mm.left, view.extents_mm.right) * pixels_per_shell_mm +
+                                    view.pair_spacing_mm * px.per_mm);
+    }
+    return wide;
+  };
   const int fixed = (count - 1) * px.gap + count * 2 * px.margin;
   const double room = layout.width - fixed;
   if (room < kSmallestCell * px.per_mm * count)
@@ -72,13 +105,16 @@ std::vector<Column> set_columns(const LayoutRequest& request, const Measures& px
                        "each needs at least {} mm; make `width` larger, or `columns` or `gap` smaller",
                        count, count == 1 ? "" : "s", plain_number(request.gap_mm), std::max(0.0, room / px.per_mm),
                        plain_number(request.width_mm), kSmallestCell));
-  const double pixels_per_shell_mm = room / sum;
+  const double pixels_per_shell_mm = largest_scale(request, px, room, widths);
   layout.common_scale = pixels_per_shell_mm * layout.paper_mm_per_pixel;
 
   std::vector<Column> columns;
-  double at = 0.0;
-  for (const double one : half) {
-    const double wide = 2.0 * one * pixels_per_shell_mm + 2.0 * px.margin;
+  double at = 0.0, used = 0.0;
+  const std::vector<double> pictures = widths(pixels_per_shell_mm);
+  for (const double one : pictures) used += one;
+  const double spare = std::max(0.0, room - used) / count;  // where a stereo pair, not the width, sets the scale
+  for (const double one : pictures) {
+    const double wide = one + spare + 2.0 * px.margin;
     columns.push_back({whole(at), whole(at + wide)});
     at += wide + px.gap;
   }
@@ -118,10 +154,10 @@ bool corner_taken(const LayoutPanel& panel, const Extents& extents, const Layout
   const double letter_y = panel.rect.y + (kLetterInset + kLetterRoomHigh) * px.per_mm;
   // The picture lies on one side of a diagonal; the letter has to lie on the other.
   if (!std::isnan(extents.upper_left))
-    return (panel.pole_x - letter_x) + (panel.pole_y - letter_y) < extents.upper_left / panel.mm_per_pixel + px.margin;
+    return (panel.pole_x - 0.5 * panel.pair_spacing - letter_x) + (panel.pole_y - letter_y) < extents.upper_left / panel.mm_per_pixel + px.margin;
   const double a = 0.5 * extents.width() / panel.mm_per_pixel * kCornerSafety;
   const double b = 0.5 * extents.height() / panel.mm_per_pixel * kCornerSafety;
-  const double centre_x = panel.pole_x + 0.5 * (extents.right - extents.left) / panel.mm_per_pixel;
+  const double centre_x = panel.pole_x - 0.5 * panel.pair_spacing + 0.5 * (extents.right - extents.left) / panel.mm_per_pixel;
   const double centre_y = panel.pole_y + 0.5 * (extents.below - extents.above) / panel.mm_per_pixel;
   const double x = std::max(0.0, centre_x - letter_x) / a, y = std::max(0.0, centre_y - letter_y) / b;
   return x * x + y * y < 1.0;
@@ -210,7 +246,8 @@ void add_row(const LayoutRequest& request, const Measures& px, const std::vector
     panel.rect = {column.left, top, column.right - column.left, height};
     panel.pole_x = panel.rect.x + 0.5 * panel.rect.width;
     panel.pole_y = top + 0.5 * height + row.pole(view, 1.0 / panel.mm_per_pixel);
-    lift = lift || (request.letter_room_mm > 0.0 && corner_taken(panel, view.extents_mm, request, px));
+    panel.pair_spacing = view.pair_spacing_mm * px.per_mm;
+    lift = lift || view.labelled || (request.letter_room_mm > 0.0 && corner_taken(panel, view.extents_mm, request, px));
     layout.panels.push_back(panel);
   }
   const int strip = lift ? px.strip : 0;

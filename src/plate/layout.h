@@ -38,6 +38,8 @@ struct LayoutView {
   Extents extents_mm;
   Stance stance = Stance::kUpright;
   double scale = 1.0;  // relative to the plate's common scale; other than 1 gets a bar of its own
+  double pair_spacing_mm = 0.0;  // of a stereo pair: between its pictures' poles on paper; 0 for one picture
+  bool labelled = false;         // words stand above the picture, beside the letter
 };
 
 struct LayoutRequest {
@@ -55,6 +57,7 @@ struct LayoutPanel {
   double paper_scale = 0.0;  // mm on paper for a mm of shell
   double mm_per_pixel = 0.0; // mm of shell
   double pole_x = 0.0, pole_y = 0.0;  // the projected pole in the figure, pixels from its top left corner
+  double pair_spacing = 0.0;          // pixels; the poles of a pair stand half of it to the left and right of `pole_x`
   int letter_left = 0, letter_top = 0;  // where the letter's ink begins
 };
 

@@ -5,6 +5,7 @@
 #include "plate/compose.h"
 #include "plate/disclosure.h"
 #include "plate/sha256.h"
+#include "shaders_cpu/medium/attenuation.h"
 #include "shaders_cpu/tone/curve.h"
 
 #include <fmt/format.h>
@@ -32,6 +33,40 @@ const char* ground_word(specimen::Background ground) {
     case specimen::Background::kClear: return "clear";
   }
   return "";
+}
+
+const char* look_word(specimen::PanelLook look) {
+  switch (look) {
+    case specimen::PanelLook::kNatural: return "natural";
+    case specimen::PanelLook::kWhitened: return "whitened";
+    case specimen::PanelLook::kRadiograph: return "computed radiograph";
+  }
+  return "";
+}
+
+/// What stands behind the looks of the panels that are not natural.
+void add_looks(const FigurePlan& plan, const specimen::Specimen& specimen, ordered_json& json) {
+  bool radiograph = false, pair = false;
+  for (const FigurePanel& panel : plan.panels) {
+    radiograph = radiograph || panel.look == specimen::PanelLook::kRadiograph;
+    pair = pair || panel.eye;
+  }
+  if (radiograph) {
+    const double energy = specimen.radiograph.energy_kev, density = specimen::mineral_density(specimen.identity.mineral);
+    json["radiograph"] = {{"statement", "computed from the wall of the model; no X-ray picture of a specimen"},
+                          {"energy_kev", energy},
+                          {"mineral", mineral_word(specimen.identity.mineral)},
+                          {"density_g_per_cm3", density},
+                          {"attenuation_per_mm", shaders_cpu::carbonate_attenuation_per_mm(energy, density)},
+                          {"source", "Hubbell & Seltzer 1995, NISTIR 5632"},
+                          {"shown", specimen.plate.background.value == specimen::Background::kBlack
+                                        ? "one minus transmission, as display-linear light"
+                                        : "transmission, as display-linear light"}};
+  }
+  if (pair)
+    json["stereo"] = {{"angle_deg", specimen.stereo.angle_deg.value},
+                      {"spacing_mm", specimen.stereo.spacing_mm.value},
+                      {"viewing", "parallel: the left eye's picture stands on the left"}};
 }
 
 ordered_json rectangle(const PixelRect& rect) {
@@ -63,6 +98,9 @@ ordered_json panel_record(const FigurePanel& panel, const transport::Film& film)
   json["azimuth_deg"] = panel.view.azimuth_deg;
   json["elevation_deg"] = panel.view.elevation_deg;
   json["cut"] = panel.view.cut;
+  json["look"] = look_word(panel.look);
+  if (panel.eye) json["eye"] = panel.eye == Eye::kLeft ? "left" : "right";
+  if (!panel.label.empty()) json["label"] = panel.label;
   json["rendered"] = film.size() != 0;
   json["samples_per_pixel"] = {{"mean", film.mean_samples}, {"max", film.max_samples}};
   json["noise"] = film.noise;
@@ -79,7 +117,7 @@ ordered_json bar_record(const LayoutBar& bar, const FigurePlan& plan) {
   json["thickness_px"] = bar.thickness;
   json["panels"] = ordered_json::array();
   for (std::size_t i = 0; i < plan.panels.size(); ++i)
-    if (bar.panel < 0 ? plan.panels[i].relative_scale == 1.0 : bar.panel == static_cast<int>(i))
+    if (bar_belongs_to(bar, plan, i))
       json["panels"].push_back(i + 1);
   return json;
 }
@@ -155,6 +193,7 @@ ordered_json make_record(const FigurePlan& plan, const specimen::Specimen& speci
   for (std::size_t i = 0; i < plan.panels.size(); ++i) json["panels"].push_back(panel_record(plan.panels[i], films[i]));
   json["scale_bars"] = ordered_json::array();
   for (const LayoutBar& bar : plan.bars) json["scale_bars"].push_back(bar_record(bar, plan));
+  add_looks(plan, specimen, json);
   json.update(picture_making(specimen.light));
   json["disclosure"] = disclosure(specimen);
   if (!run.measurements.is_null()) json["measurements"] = run.measurements;

@@ -4,9 +4,11 @@
 
 #include "compile/compile.h"
 #include "growth/extents.h"
+#include "shaders_cpu/medium/attenuation.h"
 #include "trace/sectioned_solid.h"
 #include "transport/lighting.h"
 #include "transport/path_tracer.h"
+#include "transport/radiograph.h"
 
 #include <algorithm>
 #include <chrono>
@@ -18,6 +20,9 @@ namespace {
 // The cells' surface stays this near to the true one: a tenth of a pixel, and finer where that would show in a measure:
 // a ray that meets the surface at a third of a right angle or more is then true to 1e-5 of the height.
 constexpr double kOfAPixel = 0.1, kOfTheHeight = 2e-6;
+
+// Nothing but outlines is noisy in a radiograph.
+constexpr int kRadiographSamples = 32;
 
 double now() {
   return std::chrono::duration<double>(std::chrono::steady_clock::now().time_since_epoch()).count();
@@ -57,6 +62,7 @@ Studio::Studio(const specimen::Specimen& specimen) : specimen_(specimen) {
   const Box3& box = scene_->bounds;
   front_mm_ = 1.01 * std::max(box.min.length(), box.max.length());
   materials_ = transport::make_materials(*field_, specimen_);
+  whitened_ = transport::whitened(materials_, *field_);
   compile_seconds_ = now() - start;
 }
 
@@ -67,20 +73,33 @@ void Studio::set_up(double mm_per_pixel, bool exact) {
   compile_seconds_ += now() - start;
 }
 
-transport::Film Studio::picture(const View& view, const transport::Camera& camera, int samples, std::uint64_t seed,
-                                std::uint32_t number, const transport::Progress& progress) const {
+transport::Film Studio::picture(const View& view, specimen::PanelLook look, const transport::Camera& camera, int samples,
+                                std::uint64_t seed, std::uint32_t number, const transport::Progress& progress) const {
+  if (look == specimen::PanelLook::kRadiograph) {
+    transport::RadiographJob job;
+    job.solid = solid_.get();
+    job.bounds_mm = scene_->bounds;
+    job.camera = camera;
+    job.attenuation_per_mm = shaders_cpu::carbonate_attenuation_per_mm(
+        specimen_.radiograph.energy_kev, specimen::mineral_density(specimen_.identity.mineral));
+    job.bright_shell = specimen_.plate.background == specimen::Background::kBlack;
+    job.samples_per_pixel = std::min(samples, kRadiographSamples);
+    job.seed = seed;
+    job.panel = number;
+    return transport::radiograph(job, progress);
+  }
   std::vector<transport::PlacedLamp> lamps;
   for (const scene::Lamp& lamp : scene_->lamps)
     lamps.push_back({lamp.centre, lamp.radius, lamp.strength, lamp.temperature_k});
   std::optional<trace::SectionedSolid> half;
-  if (view.cut) half.emplace(*solid_, view.page_to_shell.z);
+  if (view.cut) half.emplace(*solid_, view.fixed_page.z);
 
   transport::RenderJob job;
   job.shell = half ? static_cast<const trace::Surfaces*>(&*half) : solid_.get();
   job.bounds_mm = scene_->bounds;
   job.camera = camera;
-  job.lighting = transport::light_page(specimen_.light, lamps, view.page_to_shell);
-  job.materials = materials_;
+  job.lighting = transport::light_page(specimen_.light, lamps, view.fixed_page);
+  job.materials = look == specimen::PanelLook::kWhitened ? whitened_ : materials_;
   job.samples_per_pixel = samples;
   job.seed = seed;
   job.panel = number;

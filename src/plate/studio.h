@@ -37,8 +37,8 @@ class Studio {
   void set_up(double mm_per_pixel, bool exact);
 
   /// One picture. Not for several threads at once: it uses all of them itself.
-  transport::Film picture(const View& view, const transport::Camera& camera, int samples, std::uint64_t seed,
-                          std::uint32_t number, const transport::Progress& progress) const;
+  transport::Film picture(const View& view, specimen::PanelLook look, const transport::Camera& camera, int samples,
+                          std::uint64_t seed, std::uint32_t number, const transport::Progress& progress) const;
 
   const scene::Scene& scene() const { return *scene_; }
   const field::Field& field() const { return *field_; }
@@ -55,7 +55,7 @@ class Studio {
   std::unique_ptr<field::Field> field_;
   std::unique_ptr<trace::EmbreeSolid> solid_;
   std::vector<Vec3> points_;
-  transport::Materials materials_;
+  transport::Materials materials_, whitened_;
   double front_mm_ = 0.0, compile_seconds_ = 0.0;
 };
 

@@ -92,12 +92,26 @@ View make_view(ViewName name, double lip_rad, Coiling coiling, double free_azimu
                    ? fmt::format("view from azimuth {:g}°, elevation {:g}°", view.azimuth_deg, view.elevation_deg)
                    : stand.label;
   view.page_to_shell = page_frame(lip_rad, coiling, view.azimuth_deg, view.elevation_deg);
+  view.fixed_page = view.page_to_shell;
   view.cut = name == ViewName::kAxialSection;
   return view;
 }
 
-View make_view(const specimen::Panel& panel, double lip_rad, Coiling coiling) {
-  return make_view(panel.view.value, lip_rad, coiling, panel.azimuth_deg, panel.elevation_deg);
+View make_view(const specimen::Panel& panel, const specimen::Stereo& stereo, double lip_rad, Coiling coiling) {
+  View view = make_view(panel.view.value, lip_rad, coiling, panel.azimuth_deg, panel.elevation_deg);
+  if (panel.stereo) view.stereo_deg = stereo.angle_deg;
+  return view;
+}
+
+View eye_view(const View& pair, Eye eye) {
+  View view = pair;
+  const Turn half = turn(0.5 * pair.stereo_deg * (eye == Eye::kLeft ? -1.0 : 1.0));
+  const Frame& page = pair.page_to_shell;
+  view.page_to_shell.z = page.z * half.cosine + page.x * half.sine;
+  view.page_to_shell.x = page.x * half.cosine - page.z * half.sine;
+  view.label += eye == Eye::kLeft ? kLeftEye : kRightEye;
+  view.stereo_deg = 0.0;
+  return view;
 }
 
 }  // namespace whorl::plate

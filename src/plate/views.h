@@ -6,6 +6,7 @@
 #include "specimen/specimen.h"
 
 #include <string>
+#include <string_view>
 
 namespace whorl::plate {
 
@@ -24,6 +25,9 @@ struct View {
   double azimuth_deg = 0.0;    // 0 .. 360
   double elevation_deg = 0.0;  // -90 .. 90
   Frame page_to_shell;
+  /// The page to which light and cut are fixed: `page_to_shell`, but for one eye of a stereo pair that of the view between the eyes.
+  Frame fixed_page;
+  double stereo_deg = 0.0;  // angle between the eyes of a pair that is still to be parted; 0 for a single picture
   bool cut = false;  // the half with a positive page z (about the axis of coiling) is taken away
 };
 
@@ -45,7 +49,13 @@ Frame page_frame(double lip_rad, specimen::Coiling coiling, double azimuth_deg, 
 View make_view(specimen::ViewName name, double lip_rad, specimen::Coiling coiling, double free_azimuth_deg = 0.0,
                double free_elevation_deg = 0.0);
 
-/// The view that a panel of the scene file asks for.
-View make_view(const specimen::Panel& panel, double lip_rad, specimen::Coiling coiling);
+/// The view that a panel of the scene file asks for; a pair has the angle between its eyes.
+View make_view(const specimen::Panel& panel, const specimen::Stereo& stereo, double lip_rad, specimen::Coiling coiling);
+
+enum class Eye { kLeft, kRight };
+/// What one eye sees of a pair: the reader turned about the page's vertical by half the angle.
+View eye_view(const View& pair, Eye eye);
+/// What the label of an eye's view adds to that of its pair.
+inline constexpr std::string_view kLeftEye = " (left eye)", kRightEye = " (right eye)";
 
 }  // namespace whorl::plate

@@ -127,6 +127,11 @@ constexpr KeyRow kRows[] = {
     {"lamp", "strength", kNumber, {0.0, 10000.0}, "", "", "40.0", "radiance as a multiple of a matt white card facing the key light"},
     {"lamp", "temperature", kNumber, {1000.0, 20000.0}, "kelvin", "", "3200.0", "colour temperature"},
 
+    {"radiograph", "energy", kNumber, {10.0, 150.0}, "keV", "", "20.0", "photon energy"},
+
+    {"stereo", "angle", kNumber, {0.5, 20.0}, "degrees", "", "6.0", "between the two eyes' views"},
+    {"stereo", "spacing", kNumber, {20.0, 65.0}, "mm", "", "60.0", "of matching points on paper"},
+
     {"plate", "width", kNumber, {20.0, 1000.0}, "mm", "", "180.0", "width on paper"},
     {"plate", "resolution", kNumber, {72.0, 2400.0}, "pixels per inch", "", "600.0", "pixels per inch of paper"},
     {"plate", "background", kWord, kNothing, "", "white|black|clear", "\"white\"", "ground of the plate"},
@@ -138,6 +143,8 @@ constexpr KeyRow kRows[] = {
 
     {"panel", "view", kView, kNothing, "", "apertural|abapertural|right lateral|left lateral|apical|umbilical|axial section", kRequired, "from where the specimen is seen"},
     {"panel", "scale", kNumber, {0.1, 20.0}, "", "", "1.0", "enlargement over the common scale of the plate"},
+    {"panel", "look", kWord, kNothing, "", "natural|whitened|radiograph", "\"natural\"", "as the specimen is, coated for relief, or seen through"},
+    {"panel", "picture", kWord, kNothing, "", "single|stereo pair", "\"single\"", "one picture, or two for the two eyes"},
     {"panel.view", "azimuth", kNumber, kAnyTurn, "degrees", "", kRequired, "degrees the eye walks to its right round the upright shell, from the apertural view"},
     {"panel.view", "elevation", kNumber, {-90.0, 90.0}, "degrees", "", kRequired, "degrees the eye rises towards the apex"},
 };

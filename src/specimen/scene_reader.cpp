@@ -179,6 +179,13 @@ std::vector<Lamp> SceneReader::read_lamps() {
   return lamps;
 }
 
+Radiograph SceneReader::read_radiograph() { return {table("radiograph").number("energy")}; }
+
+Stereo SceneReader::read_stereo() {
+  const TableReader t = table("stereo");
+  return {t.number("angle"), t.number("spacing")};
+}
+
 Plate SceneReader::read_plate() {
   const TableReader t = table("plate");
   Plate plate;
@@ -206,6 +213,9 @@ Panel SceneReader::read_panel(const TableReader& t) {
     panel.view = t.word<ViewName>("view");
   }
   panel.scale = t.number("scale");
+  panel.look = t.word<PanelLook>("look");
+  const Stated<int> picture = t.word<int>("picture");
+  panel.stereo = {picture.value == 1, picture.where, picture.given};
   return panel;
 }
 
@@ -238,6 +248,8 @@ Specimen SceneReader::read() {
   specimen.colouring = read_colouring();
   specimen.light = read_light();
   specimen.lamps = read_lamps();
+  specimen.radiograph = read_radiograph();
+  specimen.stereo = read_stereo();
   specimen.plate = read_plate();
   return specimen;
 }

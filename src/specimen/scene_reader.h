@@ -35,6 +35,8 @@ class SceneReader {
   Colouring read_colouring();
   Light read_light();
   std::vector<Lamp> read_lamps();
+  Radiograph read_radiograph();
+  Stereo read_stereo();
   Plate read_plate();
   std::vector<Panel> read_panels();
   Panel read_panel(const TableReader& table);

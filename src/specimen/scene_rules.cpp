@@ -81,6 +81,15 @@ void check_colouring(const Specimen& s, ProblemList& problems) {
                  "[look] callus_breadth is stated without callus: state the colour of the callus as well");
 }
 
+void check_looks(const Plate& plate, ProblemList& problems) {
+  for (const Panel& panel : plate.panels) {
+    if (panel.look.value == PanelLook::kRadiograph && panel.view.value == ViewName::kAxialSection)
+      problems.add(panel.look.where,
+                   "[[panel]] look = \"radiograph\": rays go through the whole shell, which an axial section has cut; choose "
+                   "another view, or another look");
+  }
+}
+
 }  // namespace
 
 void check_rules(const Specimen& specimen, ProblemList& problems) {
@@ -89,6 +98,7 @@ void check_rules(const Specimen& specimen, ProblemList& problems) {
   if (specimen.lip.thickness_mm.given)
     check_thickness("[lip] thickness", specimen.lip.thickness_mm, specimen, problems);
   check_colouring(specimen, problems);
+  check_looks(specimen.plate, problems);
   check_page(specimen.plate, problems);
 }
 

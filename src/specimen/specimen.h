@@ -22,10 +22,14 @@ struct Stated {
 
 enum class Coiling { kDextral, kSinistral };
 enum class Mineral { kAragonite, kCalcite };
+/// g/cm3. Aragonite 2.93 (SSHADE database, mineral record Aragonite), calcite 2.7102 (Handbook of Mineralogy, sheet Calcite).
+constexpr double mineral_density(Mineral mineral) { return mineral == Mineral::kAragonite ? 2.93 : 2.7102; }
+
 enum class WallGrowth { kProportional, kConstant };
 enum class SizeKind { kShellHeight, kShellWidth, kApertureHeight, kApertureWidth };
 enum class Background { kWhite, kBlack, kClear };
 enum class Letters { kNone, kUpper, kLower, kLowerInBrackets };
+enum class PanelLook { kNatural, kWhitened, kRadiograph };
 enum class Quality { kDraft, kProof, kPrint };
 enum class ViewName { kApertural, kAbapertural, kRightLateral, kLeftLateral, kApical, kUmbilical, kAxialSection, kFree };
 
@@ -134,6 +138,16 @@ struct Panel {
   Stated<ViewName> view;
   double azimuth_deg = 0.0, elevation_deg = 0.0;  // for ViewName::kFree
   Stated<double> scale;                           // relative to the plate's common scale
+  Stated<PanelLook> look;
+  Stated<bool> stereo;                            // a pair of pictures
+};
+
+struct Stereo {
+  Stated<double> angle_deg, spacing_mm;  // between the eyes; between matching points on paper
+};
+
+struct Radiograph {
+  Stated<double> energy_kev;
 };
 
 struct Plate {
@@ -160,6 +174,8 @@ struct Specimen {
   Colouring colouring;
   Light light;
   std::vector<Lamp> lamps;
+  Radiograph radiograph;
+  Stereo stereo;
   Plate plate;
 };
 

@@ -2,6 +2,7 @@
 // From stated colours and gloss to surfaces.
 #include "transport/materials.h"
 
+#include "math/basis3f.h"
 #include "shaders_cpu/surface/fresnel.h"
 #include "shaders_cpu/tone/srgb.h"
 
@@ -13,6 +14,7 @@ Vec3f linear(const specimen::Colour& c) { return Vec3f(shaders_cpu::srgb_decode_
 }  // namespace
 
 shaders_cpu::CoatedDiffuse Materials::surface(const trace::Hit& hit) const noexcept {
+  if (whitening && hit.part != trace::Part::kCutFace) return {whitening->albedo(hit), nullptr};
   if (paint && hit.part != trace::Part::kCutFace) return {paint->albedo(hit), coat.get()};
   switch (hit.part) {
     case trace::Part::kInterior: return {interior, coat.get()};
@@ -37,6 +39,12 @@ Materials make_materials(const field::Field& field, const specimen::Specimen& sp
   m.coat = make_coat(specimen.identity.mineral, look.gloss.value);
   m.paint = std::make_shared<const Paint>(field, look, specimen.colouring);
   return m;
+}
+
+Materials whitened(Materials materials, const field::Field& field) {
+  materials.whitening = std::make_shared<const Whitening>(field);
+  materials.section_display = Vec3f(luminance(materials.section_display));
+  return materials;
 }
 
 }  // namespace whorl::transport

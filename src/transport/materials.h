@@ -6,6 +6,7 @@
 #include "specimen/specimen.h"
 #include "trace/surfaces.h"
 #include "transport/paint.h"
+#include "transport/whitening.h"
 
 #include <memory>
 
@@ -17,6 +18,7 @@ struct Materials {
   Vec3f section_display{0.5f};                           // a cut face prints as exactly this, unlit
   std::shared_ptr<const shaders_cpu::CoatAlbedo> coat;   // none: plain matt surfaces
 
+  std::shared_ptr<const Whitening> whitening;            // there: it hides all of the above but cut faces
   std::shared_ptr<const Paint> paint;                    // none: the colours above, even
 
   /// The surface at a hit as light sees it; a cut face counts as matt shell of its own colour.
@@ -28,5 +30,7 @@ std::shared_ptr<const shaders_cpu::CoatAlbedo> make_coat(specimen::Mineral miner
 
 /// Materials as a scene file states them; ornament takes the colour of the outside. The field must outlive them.
 Materials make_materials(const field::Field& field, const specimen::Specimen& specimen);
+/// The same shell coated for relief; cut faces keep their lightness.
+Materials whitened(Materials materials, const field::Field& field);
 
 }  // namespace whorl::transport

@@ -78,8 +78,8 @@ TEST_CASE("the lip is as thick as stated, and the tube nowhere thinner than its 
 
 TEST_CASE("the mass is the wall's volume times the mineral's published density", "[measure]") {
   // 2.93 g/cm3: SSHADE database, mineral record Aragonite; 2.7102: Handbook of Mineralogy, sheet Calcite (C28e, C28a).
-  CHECK(measure::mineral_density(specimen::Mineral::kAragonite) == Approx(2.93).margin(0.02));
-  CHECK(measure::mineral_density(specimen::Mineral::kCalcite) == Approx(2.7102).margin(0.0005));
+  CHECK(specimen::mineral_density(specimen::Mineral::kAragonite) == Approx(2.93).margin(0.02));
+  CHECK(specimen::mineral_density(specimen::Mineral::kCalcite) == Approx(2.7102).margin(0.0005));
   const measure::Measurements m = measured(test::Shell(test::tall_plan()));
   CHECK(m.mass_g.value == Approx(m.wall_volume.value * 1e-3 * 2.93));
 }

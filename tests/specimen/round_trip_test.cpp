@@ -122,6 +122,10 @@ TEST_CASE("Every key of a scene arrives with its value", "[specimen]") {
   CHECK(s.plate.panels[0].azimuth_deg == 30.0);
   CHECK(s.plate.panels[0].elevation_deg == 10.0);
   CHECK(s.plate.panels[0].scale == 2.0);
+  CHECK(s.plate.panels[0].look == PanelLook::kWhitened);
+  CHECK(s.plate.panels[0].stereo);
+  CHECK(s.radiograph.energy_kev == 35.0);
+  CHECK((s.stereo.angle_deg == 7.0 && s.stereo.spacing_mm == 62.0));
 }
 
 TEST_CASE("The scene with every key has a line for every row of the table of keys", "[specimen]") {
@@ -202,6 +206,8 @@ TEST_CASE("A scene of only what is required has the defaults of the format, none
   CHECK(s.light.softness_deg == 12.0);
   CHECK(s.light.fill == 0.35);
   CHECK(s.lamps.empty());
+  CHECK(s.radiograph.energy_kev == 20.0);
+  CHECK((s.stereo.angle_deg == 6.0 && s.stereo.spacing_mm == 60.0));
   CHECK(s.plate.width_mm == 180.0);
   CHECK(s.plate.resolution_ppi == 600.0);
   CHECK(s.plate.background == Background::kWhite);
@@ -216,6 +222,8 @@ TEST_CASE("A scene of only what is required has the defaults of the format, none
   for (std::size_t i = 0; i < 6; ++i) {
     CHECK(s.plate.panels[i].view == usual[i]);
     CHECK(s.plate.panels[i].scale == 1.0);
+    CHECK(s.plate.panels[i].look == PanelLook::kNatural);
+    CHECK_FALSE(s.plate.panels[i].stereo);
   }
 }
 

@@ -66,13 +66,17 @@ SceneText SceneText::with_every_key() {
       .set("lamp", "radius", "0.5")
       .set("lamp", "strength", "70")
       .set("lamp", "temperature", "2700");
+  scene.set("radiograph", "energy", "35");
+  scene.set("stereo", "angle", "7").set("stereo", "spacing", "62");
   scene.set("plate", "width", "85").set("plate", "resolution", "300").set("plate", "background", "\"clear\"");
   scene.set("plate", "columns", "2")
       .set("plate", "gap", "2.5")
       .set("plate", "letters", "\"(a)\"")
       .set("plate", "bar", "10.0");
   scene.set("plate", "quality", "\"draft\"");
-  return scene.set("panel", "view", "{ azimuth = 30.0, elevation = 10.0 }").set("panel", "scale", "2.0");
+  return scene.set("panel", "view", "{ azimuth = 30.0, elevation = 10.0 }").set("panel", "scale", "2.0")
+      .set("panel", "look", "\"whitened\"")
+      .set("panel", "picture", "\"stereo pair\"");
 }
 
 SceneText& SceneText::set(const std::string& table, const std::string& key, const std::string& value) {
