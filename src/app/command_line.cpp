@@ -28,14 +28,15 @@ class Parser {
     app_.get_formatter()->label("SUBCOMMAND", "COMMAND");
     app_.set_help_flag("-h,--help", "Print this help, or that of a command, and stop");
     app_.set_version_flag("--version", fmt::format("{} {}", kProgram, WHORLWRIGHT_VERSION), "Print the version and stop");
-    app_.footer("Exit codes: 0 done, 1 unexpected failure, 2 wrong usage, 3 invalid scene file,\n"
-                "6 a file could not be read or written, 75 incomplete: run the same command again.\n\n"
+    app_.footer("Exit codes: 0 done, 1 unexpected failure, 2 wrong usage, 3 invalid input file,\n"
+                "4 a fit failed, 6 a file could not be read or written, 75 incomplete: run the same command again.\n\n"
                 "Example:\n  whorlwright plate scenes/tall.toml -o out");
     add_common();
     add_plate();
     add_measure();
     add_check();
     add_turntable();
+    add_fit();
   }
 
   std::variant<Options, Answer> read(std::vector<std::string> words) {
@@ -111,13 +112,14 @@ class Parser {
     refuse(message);
   }
 
-  CLI::App* add(Command command, const char* name, const char* meaning, const char* details) {
+  CLI::App* add(Command command, const char* name, const char* meaning, const char* details, const char* place = "SCENE",
+                const char* input = "Scene file (TOML); - is standard input") {
     CLI::App* sub = app_.add_subcommand(name, meaning);
     sub->group("Commands");
     sub->fallthrough();
     sub->allow_extras();
     sub->footer(fmt::format("{}\nOptions of all commands: see '{} --help'.", details, kProgram));
-    sub->add_option("SCENE", options_.scene, "Scene file (TOML); - is standard input")->type_name("")->required();
+    sub->add_option(place, options_.scene, input)->type_name("")->required();
     commands_[sub] = command;
     return sub;
   }
@@ -189,6 +191,19 @@ class Parser {
               "Frames of the full turn (default 36)")->type_name("N");
     add_value(sub, "--slice", options_.slice, slice_of_job, "Render only part I of N, 1 <= I <= N")->type_name("I/N");
     add_quality(sub);
+  }
+
+  void add_fit() {
+    CLI::App* sub = add(Command::kFit, "fit", "Find the shell that measures what was measured on a specimen",
+                        "Prints the parameters with their errors, every measurement with its residual, and a verdict, and\n"
+                        "writes a scene file for 'plate' with a report, NAME.fit.json, beside it. Of a table of many specimens\n"
+                        "it prints a row each, comma-separated; -o then names a folder. Exit code 4, and no scene, where the\n"
+                        "measurements do not fit or do not fix the growth.\n\n"
+                        "Example:\n  whorlwright fit scenes/measured/morwenia_broken.toml -o out/morwenia.toml\n",
+                        "MEASUREMENTS", "Measurement file (TOML or CSV); - is standard input");
+    add_value(sub, "-o", options_.fitted_scene, non_empty("a file"), "Scene file to write, or a folder for many specimens")
+        ->type_name("SCENE");
+    sub->add_flag("--json", options_.json, "Print the report as JSON");
   }
 
   CLI::App app_;

@@ -12,5 +12,6 @@ int plate_command(const Options& options, Progress& progress);
 int measure_command(const Options& options, Progress& progress);
 int check_command(const Options& options, Progress& progress);
 int turntable_command(const Options& options, Progress& progress);
+int fit_command(const Options& options, Progress& progress);
 
 }  // namespace whorl::app

@@ -11,7 +11,7 @@
 
 namespace whorl::app {
 
-enum class Command { kPlate, kMeasure, kCheck, kTurntable };
+enum class Command { kPlate, kMeasure, kCheck, kTurntable, kFit };
 
 /// Part `part` of `of` equal parts of a job, 1 <= part <= of.
 struct Slice {
@@ -20,7 +20,8 @@ struct Slice {
 
 struct Options {
   Command command = Command::kCheck;
-  std::string scene;                            // a path, or "-" for standard input
+  std::string scene;                            // a path, or "-" for standard input; of 'fit', the measurement file
+  std::string fitted_scene;                     // where 'fit' writes: a scene file, or a folder for many
   std::filesystem::path out = ".";              // folder that receives the files
   std::optional<specimen::Quality> quality;     // stands before the scene's own
   std::optional<std::string> only_panel;        // its letter, its number or its view's name, as typed

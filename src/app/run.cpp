@@ -38,6 +38,7 @@ int perform(const Options& options) {
     case Command::kMeasure: return measure_command(options, progress);
     case Command::kCheck: return check_command(options, progress);
     case Command::kTurntable: return turntable_command(options, progress);
+    case Command::kFit: return fit_command(options, progress);
   }
   return static_cast<int>(ExitCode::kUnexpected);
 }

@@ -11,7 +11,7 @@ constexpr double kLeastLnW = 1e-3;
 
 // Bounds are the scene file's, or what no shell exceeds. The plausible width is that of the shells in Raup's block diagram.
 constexpr ParameterRow kRows[kParameterCount] = {
-    {"size", "distance of the outer margin from the axis at the lip, mm", -6.0, 8.0, 1.0},
+    {"radius", "distance of the outer margin from the axis at the lip, mm", -6.0, 8.0, 1.0},
     {"whorls", "turns from the pole to the lip", 1.0, 40.0, 4.0},
     {"W", "whorl expansion per turn", kLeastLnW, 13.8, 0.7},
     {"trend", "change of ln W in a whorl", -2.0, 2.0, 0.1},

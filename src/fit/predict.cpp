@@ -30,9 +30,9 @@ double suture_depth_at(const Form& form, double theta) {
   return suture ? suture->z : kNotMeasurable;
 }
 
+// Not measurable where the last whorl hides the spire, so that no suture shows.
 double last_whorl_height(const Form& form, double suture_theta) {
-  const double base = base_depth(form, end_of(form)), suture = suture_depth_at(form, suture_theta);
-  return base - (std::isnan(suture) ? apex_depth(form, end_of(form)) : suture);
+  return base_depth(form, end_of(form)) - suture_depth_at(form, suture_theta);
 }
 
 double between_sutures(const Form& form, double theta, bool along_axis) {

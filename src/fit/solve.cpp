@@ -2,6 +2,8 @@
 // Ceres' trust region with bounds behind a plain interface; starts by a Halton sequence with the size solved in closed form.
 #include "fit/solve.h"
 
+#include "fit/statistics.h"
+
 #include <ceres/ceres.h>
 
 #include <algorithm>
@@ -62,44 +64,47 @@ bool is_length(const specimen::Reading& reading) {
   return specimen::row_of(reading.definition).dimension == specimen::Dimension::kLength;
 }
 
-// Every length is in proportion to the size: the best one for a shape in closed form. Twice, since stages that are given by a
-// diameter move with the size.
-bool set_size(const Task& task, Trial& trial) {
-  for (int round = 0; round < 2; ++round) {
+bool stage_by_diameter(const Task& task) {
+  return std::any_of(task.readings.begin(), task.readings.end(), [](const specimen::Reading& reading) {
+    return reading.stage.kind == specimen::GrowthStage::Kind::kAtDiameter;
+  });
+}
+
+// Sets the size that suits a shape best, in closed form since every length is in proportion to it, and returns the misfit, with
+// errors no smaller than 1 % of the value so that a start counts as near by its shape. Infinite where there is no such shell.
+double fitted_size_misfit(const Task& task, Trial& trial) {
+  const bool size_free = task.free[static_cast<std::size_t>(Parameter::kSize)];
+  double misfit = std::numeric_limits<double>::infinity();
+  // Twice where stages are given by a diameter: they move with the size.
+  for (int round = 0; round < (stage_by_diameter(task) ? 2 : 1); ++round) {
     Eigen::VectorXd predicted;
-    if (!predictions(task, trial, predicted)) return false;
+    if (!predictions(task, trial, predicted)) return std::numeric_limits<double>::infinity();
+    const auto weight_of = [&](const specimen::Reading& reading) {
+      const double floor = 0.01 * std::max(std::abs(reading.value), is_length(reading) ? 0.0 : 1.0);
+      return 1.0 / std::max(task.sigma(reading), floor);
+    };
     double cross = 0.0, square = 0.0;
     for (std::size_t i = 0; i < task.readings.size(); ++i) {
-      const specimen::Reading& reading = task.readings[i];
-      if (!is_length(reading)) continue;
-      const double weight = 1.0 / std::max(task.sigma(reading), 0.01 * reading.value);
-      const double model = predicted[static_cast<Eigen::Index>(i)];
-      cross += weight * weight * model * reading.value;
+      if (!is_length(task.readings[i])) continue;
+      const double weight = weight_of(task.readings[i]), model = predicted[static_cast<Eigen::Index>(i)];
+      cross += weight * weight * model * task.readings[i].value;
       square += weight * weight * model * model;
     }
-    if (square <= 0.0 || cross <= 0.0) return true;
-    if (task.free[static_cast<std::size_t>(Parameter::kSize)]) at(trial.values, Parameter::kSize) += std::log(cross / square);
+    const double factor = size_free && square > 0.0 && cross > 0.0 ? cross / square : 1.0;
+    if (size_free) at(trial.values, Parameter::kSize) += std::log(factor);
+    misfit = 0.0;
+    for (std::size_t i = 0; i < task.readings.size(); ++i) {
+      const specimen::Reading& reading = task.readings[i];
+      const double model = predicted[static_cast<Eigen::Index>(i)] * (is_length(reading) ? factor : 1.0);
+      misfit += std::pow((model - reading.value) * weight_of(reading), 2);
+    }
   }
-  return true;
+  return misfit;
 }
 
-// Misfit with errors no smaller than 1 % of the value, so that a start counts as near by its shape.
-double coarse_misfit(const Task& task, const Trial& trial) {
-  Eigen::VectorXd predicted;
-  if (!predictions(task, trial, predicted)) return std::numeric_limits<double>::infinity();
-  double sum = 0.0;
-  for (std::size_t i = 0; i < task.readings.size(); ++i) {
-    const specimen::Reading& reading = task.readings[i];
-    const double floor = 0.01 * std::max(std::abs(reading.value), is_length(reading) ? 0.0 : 1.0);
-    const double sigma = std::max(task.sigma(reading), floor);
-    sum += std::pow((predicted[static_cast<Eigen::Index>(i)] - reading.value) / sigma, 2);
-  }
-  return sum;
-}
-
-bool same_place(const Task& task, const Trial& a, const Trial& b) {
+bool near(const Task& task, const Trial& a, const Trial& b, double plausible_widths) {
   const Bounds bounds = bounds_of(task);
-  return ((packed(task, a) - packed(task, b)).array().abs() < 0.02 * bounds.plausible.array()).all();
+  return ((packed(task, a) - packed(task, b)).array().abs() < plausible_widths * bounds.plausible.array()).all();
 }
 
 }  // namespace
@@ -135,30 +140,43 @@ std::optional<Solution> solve_from(const Task& task, const Trial& start) {
   return solution;
 }
 
-std::vector<Solution> solve(const Task& task, const Trial& known) {
-  constexpr int kShapes = 160;
-  constexpr std::size_t kStarts = 5;
+namespace {
+
+struct Search {
+  int shapes;
+  std::size_t starts;
+  double apart;  // starts differ by so much in some number, in plausible widths: else they end in one minimum
+};
+
+std::vector<Solution> search(const Task& task, const Trial& known, const Search& how) {
   struct Candidate {
     double misfit;
     Trial trial;
   };
   std::vector<Candidate> candidates;
-  for (int index = 0; index <= kShapes; ++index) {
+  for (int index = 0; index <= how.shapes; ++index) {
     Trial trial = known;
     if (index > 0) spread(task, trial, index);  // the first start is what is known
-    if (!set_size(task, trial)) continue;
-    const double misfit = coarse_misfit(task, trial);
+    const double misfit = fitted_size_misfit(task, trial);
     if (std::isfinite(misfit)) candidates.push_back({misfit, trial});
   }
-  const std::size_t starts = std::min(kStarts, candidates.size());
-  std::partial_sort(candidates.begin(), candidates.begin() + static_cast<std::ptrdiff_t>(starts), candidates.end(),
-                    [](const Candidate& a, const Candidate& b) { return a.misfit < b.misfit; });
+  std::sort(candidates.begin(), candidates.end(), [](const Candidate& a, const Candidate& b) { return a.misfit < b.misfit; });
+  std::vector<Trial> starts;
+  for (const Candidate& candidate : candidates) {
+    if (starts.size() == how.starts) break;
+    const bool new_place = std::none_of(starts.begin(), starts.end(), [&](const Trial& other) {
+      return near(task, candidate.trial, other, how.apart);
+    });
+    if (new_place) starts.push_back(candidate.trial);
+  }
+  constexpr double kSame = 0.02;
   std::vector<Solution> found;
-  for (std::size_t i = 0; i < starts; ++i) {
-    const auto solution = solve_from(task, candidates[i].trial);
+  for (const Trial& start : starts) {
+    const auto solution = solve_from(task, start);
     if (!solution) continue;
-    const auto twin = std::find_if(found.begin(), found.end(),
-                                   [&](const Solution& other) { return same_place(task, other.trial, solution->trial); });
+    const auto twin = std::find_if(found.begin(), found.end(), [&](const Solution& other) {
+      return near(task, other.trial, solution->trial, kSame);
+    });
     if (twin == found.end()) {
       found.push_back(*solution);
     } else if (solution->chi_square < twin->chi_square) {
@@ -167,6 +185,17 @@ std::vector<Solution> solve(const Task& task, const Trial& known) {
   }
   std::sort(found.begin(), found.end(), [](const Solution& a, const Solution& b) { return a.chi_square < b.chi_square; });
   return found;
+}
+
+}  // namespace
+
+std::vector<Solution> solve(const Task& task, const Trial& known) {
+  constexpr Search kFirst{200, 6, 0.35}, kThorough{1500, 24, 0.2};
+  constexpr double kPoor = 3.0;  // normal deviate of the misfit: a minimum that may not be the lowest
+  std::vector<Solution> found = search(task, known, kFirst);
+  const int freedom = static_cast<int>(task.readings.size()) - static_cast<int>(task.free_count());
+  const bool good = !found.empty() && deviate_of(found.front().chi_square, std::max(freedom, 1)) < kPoor;
+  return good ? found : search(task, known, kThorough);
 }
 
 }  // namespace whorl::fit

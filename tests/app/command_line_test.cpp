@@ -81,7 +81,7 @@ TEST_CASE("A slice is a part of a whole", "[app]") {
 TEST_CASE("Help exists for the program and for each command, with an example", "[app]") {
   CHECK(contains(answer_to({"--help"}), "Example:\n  whorlwright plate "));
   CHECK(answer_to({"-h"}) == answer_to({"--help"}));
-  for (const std::string command : {"plate", "measure", "check", "turntable"}) {
+  for (const std::string command : {"plate", "measure", "check", "turntable", "fit"}) {
     INFO(command);
     CHECK(contains(answer_to({"--help"}), "\n  " + command));
     const std::string help = answer_to({command, "--help"});
@@ -107,7 +107,7 @@ TEST_CASE("Each wrong command line gets one line that names the fault and the wa
   const std::vector<Wrong> all{
       {{}, "a command is missing", program},
       {{""}, "there is no command ''", program},
-      {{"plaet", "a"}, "there is no command 'plaet'; there are plate, measure, check, turntable; perhaps 'plate'", program},
+      {{"plaet", "a"}, "there is no command 'plaet'; there are plate, measure, check, turntable, fit; perhaps 'plate'", program},
       {{"--quite"}, "there is no option '--quite'; perhaps '--quiet' was meant", program},
       {{"plate"}, "SCENE is required", plate},
       {{"plate", "a", "b"}, "'b' is one word too many", plate},
@@ -121,6 +121,7 @@ TEST_CASE("Each wrong command line gets one line that names the fault and the wa
       {{"plate", "a", "--threads", "2.5"}, "--threads: '2.5' is no whole number from 0 to 1024", plate},
       {{"plate", "a", "--threads", "4000000000"}, "--threads: '4000000000' is no whole number", plate},
       {{"plate", "a", "--seed", "18446744073709551616"}, "--seed: '18446744073709551616' is no whole number", plate},
+      {{"fit"}, "MEASUREMENTS is required", "see 'whorlwright fit --help'"},
       {{"turntable", "a"}, "-o is required", "see 'whorlwright turntable --help'"},
       {{"turntable", "a", "-o", "d", "--frames", "0"}, "--frames: '0' is no whole number from 1 to 3600",
        "see 'whorlwright turntable --help'"},

@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: Apache-2.0
 // The scenes that come with the program, and the figures that the published one rests on.
+#include "specimen/measurement_file.h"
 #include "specimen/scene_file.h"
 #include "support/catch.h"
 
@@ -26,9 +27,19 @@ std::vector<double> second_column(const std::string& file) {
 TEST_CASE("Every scene that comes with the program is without faults", "[specimen]") {
   int count = 0;
   for (const auto& entry : std::filesystem::recursive_directory_iterator(WHORL_SCENE_DIR)) {
-    if (entry.path().extension() != ".toml") continue;
+    if (entry.path().extension() != ".toml" || entry.path().parent_path().filename() == "measured") continue;
     CAPTURE(entry.path().string());
     CHECK_NOTHROW(read_scene_file(entry.path().string()));
+    ++count;
+  }
+  CHECK(count >= 6);
+}
+
+TEST_CASE("Every measurement file that comes with the program is without faults", "[specimen]") {
+  int count = 0;
+  for (const auto& entry : std::filesystem::directory_iterator(std::string(WHORL_SCENE_DIR) + "/measured")) {
+    CAPTURE(entry.path().string());
+    CHECK_NOTHROW(read_measurement_file(entry.path().string()));
     ++count;
   }
   CHECK(count >= 6);
