@@ -32,7 +32,7 @@ struct Done {
 Done fit_one(const MeasuredSpecimen& measured, const Options& options, Progress& progress) {
   progress.step("fitting");
   Done done{fit::fit_specimen(measured), {}, {}};
-  if (done.fit.verdict == fit::Verdict::kNotFixed || done.fit.readings.empty()) return done;
+  if (done.fit.verdict == fit::Verdict::kNotFixed || done.fit.parameters.empty()) return done;
   std::string text = fit::scene_text(done.fit, measured, options.scene);
   try {
     const specimen::Specimen specimen = specimen::parse_scene(text, "fitted shell");

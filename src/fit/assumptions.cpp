@@ -46,6 +46,17 @@ void hold_stated(Setting& setting, const specimen::Held& held) {
   stated(Parameter::kS, held.S, true);
 }
 
+// Points lie closer than their errors are independent: so many tell all, and take less time.
+specimen::TracedOutline thinned(specimen::TracedOutline outline) {
+  constexpr std::size_t kMost = 120;
+  const std::size_t count = outline.points.size();
+  if (count <= kMost) return outline;
+  std::vector<specimen::TracedOutline::Point> kept;
+  for (std::size_t i = 0; i < kMost; ++i) kept.push_back(outline.points[i * count / kMost]);
+  outline.points = std::move(kept);
+  return outline;
+}
+
 double step_of_series(const specimen::MeasuredSpecimen& measured, std::size_t series) {
   for (const Reading& reading : measured.readings)
     if (reading.series == static_cast<int>(series)) return reading.standard_error;
@@ -105,7 +116,10 @@ Setting first_setting(const specimen::MeasuredSpecimen& measured) {
   if (all_planispiral(task) && !measured.held.T)
     hold(setting, Parameter::kT, 0.0, State::kImplied, "planispiral: all lengths are those of a shell coiled in one plane");
 
-  if (std::none_of(task.readings.begin(), task.readings.end(), is_length))
+  task.sinistral = measured.identity.coiling.value == specimen::Coiling::kSinistral;
+  for (const specimen::TracedOutline& outline : measured.outlines) task.outlines.push_back(thinned(outline));
+  setting.trial.placements.resize(task.outlines.size());
+  if (task.outlines.empty() && std::none_of(task.readings.begin(), task.readings.end(), is_length))
     hold(setting, Parameter::kSize, std::log(10.0), State::kAssumed, "unknown: no length was measured");
 
   task.scatter.assign(measured.series.size(), 0.0);
@@ -159,10 +173,6 @@ std::optional<Parameter> to_give_up(const Knowledge& knowledge) {
       if (knowledge.indices[k] == static_cast<std::size_t>(parameter) &&
           std::abs(knowledge.weakest_direction[static_cast<Eigen::Index>(k)]) > kTakesPart * largest)
         return parameter;
-  // The direction is that of size, W or a scale: give up whatever of the others is still free.
-  for (const Parameter parameter : kOrder)
-    for (const std::size_t index : knowledge.indices)
-      if (index == static_cast<std::size_t>(parameter)) return parameter;
   return std::nullopt;
 }
 

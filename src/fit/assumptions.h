@@ -22,7 +22,8 @@ Setting first_setting(const specimen::MeasuredSpecimen& measured);
 /// Holds one parameter at what is usual. False where it is one that a shell cannot do without (size, W).
 void assume(Setting& setting, Parameter parameter);
 
-/// The parameter to give up so that a direction becomes known; empty where only size and expansion are left.
+/// The parameter to give up so that a direction becomes known; empty where the direction is that of size and expansion, without
+/// which there is no shell.
 std::optional<Parameter> to_give_up(const Knowledge& knowledge);
 
 /// Turns that bring the first whorl of the tube down to a hundredth of the last.

@@ -112,6 +112,26 @@ void fill_readings(double tolerance, Fit& fit) {
   }
 }
 
+// An outline fits if most of its points lie on the form's; what is broken or slipped may lie off.
+void fill_outlines(Fit& fit) {
+  constexpr double kMost = 0.6, kOfRadius = 0.02;
+  const Form form = *form_of(fit.trial.values, fit.task.fixed);
+  for (std::size_t i = 0; i < fit.task.outlines.size(); ++i) {
+    std::vector<double> distances;
+    outline_distances(form, fit.task.outlines[i], fit.trial.placements[i], fit.task.sinistral, distances);
+    const double near = std::max(kMostSigmas * fit.task.outlines[i].standard_error, kOfRadius * std::exp(at(fit.trial.values, Parameter::kSize)));
+    for (double& distance : distances) distance = std::abs(distance);
+    OutlineResult result;
+    result.points = distances.size();
+    result.on_outline = static_cast<std::size_t>(std::count_if(distances.begin(), distances.end(), [&](double d) { return d <= near; }));
+    std::nth_element(distances.begin(), distances.begin() + static_cast<std::ptrdiff_t>(distances.size() / 2), distances.end());
+    result.median_distance = distances[distances.size() / 2];
+    result.tilt_deg = degrees(fit.trial.placements[i].tilt);
+    result.fits = static_cast<double>(result.on_outline) >= kMost * static_cast<double>(result.points);
+    fit.outlines.push_back(result);
+  }
+}
+
 void remark_on_correlations(Fit& fit) {
   constexpr double kAlike = 0.98;
   const Eigen::MatrixXd& c = fit.knowledge.covariance;
@@ -158,9 +178,10 @@ std::string shape_words(const Trial& trial) {
 void judge(const Settled& settled, Fit& fit) {
   const double deviate = deviate_of(fit.chi_square, fit.degrees_of_freedom);
   const bool all_fit = std::all_of(fit.readings.begin(), fit.readings.end(), [](const ReadingResult& r) { return r.fits; });
+  const bool outlines_fit = std::all_of(fit.outlines.begin(), fit.outlines.end(), [](const OutlineResult& o) { return o.fits; });
   const bool regular = std::all_of(fit.task.scatter.begin(), fit.task.scatter.end(), [](double s) { return s <= kMostScatter; });
   const bool trend = fit.task.free[static_cast<std::size_t>(Parameter::kTrend)];
-  fit.verdict = !all_fit || !regular ? Verdict::kDoesNotFit : trend ? Verdict::kFitsWithTrend : Verdict::kFits;
+  fit.verdict = !all_fit || !regular || !outlines_fit ? Verdict::kDoesNotFit : trend ? Verdict::kFitsWithTrend : Verdict::kFits;
   if (!regular)
     fit.remarks.push_back(fmt::format("A series scatters about the law by more than {:.0f} %: the shell does not follow it.", 100.0 * kMostScatter));
   if (fit.degrees_of_freedom == 0)
@@ -193,7 +214,7 @@ Fit fit_specimen(const MeasuredSpecimen& measured) {
     fit.series.push_back(summary_of(series));
     fit.series.back().index = fit.series.size() - 1;
   }
-  if (fit.task.readings.size() < 2) {
+  if (fit.task.readings.size() < 2 && fit.task.outlines.empty()) {
     fit.remarks.push_back("One measurement alone fixes nothing but the size. For the expansion add the width of another whorl, or "
                           "shell_height axial, shell_width across_axis, aperture_height axial and last_whorl_height flank.");
     return fit;
@@ -211,7 +232,7 @@ Fit fit_specimen(const MeasuredSpecimen& measured) {
   fit.knowledge = best.knowledge;
   fit.alternatives = alternatives_of(best);
   fit.chi_square = best.solution.chi_square;
-  fit.degrees_of_freedom = static_cast<int>(fit.task.readings.size()) - static_cast<int>(fit.task.free_count());
+  fit.degrees_of_freedom = static_cast<int>(fit.task.residual_count()) - static_cast<int>(fit.task.free_count());
   fit.remarks = best.setting.remarks;
   for (std::size_t i = 0; i < fit.series.size(); ++i) fit.series[i].scatter = fit.task.scatter[i];
   if (deviate_of(fit.chi_square, fit.degrees_of_freedom) > kUnlikely && fit.degrees_of_freedom > 0)
@@ -220,6 +241,7 @@ Fit fit_specimen(const MeasuredSpecimen& measured) {
   const bool errors_estimated = fit.inflation > 1.0 || estimated;
   fill_parameters(best.setting, errors_estimated ? student95(fit.degrees_of_freedom) : kNormal95, fit);
   fill_readings(measured.tolerance, fit);
+  fill_outlines(fit);
   const bool no_size = best.setting.state[static_cast<std::size_t>(Parameter::kSize)] == State::kAssumed;
   if (no_size) {
     fit.verdict = Verdict::kNotFixed;

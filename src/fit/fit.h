@@ -52,6 +52,13 @@ struct SeriesResult {
   double scatter = 0.0;               // estimated or stated, as a fraction
 };
 
+struct OutlineResult {
+  std::size_t points = 0, on_outline = 0;  // used; within three errors, or 2 % of the radius
+  double median_distance = 0.0;            // mm
+  double tilt_deg = 0.0;                   // of the axis in the picture
+  bool fits = true;
+};
+
 struct IndexResult {
   std::string name, meaning;
   double of_shell = 0.0, of_shell_error = 0.0;  // of the fitted shell
@@ -79,6 +86,7 @@ struct Fit {
   std::vector<ParameterResult> parameters;
   std::vector<ReadingResult> readings;
   std::vector<SeriesResult> series;
+  std::vector<OutlineResult> outlines;
   std::vector<IndexResult> indices;
   std::vector<ModelResult> models;
   std::vector<std::string> remarks;  // what the user must know, a sentence each

@@ -85,7 +85,10 @@ std::vector<std::string> would_fix(const Task& task, const Trial& trial, Paramet
   if (usual_step == 0.0) usual_step = 0.002 * largest;
 
   const std::optional<Form> form = form_of(trial.values, task.fixed);
-  if (!form) return {};
+  Eigen::MatrixXd known_slopes;
+  const Eigen::VectorXd x = packed(wider, trial);
+  const Bounds bounds = bounds_of(wider);
+  if (!form || !jacobian(wider, trial, x, known_slopes)) return {};
   struct Offer {
     double left;  // uncertainty of the parameter with this measure, in plausible widths
     std::string name;
@@ -96,11 +99,16 @@ std::vector<std::string> would_fix(const Task& task, const Trial& trial, Paramet
     if (!std::isfinite(value) || value == 0.0) return;
     for (const Reading& known : task.readings)
       if (known.definition == definition && known.stage.kind == stage.kind && known.stage.value == stage.value) return;
-    Task tried = wider;
-    tried.readings.push_back(candidate_of(definition, stage, value, usual_step));
-    Knowledge knowledge;
-    if (!knowledge_at(tried, trial, knowledge)) return;
-    const double left = std::sqrt(knowledge.covariance(place, place)) / row_of(parameter).plausible;
+    // The candidate's own row of derivatives, beside those that are known: outlines play no part in it.
+    Task alone = wider;
+    alone.readings = {candidate_of(definition, stage, value, usual_step)};
+    for (specimen::TracedOutline& outline : alone.outlines) outline.points.clear();
+    Eigen::MatrixXd own_slopes;
+    if (!jacobian(alone, trial, x, own_slopes)) return;
+    Eigen::MatrixXd scaled(known_slopes.rows() + 1, known_slopes.cols());
+    scaled << known_slopes, own_slopes.row(0);
+    scaled *= bounds.plausible.asDiagonal();
+    const double left = std::sqrt(inverse_of_normal(scaled)(place, place));
     offers.push_back({left, std::move(name)});
   };
   for (const specimen::DefinitionRow& row : specimen::all_definitions()) {

@@ -67,7 +67,7 @@ Settled choose_model(Settled simplest, std::vector<ModelResult>& models) {
     variants.push_back({"an expansion of its own for the depth", {kDepthRate}});
     variants.push_back({"expansions of their own for distance and depth", {kDistanceRate, kDepthRate}});
   }
-  const std::size_t count = simplest.setting.task.readings.size();
+  const std::size_t count = simplest.setting.task.residual_count();
   const auto entry = [&](const char* name, const Settled& settled) {
     const std::size_t k = settled.setting.task.free_count();
     const double aicc = corrected_aic(minus_two_ln_likelihood(settled.setting.task, settled.solution.chi_square), k, count);

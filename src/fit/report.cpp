@@ -121,6 +121,9 @@ std::string to_table(const Fit& fit, const specimen::MeasuredSpecimen& measured,
   }
   if (!fit.indices.empty()) text += "\n" + index_lines(fit);
   if (!fit.series.empty()) text += "\n" + series_lines(fit, measured);
+  for (const OutlineResult& outline : fit.outlines)
+    text += fmt::format("\n  outline: {} of {} points on it, median distance {:.3g} mm, axis leans by {:.1f} degrees{}\n", outline.on_outline,
+                        outline.points, outline.median_distance, outline.tilt_deg, outline.fits ? "" : "  misfit");
   if (const std::string models = model_lines(fit); !models.empty()) text += "\n" + models;
   if (!fit.remarks.empty()) text += "\n";
   for (const std::string& remark : fit.remarks) text += "  " + remark + "\n";

@@ -36,7 +36,7 @@ ordered_json correlation_json(const Fit& fit) {
   ordered_json json{{"names", ordered_json::array()}, {"matrix", ordered_json::array()}};
   const Eigen::MatrixXd& c = fit.knowledge.covariance;
   for (const std::size_t index : fit.knowledge.indices)
-    json["names"].push_back(index < kParameterCount ? row_of(static_cast<Parameter>(index)).name : "scale of a series");
+    json["names"].push_back(index < kParameterCount ? row_of(static_cast<Parameter>(index)).name : "scale of a series or place of an outline");
   for (Eigen::Index i = 0; i < c.rows(); ++i) {
     ordered_json row = ordered_json::array();
     for (Eigen::Index j = 0; j < c.cols(); ++j) row.push_back(c(i, j) / std::sqrt(c(i, i) * c(j, j)));
@@ -95,6 +95,10 @@ nlohmann::ordered_json to_json(const Fit& fit, const specimen::MeasuredSpecimen&
     json["series"].push_back({{"least_squares_W", s.least_squares_W}, {"rms_of_ln", s.rms_of_ln}, {"end_to_end_W", s.end_to_end_W},
                               {"first_ratio", s.first_ratio}, {"last_ratio", s.last_ratio}, {"spread_of_ratios", s.spread_of_ratios},
                               {"mean_spiral_angle_deg", s.mean_spiral_angle}, {"scatter", s.scatter}});
+  json["outlines"] = ordered_json::array();
+  for (const OutlineResult& o : fit.outlines)
+    json["outlines"].push_back({{"points", o.points}, {"on_outline", o.on_outline}, {"median_distance", o.median_distance},
+                                {"tilt_deg", o.tilt_deg}, {"fits", o.fits}});
   json["models"] = ordered_json::array();
   for (const ModelResult& model : fit.models)
     json["models"].push_back({{"name", model.name}, {"parameters", model.parameters}, {"chi_square", model.chi_square},

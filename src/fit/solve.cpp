@@ -15,7 +15,7 @@ namespace {
 class Cost : public ceres::CostFunction {
  public:
   Cost(const Task& task, const Trial& base) : task_(task), base_(base) {
-    set_num_residuals(static_cast<int>(task.readings.size()));
+    set_num_residuals(static_cast<int>(task.residual_count()));
     mutable_parameter_block_sizes()->push_back(static_cast<int>(task.free_count()));
   }
 
@@ -70,6 +70,28 @@ bool stage_by_diameter(const Task& task) {
   });
 }
 
+// Places the outlines by their boxes, which also gives the size where no length does, and returns their misfit, each point's
+// bounded, since boxes are no more than near where parts are missing.
+double placed_outlines_misfit(const Task& task, Trial& trial) {
+  constexpr double kCoarse = 0.02, kMost = 9.0;  // standard error as a fraction of the shell's radius; squared errors a point
+  const bool length = std::any_of(task.readings.begin(), task.readings.end(), is_length);
+  std::optional<Form> form = form_of(trial.values, task.fixed);
+  if (form && !length && task.free[static_cast<std::size_t>(Parameter::kSize)]) {
+    at(trial.values, Parameter::kSize) += std::log(boxed_scale(*form, task.outlines.front()));
+    form = form_of(trial.values, task.fixed);
+  }
+  if (!form) return std::numeric_limits<double>::infinity();
+  double misfit = 0.0;
+  std::vector<double> distances;
+  for (std::size_t i = 0; i < task.outlines.size(); ++i) {
+    trial.placements[i] = boxed_placement(*form, task.outlines[i], task.sinistral);
+    outline_distances(*form, task.outlines[i], trial.placements[i], task.sinistral, distances);
+    const double sigma = std::max(task.outlines[i].standard_error, kCoarse * std::exp(at(trial.values, Parameter::kSize)));
+    for (const double distance : distances) misfit += std::min(std::pow(distance / sigma, 2), kMost);
+  }
+  return misfit;
+}
+
 // Sets the size that suits a shape best, in closed form since every length is in proportion to it, and returns the misfit, with
 // errors no smaller than 1 % of the value so that a start counts as near by its shape. Infinite where there is no such shell.
 double fitted_size_misfit(const Task& task, Trial& trial) {
@@ -99,7 +121,7 @@ double fitted_size_misfit(const Task& task, Trial& trial) {
       misfit += std::pow((model - reading.value) * weight_of(reading), 2);
     }
   }
-  return misfit;
+  return task.outlines.empty() ? misfit : misfit + placed_outlines_misfit(task, trial);
 }
 
 bool near(const Task& task, const Trial& a, const Trial& b, double plausible_widths) {
@@ -124,8 +146,9 @@ std::optional<Solution> solve_from(const Task& task, const Trial& start) {
   }
   ceres::Solver::Options options;
   options.linear_solver_type = ceres::DENSE_QR;
-  options.max_num_iterations = 80;
-  options.function_tolerance = 1e-10;
+  // The nearest place of an outline jumps from whorl to whorl: the last digits of its misfit are not smooth.
+  options.max_num_iterations = task.outlines.empty() ? 80 : 30;
+  options.function_tolerance = task.outlines.empty() ? 1e-10 : 1e-5;
   options.gradient_tolerance = 1e-12;
   options.parameter_tolerance = 1e-10;
   options.max_num_consecutive_invalid_steps = 12;
@@ -141,6 +164,19 @@ std::optional<Solution> solve_from(const Task& task, const Trial& start) {
 }
 
 namespace {
+
+// From a start that may be far off: outlines pull with all their points at first, then those far off are let go by and by.
+std::optional<Solution> solve_from_afar(const Task& task, const Trial& start) {
+  if (task.outlines.empty()) return solve_from(task, start);
+  Task softer = task;
+  std::optional<Solution> solution = Solution{start, 0.0, false};
+  for (const double factor : {16.0, 4.0, 1.0}) {
+    softer.robust_from = factor * task.robust_from;
+    solution = solve_from(softer, solution->trial);
+    if (!solution) return std::nullopt;
+  }
+  return solution;
+}
 
 struct Search {
   int shapes;
@@ -172,7 +208,7 @@ std::vector<Solution> search(const Task& task, const Trial& known, const Search&
   constexpr double kSame = 0.02;
   std::vector<Solution> found;
   for (const Trial& start : starts) {
-    const auto solution = solve_from(task, start);
+    const auto solution = solve_from_afar(task, start);
     if (!solution) continue;
     const auto twin = std::find_if(found.begin(), found.end(), [&](const Solution& other) {
       return near(task, other.trial, solution->trial, kSame);
@@ -190,10 +226,11 @@ std::vector<Solution> search(const Task& task, const Trial& known, const Search&
 }  // namespace
 
 std::vector<Solution> solve(const Task& task, const Trial& known) {
-  constexpr Search kFirst{200, 6, 0.35}, kThorough{1500, 24, 0.2};
+  constexpr Search kFirst{200, 6, 0.35}, kThorough{1500, 24, 0.2}, kOfOutlines{200, 4, 0.5};
+  if (!task.outlines.empty()) return search(task, known, kOfOutlines);  // many points: few wrong minima, and each start takes longer
   constexpr double kPoor = 3.0;  // normal deviate of the misfit: a minimum that may not be the lowest
   std::vector<Solution> found = search(task, known, kFirst);
-  const int freedom = static_cast<int>(task.readings.size()) - static_cast<int>(task.free_count());
+  const int freedom = static_cast<int>(task.residual_count()) - static_cast<int>(task.free_count());
   const bool good = !found.empty() && deviate_of(found.front().chi_square, std::max(freedom, 1)) < kPoor;
   return good ? found : search(task, known, kThorough);
 }

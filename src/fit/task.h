@@ -2,6 +2,7 @@
 // One fitting task: readings with their weights, which parameters are free, and the residuals of a trial.
 #pragma once
 
+#include "fit/outline_distance.h"
 #include "fit/parameters.h"
 #include "specimen/measurement_file.h"
 
@@ -16,6 +17,7 @@ namespace whorl::fit {
 struct Trial {
   Values values{};
   std::vector<double> series_scale;
+  std::vector<Placement> placements;  // of the traced outlines
 };
 
 struct Task {
@@ -24,6 +26,13 @@ struct Task {
   std::vector<double> scatter;               // natural irregularity of each series, as a fraction of the value
   std::array<bool, kParameterCount> free{};
   std::vector<bool> scale_free;              // of each series
+  std::vector<specimen::TracedOutline> outlines;
+  bool sinistral = false;                    // matters to outlines only
+  /// Distances of outline points count as they are up to about so many standard errors; beyond, by their logarithm, so that a
+  /// broken edge or a slip of the tracer does not pull (Cauchy's loss).
+  double robust_from = 2.0;
+
+  std::size_t residual_count() const;
 
   std::size_t free_count() const;
   /// Standard error of a reading with the scatter of its series.

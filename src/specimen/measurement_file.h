@@ -43,6 +43,23 @@ struct Series {
   diagnostics::Position where;
 };
 
+/// Points traced on a picture, those marked as missing left out.
+struct TracedOutline {
+  enum class Kind {
+    kSilhouette,  // of the shell in a side view, the axis upright
+    kSection,     // of one whorl in the half-plane through the axis, which lies to the left of it
+  };
+  struct Point {
+    double x, y;  // mm from any origin; x to the right, y towards the apex
+  };
+  Kind kind = Kind::kSilhouette;
+  double azimuth_deg = 0.0;  // of the view: degrees the eye walks to its right from the apertural view
+  GrowthStage stage;         // of a section
+  std::vector<Point> points;
+  double standard_error = 0.0;  // of a point, mm
+  diagnostics::Position where;
+};
+
 /// Parameters that the user states rather than fits.
 struct Held {
   std::optional<double> whorls, W, D, T, S, start, roll_deg, columella;
@@ -53,6 +70,7 @@ struct MeasuredSpecimen {
   Held held;
   std::vector<Reading> readings;  // those of series too
   std::vector<Series> series;
+  std::vector<TracedOutline> outlines;
   double tolerance = 0.02;  // misfit that still counts as fitting, as a fraction of the value
   diagnostics::Position where;
 };

@@ -57,6 +57,14 @@ constexpr KeyRow kRows[] = {
     {"series", "error", kNumber, kPositive, "", "", kNoDefault, "standard error in place of a step"},
     {"series", "scatter", kNumber, {0.0, 50.0}, "%", "", "(estimated from the series)", "natural irregularity from whorl to whorl"},
     {"series", "behind_lip", kNumber, kStage, "whorls", "", "0.0", "whorls between the lip and the value nearest to it"},
+
+    {"outline", "kind", kWord, kNothing, "", "silhouette|section", kRequired, "what was traced: the shell's silhouette in a side view, or one whorl section"},
+    {"outline", "view", kWord, kNothing, "", "apertural|abapertural|right lateral|left lateral", "\"apertural\"", "from where, the axis upright; of a silhouette"},
+    {"outline", "file", kText, kLine, "", "", kRequired, "table of the points, beside the measurement file: columns x, y and, if wanted, missing"},
+    {"outline", "scale", kNumber, kPositive, "", "", "1.0", "length of one unit of the points, in the unit of the file: mm a pixel"},
+    {"outline", "y_axis", kWord, kNothing, "", "up|down", "\"up\"", "whether y grows towards the apex, or away from it as in pictures"},
+    {"outline", "error", kNumber, kPositive, "", "", kRequired, "standard error of a point, in the unit of the file"},
+    {"outline", "behind_lip", kNumber, kStage, "whorls", "", "0.0", "stage of growth of a section: whorls back from the lip"},
 };
 
 }  // namespace

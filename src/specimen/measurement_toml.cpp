@@ -3,6 +3,7 @@
 #include "specimen/measurement_toml.h"
 
 #include "specimen/measurement_rows.h"
+#include "specimen/outline_points.h"
 #include "specimen/table_reader.h"
 #include "specimen/toml_text.h"
 
@@ -18,7 +19,8 @@ constexpr std::size_t kMostRows = 400;
 
 class Reader {
  public:
-  Reader(const toml::table& root, ProblemList& problems) : root_(root), problems_(problems) {}
+  Reader(const toml::table& root, std::string source, ProblemList& problems)
+      : root_(root), source_(std::move(source)), problems_(problems) {}
 
   MeasuredSpecimen read() {
     const TableReader top = reader(&root_, "", kTop);
@@ -31,7 +33,8 @@ class Reader {
     read_held();
     read_measurements();
     read_series();
-    if (specimen_.readings.empty() && problems_.empty())
+    read_outlines();
+    if (specimen_.readings.empty() && specimen_.outlines.empty() && problems_.empty())
       problems_.add(kTop, "no measurement: state each in a table [[measurement]], or successive whorls in a [[series]]");
     finish_specimen(specimen_, bracketed_mm_, problems_);
     return std::move(specimen_);
@@ -148,7 +151,31 @@ class Reader {
     }
   }
 
+  void read_outlines() {
+    for (const TableReader& t : list("outline")) {
+      enum class Axis { kUp, kDown };
+      TracedOutline outline;
+      outline.where = t.where();
+      outline.kind = t.word<TracedOutline::Kind>("kind").value;
+      constexpr double kAzimuths[] = {0.0, 180.0, 90.0, 270.0};  // in the order of the words
+      enum class SideView { kApertural, kAbapertural, kRightLateral, kLeftLateral };
+      outline.azimuth_deg = kAzimuths[static_cast<std::size_t>(t.word<SideView>("view").value)];
+      const double unit = millimetres_in(defaults_.unit).value();
+      const double scale = unit * t.number("scale").value;
+      outline.standard_error = unit * t.number("error").value;
+      const bool down = t.word<Axis>("y_axis").value == Axis::kDown;
+      const Stated<double> behind = t.number("behind_lip");
+      if (outline.kind == TracedOutline::Kind::kSection) outline.stage = {GrowthStage::Kind::kBehindLip, behind.value};
+      const Stated<std::string> file = t.text("file");
+      if (file.value.empty()) continue;
+      for (TracedOutline::Point point : read_outline_points(source_, file, problems_))
+        outline.points.push_back({scale * point.x, (down ? -scale : scale) * point.y});
+      specimen_.outlines.push_back(std::move(outline));
+    }
+  }
+
   const toml::table& root_;
+  std::string source_;
   ProblemList& problems_;
   RowDefaults defaults_;
   MeasuredSpecimen specimen_;
@@ -159,7 +186,7 @@ class Reader {
 
 MeasuredSpecimen read_measurement_toml(const std::string& text, const std::string& source, ProblemList& problems) {
   const toml::table root = parse_toml(text, source);
-  return Reader(root, problems).read();
+  return Reader(root, source, problems).read();
 }
 
 }  // namespace whorl::specimen

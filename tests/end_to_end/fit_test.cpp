@@ -1,12 +1,14 @@
 // SPDX-License-Identifier: Apache-2.0
 // The command 'fit' as a user runs it: from measurements to a scene that 'check' accepts, and its exit codes.
 #include "fit/report.h"
+#include "specimen/measurement_file.h"
 #include "specimen/scene_file.h"
 #include "support/catch.h"
 #include "support/program.h"
 
 #include <nlohmann/json.hpp>
 
+#include <cmath>
 #include <filesystem>
 
 using namespace whorl;
@@ -126,4 +128,33 @@ TEST_CASE("of many specimens each gets a row, the failures are told at the end, 
   CHECK(specimen::read_scene_file((folder.path() / "fitted" / "KSM_1.toml").string()).identity.coiling.value == specimen::Coiling::kSinistral);
   CHECK(fs::exists(folder.path() / "fitted" / "KSM_2.fit.json"));
   CHECK_FALSE(fs::exists(folder.path() / "fitted" / "KSM_3.toml"));
+}
+
+TEST_CASE("an outline is read in pixels, points marked as missing left out, and its faults are told by line", "[end_to_end]") {
+  const ScratchFolder folder;
+  const std::string head = "format = 1\n[specimen]\nname = \"x\"\ncoiling = \"dextral\"\n[[outline]]\nkind = \"section\"\nfile = \"ring.csv\"\n"
+                           "scale = 0.01\ny_axis = \"down\"\nerror = 0.02\n";
+  const std::string file = folder.with_file("ring.toml", head);
+  std::string points = "x,y,missing\n";
+  for (int i = 0; i < 40; ++i) {
+    const double angle = 0.157079632679 * i;
+    points += std::to_string(900.0 + 300.0 * std::cos(angle)) + "," + std::to_string(400.0 + 450.0 * std::sin(angle)) +
+              (i % 4 == 0 ? ",yes\n" : ",\n");
+  }
+  folder.with_file("ring.csv", points);
+  const specimen::MeasurementFile read = specimen::read_measurement_file(file);
+  const auto& outline = read.specimens.at(0).outlines.at(0);
+  REQUIRE(outline.points.size() == 30);
+  CHECK(outline.points[0].x == Approx(9.0 + 3.0 * std::cos(0.157079632679)));
+  CHECK(outline.points[0].y == Approx(-4.0 - 4.5 * std::sin(0.157079632679)));
+  // The section alone gives its shape and size, not the growth.
+  const Ran ran = run_program({"fit", file, "--quiet"});
+  CHECK(ran.code == 4);
+  CHECK(contains(ran.out, "30 of 30 points on it"));
+  CHECK(contains(ran.out, "\n  S                     1.5000 "));
+
+  folder.with_file("ring.csv", "x,y\n1,2\n3;4\n");
+  CHECK(contains(run_program({"fit", file}).err, "ring.toml:7:8: [[outline]] file = \"ring.csv\", line 3: \"3;4\" is no point"));
+  std::filesystem::remove(folder.path() / "ring.csv");
+  CHECK(run_program({"fit", file}).code == 6);
 }
