@@ -4,10 +4,7 @@
 
 #include "math/parallel.h"
 #include "shaders_cpu/surface/fresnel.h"
-#include "shaders_cpu/surface/ggx.h"
-
-#include <utility>
-#include <vector>
+#include "shaders_cpu/surface/visible_normals.h"
 
 namespace whorl::shaders_cpu {
 namespace {
@@ -15,9 +12,14 @@ namespace {
 /// Stands for grazing incidence, where the integrand has a limit but no value.
 constexpr double kLeastCosine = 1e-6;
 
-struct Rule {
-  std::vector<double> place, weight;  // on [0, 1]
-};
+double integrate(double cosine, double index, double alpha, const Rule& rule) {
+  double sum = 0.0;
+  over_visible_normals(cosine, alpha, rule,
+                       [&](double facing, double weight) { sum += weight * fresnel_dielectric(facing, index); });
+  return sum;
+}
+
+}  // namespace
 
 /// Gauss-Legendre nodes by Newton's method on the Legendre polynomial.
 Rule gauss_legendre(int order) {
@@ -41,47 +43,6 @@ Rule gauss_legendre(int order) {
   }
   return rule;
 }
-
-/// F G2/G1 for the visible normal at a place of the unit disc; below zero (the mirrored direction's height) where the facet
-/// mirrors below the horizon.
-double mirrored(const Vec3& wo, double lambda_o, double index, double alpha, double radius, double angle) {
-  const Vec3 h = ggx_visible_normal(wo, alpha, radius, angle);
-  const double facing = wo.dot(h);
-  const Vec3 wi = h * (2.0 * facing) - wo;
-  if (wi.z <= 0.0) return std::min(wi.z, -1e-300);
-  return fresnel_dielectric(facing, index) * (1.0 + lambda_o) / (1.0 + lambda_o + ggx_lambda(wi, alpha));
-}
-
-/// Mean of F G2/G1 over the visible normals. The disc of Heitz's method is halved by its mirror symmetry and cut where the
-/// integrand has kinks: along its diameter, and along each radius at the horizon. The radius runs as a sine, which takes
-/// away the infinite slope at the rim.
-double integrate(double cosine, double index, double alpha, const Rule& rule) {
-  const Vec3 wo(std::sqrt(1.0 - cosine * cosine), 0.0, cosine);
-  const double lambda_o = ggx_lambda(wo, alpha);
-  double sum = 0.0;
-  for (std::size_t a = 0; a < rule.place.size(); ++a)
-    for (int half = 0; half < 2; ++half) {
-      const double angle = 0.5 * kPi * (rule.place[a] - half);
-      const auto at = [&](double s) { return mirrored(wo, lambda_o, index, alpha, std::sin(0.5 * kPi * s), angle); };
-      double low = 0.0, high = 1.0;
-      const bool seen = at(low) > 0.0, crosses = seen != (at(high) > 0.0);
-      for (int step = 0; crosses && step < 40; ++step) {
-        const double middle = 0.5 * (low + high);
-        ((at(middle) > 0.0) == seen ? low : high) = middle;
-      }
-      const double cut = crosses ? low : 1.0;
-      for (std::size_t r = 0; r < rule.place.size(); ++r)
-        for (const auto& [from, to] : {std::pair{0.0, cut}, std::pair{cut, 1.0}}) {
-          const double s = from + (to - from) * rule.place[r];
-          // 2 r dr over two quarter turns of four, mirrored: the weights sum to 1.
-          const double weight = (to - from) * rule.weight[r] * rule.weight[a] * 0.25 * kPi * std::sin(kPi * s);
-          if (weight > 0.0) sum += weight * std::max(0.0, at(s));
-        }
-    }
-  return sum;
-}
-
-}  // namespace
 
 double coat_albedo_quadrature(double cosine, double index, double alpha, int order) {
   return integrate(cosine, index, alpha, gauss_legendre(order));

@@ -7,6 +7,8 @@
 #include "shaders_cpu/surface/fresnel.h"
 #include "shaders_cpu/surface/ggx.h"
 
+#include <algorithm>
+
 namespace whorl::shaders_cpu {
 namespace {
 constexpr float kInvPi = static_cast<float>(1.0 / kPi);
@@ -18,7 +20,20 @@ double alpha_of_gloss(double gloss) {
 }
 
 SurfaceView::SurfaceView(const CoatedDiffuse& surface, const Vec3f& wo) noexcept
-    : wo_(wo), body_(surface.albedo * kInvPi), coat_(surface.coat) {
+    : wo_(wo),
+      body_(surface.albedo * kInvPi),
+      coat_(surface.coat),
+      nacre_(surface.nacre),
+      nacre_scale_(surface.nacre_scale) {
+  if (nacre_) {
+    const Vec3f share = nacre_->at(wo.z, nacre_scale_), mean = nacre_->mean(nacre_scale_);
+    const float coat_light = luminance(share), body_light = luminance((Vec3f(1.0f) - share) * surface.albedo);
+    coat_chance_ = coat_light / std::max(coat_light + body_light, 1e-6f);
+    lambda_ = ggx_lambda(wo, nacre_->alpha());
+    const Vec3f kept = Vec3f(1.0f) - mean;  // a perfect mirror has no body to see
+    body_ *= (Vec3f(1.0f) - share) / Vec3f(std::max(kept.x, 1e-4f), std::max(kept.y, 1e-4f), std::max(kept.z, 1e-4f));
+    return;
+  }
   if (!coat_) return;
   const float share = coat_->at(wo.z);
   const float body_share = (1.0f - share) * luminance(surface.albedo);
@@ -30,14 +45,15 @@ SurfaceView::SurfaceView(const CoatedDiffuse& surface, const Vec3f& wo) noexcept
 Reflection SurfaceView::reflect(const Vec3f& wi) const noexcept {
   if (wi.z <= 0.0f) return {};
   const float body_pdf = cosine_pdf(wi.z);
-  if (!coat_) return {body_, body_pdf};
-  const float alpha = coat_->alpha();
+  if (!coat_ && !nacre_) return {body_, body_pdf};
+  const float alpha = nacre_ ? nacre_->alpha() : coat_->alpha();
   const Vec3f h = unit(wo_ + wi);
   const float mirrored = ggx_density(h, alpha) / (4.0f * wo_.z);
-  const float specular = fresnel_dielectric(wo_.dot(h), coat_->index()) * mirrored /
-                         ((1.0f + lambda_ + ggx_lambda(wi, alpha)) * wi.z);
-  return {body_ * (1.0f - coat_->at(wi.z)) + Vec3f(specular),
-          coat_chance_ * mirrored / (1.0f + lambda_) + (1.0f - coat_chance_) * body_pdf};
+  const float shadowed = mirrored / ((1.0f + lambda_ + ggx_lambda(wi, alpha)) * wi.z);
+  const float pdf = coat_chance_ * mirrored / (1.0f + lambda_) + (1.0f - coat_chance_) * body_pdf;
+  if (nacre_)
+    return {body_ * (Vec3f(1.0f) - nacre_->at(wi.z, nacre_scale_)) + nacre_->facet(wo_.dot(h), nacre_scale_) * shadowed, pdf};
+  return {body_ * (1.0f - coat_->at(wi.z)) + Vec3f(fresnel_dielectric(wo_.dot(h), coat_->index()) * shadowed), pdf};
 }
 
 Scatter SurfaceView::scatter(float choice, float u1, float u2) const noexcept {
@@ -45,7 +61,7 @@ Scatter SurfaceView::scatter(float choice, float u1, float u2) const noexcept {
     const Vec3f wi = cosine_direction(u1, u2);
     return {wi, reflect(wi)};
   }
-  const Vec3f h = ggx_visible_normal(wo_, coat_->alpha(), std::sqrt(u1), static_cast<float>(kTwoPi) * u2);
+  const Vec3f h = ggx_visible_normal(wo_, nacre_ ? nacre_->alpha() : coat_->alpha(), std::sqrt(u1), static_cast<float>(kTwoPi) * u2);
   const Vec3f wi = unit(h * (2.0f * wo_.dot(h)) - wo_);
   return {wi, reflect(wi)};
 }

@@ -1,5 +1,5 @@
 // SPDX-License-Identifier: Apache-2.0
-// Matt shell under a rough clear coat: what light does at one place of the shell's surface.
+// Matt shell under a rough clear coat, or under nacre: what light does at one place of the shell's surface.
 //
 // f = F D G2 / (4 cos_i cos_o)  +  albedo (1 - E(cos_i)) (1 - E(cos_o)) / (pi (1 - E_mean)),
 // E the coat's directional albedo. Light that the coat turns away never reaches the body, in either direction, so
@@ -9,6 +9,7 @@
 
 #include "math/vec.h"
 #include "shaders_cpu/surface/coat_albedo.h"
+#include "shaders_cpu/surface/nacre.h"
 
 namespace whorl::shaders_cpu {
 
@@ -22,6 +23,8 @@ double alpha_of_gloss(double gloss);
 struct CoatedDiffuse {
   Vec3f albedo{0.0f};                // of the body, linear, 0 .. 1
   const CoatAlbedo* coat = nullptr;  // none: a plain matt (Lambertian) surface
+  const NacreCoat* nacre = nullptr;  // in place of the clear coat: F is that of the layers, and E and E_mean are colours
+  float nacre_scale = 1.0f;          // thickness of the tablets, relative to the stated one
 };
 
 struct Reflection {
@@ -50,6 +53,8 @@ class SurfaceView {
  private:
   Vec3f wo_, body_;                 // body_: everything of the body's BRDF that does not depend on wi
   const CoatAlbedo* coat_;
+  const NacreCoat* nacre_;
+  float nacre_scale_;
   float lambda_ = 0.0f;             // Smith's Lambda of wo
   float coat_chance_ = 0.0f;        // of drawing from the coat: its share of the light that leaves towards wo
 };

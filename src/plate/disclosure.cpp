@@ -61,6 +61,8 @@ std::vector<Basis> basis_of(const specimen::Specimen& s) {
   add("look.interior", "interior colour", s.look.interior, kLook);
   add("look.section", "colour of cut faces", s.look.section, kLook);
   add("look.gloss", "gloss", s.look.gloss, kLook);
+  add("look.exterior_finish", "surface of the outside", s.look.exterior_finish, kLook);
+  add("look.interior_finish", "surface of the inside", s.look.interior_finish, kLook);
   if (s.look.lip) add("look.lip", "colour of the lip", *s.look.lip, kLook);
   if (s.look.callus) add("look.callus", "colour of the callus", *s.look.callus, kLook);
   const auto painted = [&basis](const char* key, const char* words, bool stated) {

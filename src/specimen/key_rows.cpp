@@ -68,6 +68,17 @@ constexpr KeyRow kRows[] = {
     {"look", "callus", kColour, kNothing, "", "", kNoDefault, "colour of the callus: earlier whorl and columella within the aperture"},
     {"look", "callus_breadth", kNumber, {0.0, 100.0}, "mm", "", "0.0", "how far the callus spreads out of the aperture"},
 
+    {"look", "exterior_finish", kWord, kNothing, "", "plain|polished|glazed|periostracum|nacre", "\"plain\"", "surface of the outside"},
+    {"look", "interior_finish", kWord, kNothing, "", "plain|polished|glazed|periostracum|nacre", "\"plain\"", "surface of the inside"},
+    {"look", "periostracum", kColour, kNothing, "", "", "\"#a5814a\"", "colour of white shell under its periostracum"},
+
+    {"nacre", "tablet", kNumber, {50.0, 1500.0}, "nm", "", "440.0", "mean thickness of a tablet"},
+    {"nacre", "spread", kNumber, {0.0, 300.0}, "nm", "", "20.0", "standard deviation of the tablets' thickness"},
+    {"nacre", "sheet", kNumber, {0.0, 200.0}, "nm", "", "8.0", "thickness of the organic sheet between tablets"},
+    {"nacre", "sheet_index", kNumber, {1.3, 1.7}, "", "", "1.5", "refractive index of the sheets"},
+    {"nacre", "layers", kWhole, {1.0, 1000.0}, "", "", "30", "tablets that lie on one another"},
+    {"nacre", "drift", kNumber, {0.0, 0.25}, "", "", "0.05", "greatest difference of the thickness over the shell, as a share"},
+
     {"band", "at", kNumber, kAround, "degrees", "", kRequired, "direction of the band's middle"},
     {"band", "width", kNumber, {0.5, 360.0}, "degrees", "", kRequired, "width round the section"},
     {"band", "colour", kColour, kNothing, "", "", kRequired, "colour at full strength"},

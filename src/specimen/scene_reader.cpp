@@ -163,7 +163,16 @@ Look SceneReader::read_look(const Lip& lip) {
   look.lip_breadth_mm = t.number("lip_breadth", lip.thickness_mm);
   look.callus = t.optional_colour("callus");
   look.callus_breadth_mm = t.number("callus_breadth");
+  look.exterior_finish = t.word<Finish>("exterior_finish");
+  look.interior_finish = t.word<Finish>("interior_finish");
+  look.periostracum = t.colour("periostracum");
   return look;
+}
+
+Nacre SceneReader::read_nacre() {
+  const TableReader t = table("nacre");
+  return {t.number("tablet"), t.number("spread"), t.number("sheet"), t.number("sheet_index"), t.whole("layers"),
+          t.number("drift")};
 }
 
 Light SceneReader::read_light() {
@@ -245,6 +254,7 @@ Specimen SceneReader::read() {
   specimen.wall = read_wall();
   specimen.lip = read_lip(specimen.wall);
   specimen.look = read_look(specimen.lip);
+  specimen.nacre = read_nacre();
   specimen.colouring = read_colouring();
   specimen.light = read_light();
   specimen.lamps = read_lamps();

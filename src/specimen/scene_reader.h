@@ -32,6 +32,7 @@ class SceneReader {
   Wall read_wall();
   Lip read_lip(const Wall& wall);
   Look read_look(const Lip& lip);
+  Nacre read_nacre();
   Colouring read_colouring();
   Light read_light();
   std::vector<Lamp> read_lamps();

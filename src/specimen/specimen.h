@@ -29,6 +29,7 @@ enum class WallGrowth { kProportional, kConstant };
 enum class SizeKind { kShellHeight, kShellWidth, kApertureHeight, kApertureWidth };
 enum class Background { kWhite, kBlack, kClear };
 enum class Letters { kNone, kUpper, kLower, kLowerInBrackets };
+enum class Finish { kPlain, kPolished, kGlazed, kPeriostracum, kNacre };
 enum class PanelLook { kNatural, kWhitened, kRadiograph };
 enum class Quality { kDraft, kProof, kPrint };
 enum class ViewName { kApertural, kAbapertural, kRightLateral, kLeftLateral, kApical, kUmbilical, kAxialSection, kFree };
@@ -86,6 +87,14 @@ struct Look {
   Stated<double> gloss;
   std::optional<Stated<Colour>> lip, callus;
   Stated<double> lip_breadth_mm, callus_breadth_mm;
+  Stated<Finish> exterior_finish, interior_finish;
+  Stated<Colour> periostracum;  // of white shell under it
+};
+
+struct Nacre {
+  Stated<double> tablet_nm, spread_nm, sheet_nm, sheet_index;
+  Stated<int> layers;
+  Stated<double> drift;
 };
 
 /// Colour laid down along the growing edge, from `onset` to `end` in whorls; growth is counted along growth lines.
@@ -171,6 +180,7 @@ struct Specimen {
   Wall wall;
   Lip lip;
   Look look;
+  Nacre nacre;
   Colouring colouring;
   Light light;
   std::vector<Lamp> lamps;

@@ -2,6 +2,7 @@
 // Lays pattern, callus and lip over the ground colour, in this order.
 #include "transport/paint.h"
 
+#include "shaders_cpu/surface/nacre.h"
 #include "shaders_cpu/tone/srgb.h"
 
 #include <algorithm>
@@ -87,6 +88,18 @@ double Paint::behind_rim(const Vec3& p, double theta) const noexcept {
   const double rho = std::hypot(p.x, p.y);
   const double lead = growth::front_lead(s.front.tan_inclination, s.law.depth, {rho, p.z});
   return (s.law.theta_lip + lead - theta) * rho * s.front.cos_inclination + s.front.rim_radius;
+}
+
+bool Paint::on_lip(const trace::Hit& hit) const noexcept {
+  const double theta = growth_angle(hit);
+  return !hit.parietal && theta > field_.scene().law.theta_lip - kPi && behind_rim(Vec3(hit.position), theta) < lip_breadth_;
+}
+
+float Paint::drift(const trace::Hit& hit) const noexcept {
+  double theta, around;
+  field_.coordinates(Vec3(hit.position), hit.passage, theta, around);
+  constexpr std::uint64_t kSeed = 1;
+  return shaders_cpu::nacre_drift(theta / kTwoPi, static_cast<float>(degrees(around)), kSeed);
 }
 
 Vec3f Paint::outside(const trace::Hit& hit) const noexcept {

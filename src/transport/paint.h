@@ -23,6 +23,11 @@ class Paint {
   /// Albedo of the matt body at a hit on outside, inside or ornament.
   Vec3f albedo(const trace::Hit& hit) const noexcept;
 
+  /// Whether a place belongs to the lip: less than its breadth behind the rim.
+  bool on_lip(const trace::Hit& hit) const noexcept;
+  /// Drift of the nacre's thickness there, -1 .. 1.
+  float drift(const trace::Hit& hit) const noexcept;
+
   /// How far behind the rim's crest a place of this growth angle lies, mm; negative before it.
   double behind_rim(const Vec3& p, double theta) const noexcept;
   /// Share of the callus in the colour at a hit, 0 .. 1.

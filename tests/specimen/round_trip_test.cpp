@@ -73,6 +73,11 @@ TEST_CASE("Every key of a scene arrives with its value", "[specimen]") {
   CHECK(s.look.lip_breadth_mm == 1.25);
   CHECK(same(*s.look.callus, 7, 8, 9));
   CHECK(s.look.callus_breadth_mm == 1.5);
+  CHECK(s.look.exterior_finish == Finish::kPeriostracum);
+  CHECK(s.look.interior_finish == Finish::kNacre);
+  CHECK(same(s.look.periostracum, 12, 13, 14));
+  CHECK((s.nacre.tablet_nm == 410.0 && s.nacre.spread_nm == 30.0 && s.nacre.sheet_nm == 12.0));
+  CHECK((s.nacre.sheet_index == 1.55 && s.nacre.layers == 40 && s.nacre.drift == 0.125));
 
   const auto is_pigment = [](const Pigment& p, int red) {
     return same(p.colour, red, 10, 11) && p.opacity == 0.625 && p.fade == 0.375 && p.onset == 1.5 && p.end == 6.5;
@@ -199,6 +204,9 @@ TEST_CASE("A scene of only what is required has the defaults of the format, none
   CHECK_FALSE((s.look.lip || s.look.callus));
   CHECK(s.look.lip_breadth_mm == s.lip.thickness_mm.value);
   CHECK(s.look.callus_breadth_mm == 0.0);
+  CHECK(s.look.exterior_finish == Finish::kPlain);
+  CHECK(s.look.interior_finish == Finish::kPlain);
+  CHECK((s.nacre.tablet_nm == 440.0 && s.nacre.spread_nm == 20.0 && s.nacre.layers == 30));
   CHECK((s.colouring.bands.empty() && s.colouring.flames.empty()));
   CHECK((s.colouring.spots.empty() && s.colouring.patterns.empty()));
   CHECK(s.light.azimuth_deg == 135.0);

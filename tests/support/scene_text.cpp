@@ -39,7 +39,12 @@ SceneText SceneText::with_every_key() {
   scene.set("look", "lip", "\"#040506\"")
       .set("look", "lip_breadth", "1.25")
       .set("look", "callus", "\"#070809\"")
-      .set("look", "callus_breadth", "1.5");
+      .set("look", "callus_breadth", "1.5")
+      .set("look", "exterior_finish", "\"periostracum\"")
+      .set("look", "interior_finish", "\"nacre\"")
+      .set("look", "periostracum", "\"#0c0d0e\"");
+  scene.set("nacre", "tablet", "410").set("nacre", "spread", "30").set("nacre", "sheet", "12").set("nacre", "layers", "40");
+  scene.set("nacre", "sheet_index", "1.55").set("nacre", "drift", "0.125");
   const auto pigment = [&scene](const char* table, const char* red) {
     scene.set(table, "colour", fmt::format("\"#{}0a0b\"", red)).set(table, "opacity", "0.625").set(table, "fade", "0.375");
     scene.set(table, "onset", "1.5").set(table, "end", "6.5");
