@@ -43,6 +43,17 @@ struct Scatter {
 class SurfaceView {
  public:
   SurfaceView(const CoatedDiffuse& surface, const Vec3f& wo) noexcept;
+
+  /// The face of a translucent wall: what its coat does not reflect goes in. The albedo is that of a thin skin of pigment, which
+  /// light passes on its way in and on its way out, each time losing the square root of it.
+  static SurfaceView face(const CoatedDiffuse& surface, const Vec3f& wo) noexcept;
+  /// The same face seen by light that comes out of the wall, spread as by frosted glass. With the white body's BRDF in its place it closes
+  /// the balance: all light that leaves the wall leaves the coat.
+  static SurfaceView leaving(const CoatedDiffuse& surface) noexcept;
+  /// Whether a draw by `choice` goes into the wall, and the weight of one that does.
+  bool enters(float choice) const noexcept { return body_chance_ == 0.0f && choice >= coat_chance_; }
+  Vec3f entering() const noexcept { return inward_; }
+
   const Vec3f& wo() const noexcept { return wo_; }
 
   /// BRDF and sampling density; both zero for wi.z <= 0.
@@ -56,6 +67,9 @@ class SurfaceView {
   const NacreCoat* nacre_;
   float nacre_scale_;
   float lambda_ = 0.0f;             // Smith's Lambda of wo
+  Vec3f inward_{0.0f};              // weight of light that goes into the wall
+  bool leaving_ = false;
+  float body_chance_ = 1.0f;        // of drawing from the body
   float coat_chance_ = 0.0f;        // of drawing from the coat: its share of the light that leaves towards wo
 };
 

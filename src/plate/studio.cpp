@@ -70,6 +70,8 @@ void Studio::set_up(double mm_per_pixel, bool exact) {
   const double start = now();
   const double tolerance = std::min(kOfAPixel * mm_per_pixel, kOfTheHeight * scene_->height_mm);
   solid_ = std::make_unique<trace::EmbreeSolid>(*field_, trace::SolidOptions{tolerance, exact});
+  if (const auto medium = transport::make_medium(specimen_))
+    materials_.wall = std::make_shared<const transport::TranslucentWall>(*solid_, *medium);
   compile_seconds_ += now() - start;
 }
 
@@ -100,6 +102,7 @@ transport::Film Studio::picture(const View& view, specimen::PanelLook look, cons
   job.camera = camera;
   job.lighting = transport::light_page(specimen_.light, lamps, view.fixed_page);
   job.materials = look == specimen::PanelLook::kWhitened ? whitened_ : materials_;
+  if (view.cut) job.materials.wall.reset();
   job.samples_per_pixel = samples;
   job.seed = seed;
   job.panel = number;

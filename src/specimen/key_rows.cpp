@@ -79,6 +79,10 @@ constexpr KeyRow kRows[] = {
     {"nacre", "layers", kWhole, {1.0, 1000.0}, "", "", "30", "tablets that lie on one another"},
     {"nacre", "drift", kNumber, {0.0, 0.25}, "", "", "0.05", "greatest difference of the thickness over the shell, as a share"},
 
+    {"translucence", "mean_free_path", kNumber, {0.0, 100.0}, "mm", "", "0.0", "way of light in the wall between two events; 0 for opaque shell"},
+    {"translucence", "anisotropy", kNumber, {-0.9, 0.95}, "", "", "0.6", "mean cosine of scattering"},
+    {"translucence", "colour", kColour, kNothing, "", "", "\"#fbf3e6\"", "colour of a deep wall without its skin"},
+
     {"band", "at", kNumber, kAround, "degrees", "", kRequired, "direction of the band's middle"},
     {"band", "width", kNumber, {0.5, 360.0}, "degrees", "", kRequired, "width round the section"},
     {"band", "colour", kColour, kNothing, "", "", kRequired, "colour at full strength"},

@@ -175,6 +175,11 @@ Nacre SceneReader::read_nacre() {
           t.number("drift")};
 }
 
+Translucence SceneReader::read_translucence() {
+  const TableReader t = table("translucence");
+  return {t.number("mean_free_path"), t.number("anisotropy"), t.colour("colour")};
+}
+
 Light SceneReader::read_light() {
   const TableReader t = table("light");
   return {t.number("azimuth"), t.number("elevation"), t.number("softness"), t.number("fill")};
@@ -255,6 +260,7 @@ Specimen SceneReader::read() {
   specimen.lip = read_lip(specimen.wall);
   specimen.look = read_look(specimen.lip);
   specimen.nacre = read_nacre();
+  specimen.translucence = read_translucence();
   specimen.colouring = read_colouring();
   specimen.light = read_light();
   specimen.lamps = read_lamps();

@@ -33,6 +33,7 @@ class SceneReader {
   Lip read_lip(const Wall& wall);
   Look read_look(const Lip& lip);
   Nacre read_nacre();
+  Translucence read_translucence();
   Colouring read_colouring();
   Light read_light();
   std::vector<Lamp> read_lamps();

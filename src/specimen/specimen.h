@@ -91,6 +91,11 @@ struct Look {
   Stated<Colour> periostracum;  // of white shell under it
 };
 
+struct Translucence {
+  Stated<double> mean_free_path_mm, anisotropy;  // a path of 0: opaque
+  Stated<Colour> colour;                         // of a deep wall
+};
+
 struct Nacre {
   Stated<double> tablet_nm, spread_nm, sheet_nm, sheet_index;
   Stated<int> layers;
@@ -181,6 +186,7 @@ struct Specimen {
   Lip lip;
   Look look;
   Nacre nacre;
+  Translucence translucence;
   Colouring colouring;
   Light light;
   std::vector<Lamp> lamps;

@@ -6,6 +6,7 @@
 #include "specimen/specimen.h"
 #include "trace/surfaces.h"
 #include "transport/paint.h"
+#include "transport/translucent_wall.h"
 #include "transport/whitening.h"
 
 #include <memory>
@@ -25,6 +26,7 @@ struct Materials {
   Vec3f section_display{0.5f};                           // a cut face prints as exactly this, unlit
   Finish outer, inner;
   Finish rim;                                            // of the inside within the lip, where `inner` is nacre
+  std::shared_ptr<const TranslucentWall> wall;           // none: opaque shell
   float nacre_drift = 0.0f;                              // of the tablets' thickness over the shell, as a share
 
   std::shared_ptr<const Whitening> whitening;            // there: it hides all of the above but cut faces

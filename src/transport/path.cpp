@@ -3,10 +3,12 @@
 #include "transport/path.h"
 
 #include "math/basis3f.h"
+#include "math/hash.h"
 #include "shaders_cpu/tone/curve.h"
 #include "transport/encounter.h"
 
 #include <algorithm>
+#include <bit>
 #include <cmath>
 
 namespace whorl::transport {
@@ -37,6 +39,13 @@ Vec3f facing(const Vec3f& normal, const Vec3f& to_viewer) noexcept {
   return cosine >= kLeastFacing ? normal : unit(normal + to_viewer * (kLeastFacing - cosine));
 }
 
+/// A key for the many numbers of a walk within the wall.
+std::uint64_t key_of(const std::array<float, kSobolDimensions>& u) noexcept {
+  std::uint64_t key = 0;
+  for (const float one : u) key = hash_with(key, std::bit_cast<std::uint32_t>(one));
+  return key;
+}
+
 }  // namespace
 
 /// A place on the shell from which light is gathered.
@@ -50,7 +59,14 @@ struct PathTracer::Vertex {
       : start(hit.position + hit.normal * hit.safe_offset),
         outward(hit.normal),
         basis(facing(hit.normal, to_viewer)),
-        surface(materials.surface(hit), basis.to_local(to_viewer)) {}
+        surface(materials.wall ? shaders_cpu::SurfaceView::face(materials.surface(hit), basis.to_local(to_viewer))
+                               : shaders_cpu::SurfaceView(materials.surface(hit), basis.to_local(to_viewer))) {}
+  /// Where light comes out of a translucent wall.
+  Vertex(const trace::Hit& hit, const Materials& materials) noexcept
+      : start(hit.position + hit.normal * hit.safe_offset),
+        outward(hit.normal),
+        basis(hit.normal),
+        surface(shaders_cpu::SurfaceView::leaving(materials.surface(hit))) {}
 
   /// Light can only come from above both normals: the shell is opaque.
   bool open_to(const Vec3f& direction, const Vec3f& wi) const noexcept { return wi.z > 0.0f && direction.dot(outward) > 0.0f; }
@@ -67,7 +83,7 @@ PathTracer::PathTracer(const trace::Surfaces& shell, const Lighting& lighting, c
       lighting_(lighting),
       materials_(materials),
       section_radiance_(Vec3f(shaders_cpu::inverse_tone(Vec3(materials.section_display)))),
-      blocks_per_bounce_(kLightBlock + static_cast<std::uint32_t>((lighting.lamps.size() + 2) / 2)) {}
+      blocks_per_vertex_(kLightBlock + static_cast<std::uint32_t>((lighting.lamps.size() + 2) / 2)) {}
 
 Vec3f PathTracer::direct(const Vertex& v, const SobolStream& stream, std::uint32_t block,
                          RayCounts& counts) const noexcept {
@@ -121,12 +137,23 @@ Glimpse PathTracer::look(const trace::Ray& camera_ray, const SobolStream& stream
 
   Glimpse seen{Vec3f(0.0f), true};
   Vec3f throughput(1.0f);
+  std::uint32_t block = first_block;
   for (int bounce = 1; bounce <= kMaxBounces; ++bounce) {
-    const Vertex v(met.hit, -ray.direction, materials_);
-    const std::uint32_t block = first_block + static_cast<std::uint32_t>(bounce - 1) * blocks_per_bounce_;
+    Vertex v(met.hit, -ray.direction, materials_);
     seen.radiance += throughput * direct(v, stream, block, counts);
 
-    const auto u = stream.block(block + kScatterBlock);
+    auto u = stream.block(block + kScatterBlock);
+    block += blocks_per_vertex_;
+    if (v.surface.enters(u[0])) {
+      const auto way = stream.block(block++);
+      const auto out = materials_.wall->follow(met.hit, u[1], u[2], key_of(way));
+      if (!out) break;
+      throughput *= v.surface.entering() * out->weight;
+      v = Vertex(out->hit, materials_);
+      seen.radiance += throughput * direct(v, stream, block, counts);
+      u = stream.block(block + kScatterBlock);
+      block += blocks_per_vertex_;
+    }
     const shaders_cpu::Scatter next = v.surface.scatter(u[0], u[1], u[2]);
     const Vec3f direction = v.basis.to_world(next.direction);
     if (!(next.reflection.pdf > 0.0f) || !v.open_to(direction, next.direction)) break;

@@ -46,7 +46,7 @@ class PathTracer {
   const Lighting& lighting_;
   const Materials& materials_;
   Vec3f section_radiance_;
-  std::uint32_t blocks_per_bounce_;
+  std::uint32_t blocks_per_vertex_;
 };
 
 }  // namespace whorl::transport

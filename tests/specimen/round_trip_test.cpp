@@ -76,6 +76,8 @@ TEST_CASE("Every key of a scene arrives with its value", "[specimen]") {
   CHECK(s.look.exterior_finish == Finish::kPeriostracum);
   CHECK(s.look.interior_finish == Finish::kNacre);
   CHECK(same(s.look.periostracum, 12, 13, 14));
+  CHECK((s.translucence.mean_free_path_mm == 0.15 && s.translucence.anisotropy == 0.7));
+  CHECK(same(s.translucence.colour, 0xf0, 0xf1, 0xf2));
   CHECK((s.nacre.tablet_nm == 410.0 && s.nacre.spread_nm == 30.0 && s.nacre.sheet_nm == 12.0));
   CHECK((s.nacre.sheet_index == 1.55 && s.nacre.layers == 40 && s.nacre.drift == 0.125));
 
@@ -206,6 +208,7 @@ TEST_CASE("A scene of only what is required has the defaults of the format, none
   CHECK(s.look.callus_breadth_mm == 0.0);
   CHECK(s.look.exterior_finish == Finish::kPlain);
   CHECK(s.look.interior_finish == Finish::kPlain);
+  CHECK(s.translucence.mean_free_path_mm == 0.0);
   CHECK((s.nacre.tablet_nm == 440.0 && s.nacre.spread_nm == 20.0 && s.nacre.layers == 30));
   CHECK((s.colouring.bands.empty() && s.colouring.flames.empty()));
   CHECK((s.colouring.spots.empty() && s.colouring.patterns.empty()));

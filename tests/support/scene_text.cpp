@@ -45,6 +45,8 @@ SceneText SceneText::with_every_key() {
       .set("look", "periostracum", "\"#0c0d0e\"");
   scene.set("nacre", "tablet", "410").set("nacre", "spread", "30").set("nacre", "sheet", "12").set("nacre", "layers", "40");
   scene.set("nacre", "sheet_index", "1.55").set("nacre", "drift", "0.125");
+  scene.set("translucence", "mean_free_path", "0.15").set("translucence", "anisotropy", "0.7");
+  scene.set("translucence", "colour", "\"#f0f1f2\"");
   const auto pigment = [&scene](const char* table, const char* red) {
     scene.set(table, "colour", fmt::format("\"#{}0a0b\"", red)).set(table, "opacity", "0.625").set(table, "fade", "0.375");
     scene.set(table, "onset", "1.5").set(table, "end", "6.5");
