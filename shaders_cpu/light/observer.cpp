@@ -29,7 +29,7 @@ Vec3 cie_observer(double nm) {
           1.217 * bell(nm, 437.0, 11.8, 36.0) + 0.681 * bell(nm, 459.0, 26.0, 13.8)};
 }
 
-double daylight(double nm) {
+double daylight_d65(double nm) {
   const double place = std::clamp((nm - 380.0) / 10.0, 0.0, 40.0 - 1e-9);
   const auto i = static_cast<std::size_t>(place);
   return kDaylight[i] + (kDaylight[i + 1] - kDaylight[i]) * (place - static_cast<double>(i));
@@ -46,7 +46,7 @@ const std::array<Vec3, kWavelengths>& daylight_weights() {
     Vec3 sum(0.0);
     for (int i = 0; i < kWavelengths; ++i) {
       const double nm = kFirstNm + kStepNm * i;
-      w[static_cast<std::size_t>(i)] = srgb_of_xyz(cie_observer(nm) * daylight(nm));
+      w[static_cast<std::size_t>(i)] = srgb_of_xyz(cie_observer(nm) * daylight_d65(nm));
       sum += w[static_cast<std::size_t>(i)];
     }
     for (Vec3& one : w) one = Vec3(one.x / sum.x, one.y / sum.y, one.z / sum.z);

@@ -14,7 +14,7 @@ namespace whorl::shaders_cpu {
 Vec3 cie_observer(double nm);
 
 /// Relative spectral power of CIE standard illuminant D65 (CIE 15, table T.1), 380 .. 780 nm; straight between steps of 10 nm.
-double daylight(double nm);
+double daylight_d65(double nm);
 
 /// IEC 61966-2-1: XYZ to linear sRGB.
 Vec3 srgb_of_xyz(const Vec3& xyz);

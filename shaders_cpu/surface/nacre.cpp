@@ -82,7 +82,8 @@ NacreCoat::NacreCoat(const NacreStack& stack, double alpha) : alpha_(static_cast
   constexpr int kOrder = 16;
   const Rule rule = gauss_legendre(kOrder);
   parallel_for(kNodes, 1, [&](std::size_t node) {
-    std::array<Vec3, kScales> sums{};
+    std::array<Vec3, kScales> sums;  // an Imath vector does not begin at 0
+    sums.fill(Vec3(0.0));
     over_visible_normals(std::max(cosine_of(static_cast<int>(node), kNodes), 1e-6), alpha, rule, [&](double facing, double weight) {
       for (int row = 0; row < kScales; ++row)
         sums[static_cast<std::size_t>(row)] += Vec3(facet(static_cast<float>(facing), scale_of(row))) * weight;

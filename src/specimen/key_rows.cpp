@@ -73,10 +73,10 @@ constexpr KeyRow kRows[] = {
     {"look", "periostracum", kColour, kNothing, "", "", "\"#a5814a\"", "colour of white shell under its periostracum"},
 
     {"nacre", "tablet", kNumber, {50.0, 1500.0}, "nm", "", "440.0", "mean thickness of a tablet"},
-    {"nacre", "spread", kNumber, {0.0, 300.0}, "nm", "", "20.0", "standard deviation of the tablets' thickness"},
-    {"nacre", "sheet", kNumber, {0.0, 200.0}, "nm", "", "8.0", "thickness of the organic sheet between tablets"},
+    {"nacre", "spread", kNumber, {0.0, 300.0}, "nm", "", "12.0", "standard deviation of the tablets' thickness"},
+    {"nacre", "sheet", kNumber, {0.0, 200.0}, "nm", "", "20.0", "thickness of the organic sheet between tablets"},
     {"nacre", "sheet_index", kNumber, {1.3, 1.7}, "", "", "1.5", "refractive index of the sheets"},
-    {"nacre", "layers", kWhole, {1.0, 1000.0}, "", "", "30", "tablets that lie on one another"},
+    {"nacre", "layers", kWhole, {1.0, 1000.0}, "", "", "60", "tablets that lie on one another"},
     {"nacre", "drift", kNumber, {0.0, 0.25}, "", "", "0.05", "greatest difference of the thickness over the shell, as a share"},
 
     {"translucence", "mean_free_path", kNumber, {0.0, 100.0}, "mm", "", "0.0", "way of light in the wall between two events; 0 for opaque shell"},

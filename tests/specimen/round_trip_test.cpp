@@ -209,7 +209,7 @@ TEST_CASE("A scene of only what is required has the defaults of the format, none
   CHECK(s.look.exterior_finish == Finish::kPlain);
   CHECK(s.look.interior_finish == Finish::kPlain);
   CHECK(s.translucence.mean_free_path_mm == 0.0);
-  CHECK((s.nacre.tablet_nm == 440.0 && s.nacre.spread_nm == 20.0 && s.nacre.layers == 30));
+  CHECK((s.nacre.tablet_nm == 440.0 && s.nacre.spread_nm == 12.0 && s.nacre.layers == 60));
   CHECK((s.colouring.bands.empty() && s.colouring.flames.empty()));
   CHECK((s.colouring.spots.empty() && s.colouring.patterns.empty()));
   CHECK(s.light.azimuth_deg == 135.0);

@@ -67,7 +67,7 @@ TEST_CASE("Lamp and key are gathered by lights and by scattering together withou
   const Vec3 mirror(-std::sin(radians(50.0)), 0.0, std::cos(radians(50.0)));
   for (const double gloss : {-1.0, 0.0, 0.5, 0.8, 1.0}) {
     const Materials materials = test::of_albedo(0.3f, gloss);
-    const SurfaceView view({Vec3f(0.3f), materials.coat.get()}, -slanting(50.0).direction);
+    const SurfaceView view({Vec3f(0.3f), materials.outer.coat.get()}, -slanting(50.0).direction);
     RayCounts counts;
 
     Lighting lamp;
