@@ -21,6 +21,7 @@
 #include <chrono>
 #include <cstdio>
 #include <filesystem>
+#include <memory>
 
 namespace whorl::app {
 namespace {
@@ -58,20 +59,28 @@ int plate_command(const Options& options, Progress& progress) {
   specimen::Specimen specimen = specimen::read_scene_file(options.scene);
   specimen = plate::at_quality(specimen, options.quality.value_or(specimen.plate.quality.value));
 
-  progress.step("compiling the shell");
-  plate::Studio studio(specimen);
+  const bool sheet = specimen.contact_sheet.wanted();
+  if (sheet && options.only_panel) throw diagnostics::UsageError("--only: a contact sheet is drawn as a whole");
+  progress.step(sheet ? "compiling the shells" : "compiling the shell");
+  std::vector<std::unique_ptr<plate::Studio>> studios;  // one for each panel of a contact sheet, else one for all
+  for (const specimen::Specimen& shell : sheet ? plate::sheet_shells(specimen) : std::vector{specimen})
+    studios.push_back(std::make_unique<plate::Studio>(shell));
+  if (sheet) specimen = plate::sheet_plate(specimen);
   make_out_folder(options.out);  // only now: a faulty scene leaves no trace
   if (options.only_panel) {
     keep_only(specimen, plate::views_of(specimen), *options.only_panel);
   }
   const std::vector<plate::View> views = plate::views_of(specimen);
   std::vector<plate::Extents> extents;
-  for (const plate::View& view : views) extents.push_back(plate::extents_in(view, studio.surface_points()));
+  for (std::size_t i = 0; i < views.size(); ++i)
+    extents.push_back(plate::extents_in(views[i], studios[sheet ? i : 0]->surface_points()));
   const FigurePlan plan = plate::plan_figure(specimen, views, extents);
   double finest = 1e300;
   for (const FigurePanel& panel : plan.panels) finest = std::min(finest, panel.mm_per_pixel);
-  studio.set_up(finest, options.exact);
-  note_on_shell(studio.scene(), progress);
+  if (!sheet) {
+    studios[0]->set_up(finest, options.exact);
+    note_on_shell(studios[0]->scene(), progress);
+  }
 
   const int samples = plate::quality_steps(specimen.plate.quality.value).samples;
   double area = 0.0, before = 0.0;
@@ -80,27 +89,34 @@ int plate_command(const Options& options, Progress& progress) {
                             plan.panels.size() == 1 ? "" : "s", plan.width, plan.height));
   const auto start = std::chrono::steady_clock::now();
   std::vector<transport::Film> films;
+  plate::RunFacts facts;
   for (std::size_t i = 0; i < plan.panels.size(); ++i) {
     const FigurePanel& panel = plan.panels[i];
     const double share = static_cast<double>(panel.rect.width) * panel.rect.height / area;
+    plate::Studio& studio = *studios[sheet ? i : 0];
+    if (sheet) studio.set_up(finest, options.exact);
     films.push_back(studio.picture(panel.view, panel.look, panel.camera(studio.front_mm()), samples, options.seed,
                                    static_cast<std::uint32_t>(i), PictureProgress(progress, before, share)));
     before += share;
+    if (!sheet) continue;
+    facts.seconds_compile += studio.compile_seconds();
+    studios[i].reset();  // its cells are large
   }
 
-  plate::RunFacts facts;
   facts.version = program_version();
   facts.build = program_build();
   facts.seed = options.seed;
   facts.threads = thread_count();
-  facts.seconds_compile = studio.compile_seconds();
   facts.seconds_render = std::chrono::duration<double>(std::chrono::steady_clock::now() - start).count();
   facts.exact = options.exact;
   facts.quality = specimen.plate.quality.value;
-  facts.counters = solid_counters(studio.solid());
-  progress.step("measuring the shell");
-  facts.measurements = measure::to_json(measure::measure_shell(
-      studio.solid(), specimen.identity.mineral, {measure_lines(specimen.plate.quality.value), options.seed}));
+  if (!sheet) {
+    facts.seconds_compile = studios[0]->compile_seconds();
+    facts.counters = solid_counters(studios[0]->solid());
+    progress.step("measuring the shell");
+    facts.measurements = measure::to_json(measure::measure_shell(
+        studios[0]->solid(), specimen.identity.mineral, {measure_lines(specimen.plate.quality.value), options.seed}));
+  }
   progress.step("writing the files");
   const auto paths = plate::write_figure(plan, specimen, films, facts, options.out, plate::figure_stem(options.scene));
   for (const std::filesystem::path& path : paths) std::printf("%s\n", path.string().c_str());

@@ -54,6 +54,12 @@ std::string size_phrase(const specimen::Specimen& specimen, const RunFacts& run)
   return "";
 }
 
+std::vector<std::string> plain(const std::vector<double>& numbers) {
+  std::vector<std::string> texts;
+  for (const double one : numbers) texts.push_back(plain_number(one));
+  return texts;
+}
+
 /// "apertural view, whitened"
 std::string panel_words(const FigurePanel& panel, const specimen::Specimen& specimen) {
   std::string words = panel.eye ? pair_label(panel) : panel.view.label;
@@ -79,6 +85,10 @@ std::string looks_sentence(const FigurePlan& plan, const specimen::Specimen& spe
 
 /// "A, apertural view. B, apical view." or, without letters, "Apertural view, apical view."
 std::string views_sentence(const FigurePlan& plan, const specimen::Specimen& specimen) {
+  if (specimen.contact_sheet.wanted())
+    return fmt::format("Contact sheet: {}, W = {} from left to right, T = {} from top to bottom.",
+                       panel_words(plan.panels.at(0), specimen), in_words(plain(specimen.contact_sheet.W.value)),
+                       in_words(plain(specimen.contact_sheet.T.value)));
   std::string text;
   for (const FigurePanel& panel : plan.panels) {
     if (panel.eye == Eye::kRight) continue;

@@ -27,10 +27,14 @@ double letter_room_mm(specimen::Letters letters, std::size_t count) {
   return (count > 26 ? 2.0 : 1.0) * kWidest + (letters == specimen::Letters::kLowerInBrackets ? kBrackets : 0.0);
 }
 
+std::string sheet_note(const specimen::ContactSheet& sheet, std::size_t index) {
+  const std::size_t across = sheet.W.value.size();
+  return fmt::format("W {:g}, T {:g}", sheet.W.value[index % across], sheet.T.value[index / across]);
+}
+
 /// Behind the letter, on its base line.
 void put_label(const specimen::Specimen& specimen, const LayoutRequest& request, const LayoutPanel& place, FigurePanel& panel) {
   const double per_mm = request.resolution_ppi / kMmPerInch;
-  panel.label = radiograph_label(specimen.radiograph);
   constexpr double kSpace = 1.2;  // mm, between letter and label
   panel.label_left = place.letter_left + static_cast<int>(std::lround((request.letter_room_mm > 0.0 ? request.letter_room_mm + kSpace : 0.0) * per_mm));
   panel.label_base = place.letter_top + static_cast<int>(std::lround(kCapHeight * kLetterPoints / 72.0 * request.resolution_ppi));
@@ -68,6 +72,30 @@ void part_pair(const FigurePanel& pair, double spacing_px, std::vector<FigurePan
 }
 
 }  // namespace
+
+std::vector<specimen::Specimen> sheet_shells(const specimen::Specimen& specimen) {
+  std::vector<specimen::Specimen> shells;
+  for (const double T : specimen.contact_sheet.T.value)
+    for (const double W : specimen.contact_sheet.W.value) {
+      specimen::Specimen shell = specimen;
+      shell.growth.W.value = {{0.0, W}};
+      shell.growth.W_distance.reset();
+      shell.growth.W_depth.reset();
+      shell.growth.W_section.reset();
+      shell.growth.T.value = T;
+      shells.push_back(std::move(shell));
+    }
+  return shells;
+}
+
+specimen::Specimen sheet_plate(const specimen::Specimen& specimen) {
+  specimen::Specimen plate = specimen;
+  const specimen::ContactSheet& sheet = specimen.contact_sheet;
+  plate.plate.columns.value = static_cast<int>(sheet.W.value.size());
+  plate.plate.letters.value = specimen::Letters::kNone;
+  plate.plate.panels.assign(sheet.W.value.size() * sheet.T.value.size(), specimen.plate.panels.at(0));
+  return plate;
+}
 
 bool bar_belongs_to(const LayoutBar& bar, const FigurePlan& plan, std::size_t index) {
   const FigurePanel& panel = plan.panels[index];
@@ -163,7 +191,7 @@ FigurePlan plan_figure(const specimen::Specimen& specimen, const std::vector<Vie
             fmt::format("panel {} ({}) shows nothing of the shell; choose another view", i + 1, views[i].label)}});
     request.views.push_back({extents_mm[i], stance_of(views[i]), plate.panels[i].scale,
                              views[i].stereo_deg > 0.0 ? specimen.stereo.spacing_mm.value : 0.0,
-                             plate.panels[i].look == specimen::PanelLook::kRadiograph});
+                             plate.panels[i].look == specimen::PanelLook::kRadiograph || specimen.contact_sheet.wanted()});
   }
 
   const Layout layout = lay_out(request);
@@ -187,7 +215,10 @@ FigurePlan plan_figure(const specimen::Specimen& specimen, const std::vector<Vie
     panel.letter_left = place.letter_left;
     panel.letter_top = place.letter_top;
     panel.look = plate.panels[i].look;
-    if (panel.look == specimen::PanelLook::kRadiograph) put_label(specimen, request, place, panel);
+    if (specimen.contact_sheet.wanted()) panel.note = sheet_note(specimen.contact_sheet, i);
+    if (panel.look == specimen::PanelLook::kRadiograph) panel.label = radiograph_label(specimen.radiograph);
+    if (!panel.note.empty()) panel.label = panel.note + (panel.label.empty() ? "" : ", " + panel.label);
+    if (!panel.label.empty()) put_label(specimen, request, place, panel);
     for (std::size_t k = 0; k < layout.bars.size(); ++k)
       if (layout.bars[k].panel == static_cast<int>(i)) plan.bars[k].panel = static_cast<int>(plan.panels.size());
     if (views[i].stereo_deg > 0.0)

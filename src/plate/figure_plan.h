@@ -18,6 +18,7 @@ struct FigurePanel {
   std::string letter;         // as it is printed, "" for none
   specimen::PanelLook look = specimen::PanelLook::kNatural;
   std::optional<Eye> eye;     // of a stereo pair: its left picture is followed at once by its right one
+  std::string note;           // what is peculiar to this picture, for caption and label: "W 2, T 1"
   std::string label;          // words above the picture, "" for none
   Extents extents_mm;
   PixelRect rect;             // in the figure; the panel's film has this width and height
@@ -39,6 +40,11 @@ struct FigurePlan {
   std::vector<FigurePanel> panels;  // in reading order
   std::vector<LayoutBar> bars;
 };
+
+/// The shells of a contact sheet, row by row, and the specimen whose panels they fill: as many panels as shells, columns as W, no
+/// letters.
+std::vector<specimen::Specimen> sheet_shells(const specimen::Specimen& specimen);
+specimen::Specimen sheet_plate(const specimen::Specimen& specimen);
 
 /// The views that the scene file asks for, in its order; measure their extents and hand both to plan_figure, which parts stereo pairs.
 std::vector<View> views_of(const specimen::Specimen& specimen);

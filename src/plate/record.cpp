@@ -100,6 +100,7 @@ ordered_json panel_record(const FigurePanel& panel, const transport::Film& film)
   json["cut"] = panel.view.cut;
   json["look"] = look_word(panel.look);
   if (panel.eye) json["eye"] = panel.eye == Eye::kLeft ? "left" : "right";
+  if (!panel.note.empty()) json["shell"] = panel.note;
   if (!panel.label.empty()) json["label"] = panel.label;
   json["rendered"] = film.size() != 0;
   json["samples_per_pixel"] = {{"mean", film.mean_samples}, {"max", film.max_samples}};

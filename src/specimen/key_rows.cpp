@@ -147,6 +147,9 @@ constexpr KeyRow kRows[] = {
     {"stereo", "angle", kNumber, {0.5, 20.0}, "degrees", "", "6.0", "between the two eyes' views"},
     {"stereo", "spacing", kNumber, {20.0, 65.0}, "mm", "", "60.0", "of matching points on paper"},
 
+    {"contact_sheet", "W", kNumbers, kExpansion, "", "", kNoDefault, "whorl expansions, from left to right"},
+    {"contact_sheet", "T", kNumbers, {0.0, 50.0}, "", "", kNoDefault, "translations, from top to bottom"},
+
     {"plate", "width", kNumber, {20.0, 1000.0}, "mm", "", "180.0", "width on paper"},
     {"plate", "resolution", kNumber, {72.0, 2400.0}, "pixels per inch", "", "600.0", "pixels per inch of paper"},
     {"plate", "background", kWord, kNothing, "", "white|black|clear", "\"white\"", "ground of the plate"},

@@ -200,6 +200,11 @@ Stereo SceneReader::read_stereo() {
   return {t.number("angle"), t.number("spacing")};
 }
 
+ContactSheet SceneReader::read_contact_sheet() {
+  const TableReader t = table("contact_sheet");
+  return {t.rising_numbers("W"), t.rising_numbers("T")};
+}
+
 Plate SceneReader::read_plate() {
   const TableReader t = table("plate");
   Plate plate;
@@ -266,6 +271,7 @@ Specimen SceneReader::read() {
   specimen.lamps = read_lamps();
   specimen.radiograph = read_radiograph();
   specimen.stereo = read_stereo();
+  specimen.contact_sheet = read_contact_sheet();
   specimen.plate = read_plate();
   return specimen;
 }

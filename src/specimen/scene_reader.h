@@ -39,6 +39,7 @@ class SceneReader {
   std::vector<Lamp> read_lamps();
   Radiograph read_radiograph();
   Stereo read_stereo();
+  ContactSheet read_contact_sheet();
   Plate read_plate();
   std::vector<Panel> read_panels();
   Panel read_panel(const TableReader& table);

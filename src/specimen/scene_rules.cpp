@@ -81,6 +81,25 @@ void check_colouring(const Specimen& s, ProblemList& problems) {
                  "[look] callus_breadth is stated without callus: state the colour of the callus as well");
 }
 
+void check_contact_sheet(const Specimen& s, ProblemList& problems) {
+  const ContactSheet& sheet = s.contact_sheet;
+  if (sheet.W.given != sheet.T.given)
+    problems.add(sheet.W.given ? sheet.W.where : sheet.T.where,
+                 fmt::format("[contact_sheet] states {} alone; state both W and T, each as a list of numbers",
+                             sheet.W.given ? "W" : "T"));
+  if (!sheet.wanted()) return;
+  if (sheet.T.value.front() == 0.0 && s.wall.columella > 0.0)
+    problems.add(sheet.T.where,
+                 fmt::format("[contact_sheet] T holds 0, which winds in one plane, but [wall] columella = {} needs a spire; leave "
+                             "columella out, or begin with a T above 0",
+                             s.wall.columella.value));
+  if (s.plate.panels.size() != 1)
+    problems.add(sheet.W.where,
+                 "[contact_sheet] shows one view of many shells: state exactly one [[panel]], which all of them take");
+  else if (s.plate.panels[0].stereo)
+    problems.add(s.plate.panels[0].stereo.where, "[[panel]] picture: a contact sheet takes single pictures");
+}
+
 void check_looks(const Plate& plate, ProblemList& problems) {
   for (const Panel& panel : plate.panels) {
     if (panel.look.value == PanelLook::kRadiograph && panel.view.value == ViewName::kAxialSection)
@@ -99,6 +118,7 @@ void check_rules(const Specimen& specimen, ProblemList& problems) {
     check_thickness("[lip] thickness", specimen.lip.thickness_mm, specimen, problems);
   check_colouring(specimen, problems);
   check_looks(specimen.plate, problems);
+  check_contact_sheet(specimen, problems);
   check_page(specimen.plate, problems);
 }
 

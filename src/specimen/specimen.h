@@ -175,6 +175,12 @@ struct Plate {
   std::vector<Panel> panels;
 };
 
+/// The same shell over a grid of W and T; empty lists for none.
+struct ContactSheet {
+  Stated<std::vector<double>> W, T;
+  bool wanted() const { return !W.value.empty() && !T.value.empty(); }
+};
+
 struct Specimen {
   std::string source;  // the file's name as given, "-" for standard input
   std::string text;    // its bytes, as read
@@ -192,6 +198,7 @@ struct Specimen {
   std::vector<Lamp> lamps;
   Radiograph radiograph;
   Stereo stereo;
+  ContactSheet contact_sheet;
   Plate plate;
 };
 

@@ -1,5 +1,5 @@
 // SPDX-License-Identifier: Apache-2.0
-// Expansions that are one number, or change by stages along the shell.
+// Expansions that are one number, or change by stages along the shell; lists of numbers.
 #include "specimen/table_reader.h"
 
 #include <fmt/format.h>
@@ -54,6 +54,28 @@ Stages TableReader::checked_stages(const KeyRow& row, const toml::array& list) c
     stages.push_back({*whorl, *value});
   }
   return stages;
+}
+
+Stated<std::vector<double>> TableReader::rising_numbers(std::string_view key) const {
+  constexpr std::size_t kMostRising = 12;
+  const KeyRow& row = row_of(key);
+  Stated<std::vector<double>> found;
+  const toml::node* node = node_of(key);
+  if (node == nullptr) return found;
+  found.where = position_of(*node);
+  found.given = true;
+  for (const Stated<double>& one : numbers(key)) {
+    if (!found.value.empty() && one.value <= found.value.back())
+      problems_.add(one.where, fmt::format("{}: {} does not lie above the number before it, {}; they must rise",
+                                           written_key(row.table, row.key), one.value, found.value.back()));
+    found.value.push_back(one.value);
+  }
+  if (const toml::array* list = node->as_array(); list != nullptr && list->empty())
+    problems_.add(found.where, fmt::format("{}: the list is empty; leave it out, or state numbers", written_key(row.table, row.key)));
+  if (found.value.size() > kMostRising)
+    problems_.add(found.where, fmt::format("{}: {} numbers; at most {} are allowed", written_key(row.table, row.key),
+                                           found.value.size(), kMostRising));
+  return found;
 }
 
 Stated<Stages> TableReader::stages(std::string_view key) const {

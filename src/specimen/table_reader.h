@@ -50,6 +50,8 @@ class TableReader {
   std::optional<Stated<Colour>> optional_colour(std::string_view key) const;
   Stated<Stages> stages(std::string_view key) const;
   std::optional<Stated<Stages>> optional_stages(std::string_view key) const;
+  /// Numbers of at most kMostRising that rise strictly; none where the key is missing.
+  Stated<std::vector<double>> rising_numbers(std::string_view key) const;
   /// "auto" is 0.
   Stated<double> bar(std::string_view key) const;
   /// The words stand in the order of the enumeration.

@@ -133,3 +133,25 @@ TEST_CASE("A figure in the natural look says nothing of radiographs, whitening o
   CHECK_FALSE(record.contains("radiograph"));
   CHECK_FALSE(record.contains("stereo"));
 }
+
+TEST_CASE("A contact sheet has a shell and a labelled panel for each pair of W and T, row by row", "[plate][sheet]") {
+  specimen::Specimen s = one_panel(ViewName::kApertural, PanelLook::kNatural, false);
+  s.contact_sheet.W.value = {1.4, 2.0, 3.0};
+  s.contact_sheet.T.value = {0.5, 2.0};
+  const std::vector<specimen::Specimen> shells = sheet_shells(s);
+  REQUIRE(shells.size() == 6);
+  CHECK(shells[1].growth.W.value.at(0).W == 2.0);
+  CHECK(shells[1].growth.T == 0.5);
+  CHECK(shells[3].growth.W.value.at(0).W == 1.4);
+  CHECK(shells[3].growth.T == 2.0);
+  const specimen::Specimen sheet = sheet_plate(s);
+  const FigurePlan plan = plan_of(sheet);
+  REQUIRE(plan.panels.size() == 6);
+  CHECK(plan.panels[0].label == "W 1.4, T 0.5");
+  CHECK(plan.panels[5].label == "W 3, T 2");
+  CHECK(plan.panels[2].rect.y == plan.panels[0].rect.y);
+  CHECK(plan.panels[3].rect.x == plan.panels[0].rect.x);
+  CHECK(plan.panels[3].rect.y > plan.panels[0].rect.y);
+  CHECK(contains(make_caption(plan, sheet, {}),
+                 "Contact sheet: apertural view, W = 1.4, 2 and 3 from left to right, T = 0.5 and 2 from top to bottom."));
+}

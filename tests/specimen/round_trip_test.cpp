@@ -130,7 +130,8 @@ TEST_CASE("Every key of a scene arrives with its value", "[specimen]") {
   CHECK(s.plate.panels[0].elevation_deg == 10.0);
   CHECK(s.plate.panels[0].scale == 2.0);
   CHECK(s.plate.panels[0].look == PanelLook::kWhitened);
-  CHECK(s.plate.panels[0].stereo);
+  CHECK_FALSE(s.plate.panels[0].stereo);
+  CHECK((s.contact_sheet.W.value == std::vector{1.5, 2.0} && s.contact_sheet.T.value == std::vector{0.5, 1.0, 2.0}));
   CHECK(s.radiograph.energy_kev == 35.0);
   CHECK((s.stereo.angle_deg == 7.0 && s.stereo.spacing_mm == 62.0));
 }
@@ -244,6 +245,11 @@ TEST_CASE("The source density of a pattern follows its activator's decay where i
   const EdgePattern pattern = parse_scene(scene.text(), "scene").colouring.patterns.at(0);
   CHECK(pattern.source == 30.0);
   CHECK(pattern.inhibitor_spread == 0.0);
+}
+
+TEST_CASE("A panel may be a stereo pair", "[specimen]") {
+  const Specimen s = parse_scene(SceneText().set("panel", "view", "\"apical\"").set("panel", "picture", "\"stereo pair\"").text(), "scene");
+  CHECK(s.plate.panels.at(0).stereo);
 }
 
 TEST_CASE("A short shell begins early enough for a quarter whorl to be left", "[specimen]") {

@@ -74,6 +74,7 @@ SceneText SceneText::with_every_key() {
       .set("lamp", "strength", "70")
       .set("lamp", "temperature", "2700");
   scene.set("radiograph", "energy", "35");
+  scene.set("contact_sheet", "W", "[1.5, 2.0]").set("contact_sheet", "T", "[0.5, 1.0, 2]");
   scene.set("stereo", "angle", "7").set("stereo", "spacing", "62");
   scene.set("plate", "width", "85").set("plate", "resolution", "300").set("plate", "background", "\"clear\"");
   scene.set("plate", "columns", "2")
@@ -83,7 +84,7 @@ SceneText SceneText::with_every_key() {
   scene.set("plate", "quality", "\"draft\"");
   return scene.set("panel", "view", "{ azimuth = 30.0, elevation = 10.0 }").set("panel", "scale", "2.0")
       .set("panel", "look", "\"whitened\"")
-      .set("panel", "picture", "\"stereo pair\"");
+      .set("panel", "picture", "\"single\"");
 }
 
 SceneText& SceneText::set(const std::string& table, const std::string& key, const std::string& value) {
