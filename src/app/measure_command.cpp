@@ -16,8 +16,7 @@ int measure_command(const Options& options, Progress& progress) {
   progress.step("compiling the shell");
   const scene::Scene scene = compile::compile_scene(specimen);
   const field::Field field(scene);
-  constexpr double kTolerance = 2e-6;  // of the height: far below what any caliper reads
-  const trace::EmbreeSolid solid(field, {kTolerance * scene.height_mm, options.exact});
+  const trace::EmbreeSolid solid(field, {scene::measuring_tolerance_mm(scene), options.exact});
   progress.step("measuring");
   const measure::Measurements m =
       measure::measure_shell(solid, specimen.identity.mineral, {1 << 19, options.seed});

@@ -5,6 +5,7 @@
 #include "compile/axis.h"
 #include "compile/edge_patterns.h"
 #include "compile/lamps.h"
+#include "compile/sculpture.h"
 #include "compile/tube.h"
 
 #include <fmt/format.h>
@@ -13,6 +14,7 @@ namespace whorl::compile {
 namespace {
 
 constexpr int kTurnSteps = 720, kAround = 512;  // sampling of the outline where a size is solved: errors under 1e-5
+constexpr int kSizeRounds = 4;                  // each leaves a share of the error that is the sculpture's of the size
 constexpr double kLeastReach = 0.1;             // of the plain ellipse: deeper grooves would meet at the centre
 constexpr double kSmallestWhorl = 1e-3;         // of the last one's half-breadth: smaller ones can't be drawn
 
@@ -51,14 +53,14 @@ Box3 bounds_of(const scene::Scene& scene, const growth::Exterior& shell) {
     box.extendBy(e.centre - Vec3(reach));
     box.extendBy(e.centre + Vec3(reach));
   }
-  const double room = 2.0 * scene.front.rim_radius + 0.01 * (box.max - box.min).length();
+  const double room = 2.0 * scene.front.rim_radius + scene.sculpture.highest() * scene.law.half_breadth + 0.01 * (box.max - box.min).length();
   return {box.min - Vec3(room), box.max + Vec3(room)};
 }
 
 }  // namespace
 
 growth::Exterior exterior_of(const scene::Scene& scene) {
-  return {scene.law, scene.outlines[scene.stations.front().outer].reach, scene.front.tan_inclination};
+  return {scene.law, scene.outlines[scene.stations.front().outer].reach, scene.front.tan_inclination, scene.sculpture};
 }
 
 scene::Scene compile_scene(const specimen::Specimen& specimen) {
@@ -78,20 +80,29 @@ scene::Scene compile_scene(const specimen::Specimen& specimen) {
   growth::CoilingLaw law = growth::coiling_law(specimen.growth, specimen.section);
   scene.start_raised = raise_start(law);
   const double tan_inclination = std::tan(radians(specimen.lip.inclination_deg));
-  const double factor =
-      specimen.size.mm / unit_size(specimen.size.kind, growth::Exterior{law, reach, tan_inclination});
+  growth::Exterior unit_shell{law, reach, tan_inclination, {}};
+  double factor = specimen.size.mm / unit_size(specimen.size.kind, unit_shell);
+  // Shells are measured over their sculpture, whose heights are stated in mm: the size is found in rounds.
+  const bool over_sculpture =
+      specimen.size.kind == specimen::SizeKind::kShellHeight || specimen.size.kind == specimen::SizeKind::kShellWidth;
+  for (int round = 0; round < kSizeRounds && over_sculpture; ++round) {
+    unit_shell.sculpture = sculpture_of(specimen, law, factor * law.half_breadth);
+    if (unit_shell.sculpture.empty()) break;
+    factor = specimen.size.mm / unit_size(specimen.size.kind, unit_shell);
+  }
   scene.law = growth::scaled(law, factor);
   scene.front = {tan_inclination, std::cos(radians(specimen.lip.inclination_deg)), 0.5 * specimen.lip.thickness_mm};
   scene.wall = {specimen.wall.thickness_mm, specimen.lip.thickness_mm,
                 specimen.wall.growth == specimen::WallGrowth::kProportional, tan_inclination};
 
   build_tube(scene, reach, specimen.wall.thickness_mm.where, specimen.lip.thickness_mm.where, faults);
+  if (!faults.any()) build_sculpture(scene, specimen, faults);
   if (!faults.any()) build_axis(scene, specimen, reach, faults);
   if (!faults.any()) build_lamps(scene, specimen, faults);
   if (!faults.any()) build_edge_patterns(scene, specimen, reach, faults);
   faults.raise(specimen.source);
 
-  const growth::Exterior shell{scene.law, reach, tan_inclination};
+  const growth::Exterior shell = exterior_of(scene);
   scene.height_mm = growth::height_of(growth::surface_points(shell, 180, 128));
   scene.bounds = bounds_of(scene, shell);
   return scene;

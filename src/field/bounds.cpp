@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: Apache-2.0
 // Bounds of the signed lengths over a box, and of how steep they are in it.
 #include "field/field.h"
+#include "field/relief_fade.h"
 #include "field/stations.h"
 
 #include <algorithm>
@@ -128,6 +129,21 @@ Interval length_range(const SectionBox& s, const OutlineBounds& o, Interval t2) 
   return Interval(1.0 - t2.hi, 1.0 - t2.lo) * scale;
 }
 
+// Growth along growth lines: the growth angle less the front's lead, whose extremes are at corners.
+Interval growth_range(const scene::Scene& scene, Interval theta, Interval rho, const Box3& box) {
+  if (scene.front.tan_inclination == 0.0) return theta;
+  Interval lead(0.0);
+  bool any = false;
+  for (const double at_theta : {theta.lo, theta.hi})
+    for (const double r : {rho.lo, rho.hi})
+      for (const double z : {box.min.z, box.max.z}) {
+        const double v = growth::front_lead(scene.front.tan_inclination, scene.law.at(at_theta).depth, {r, z});
+        lead = any ? hull(lead, Interval(v)) : Interval(v);
+        any = true;
+      }
+  return theta - lead;
+}
+
 Interval front_range(const scene::Scene& scene, const SectionBox& s, const Box3& box) {
   const scene::Front& f = scene.front;
   Interval lead(0.0);
@@ -158,6 +174,16 @@ void Field::whorl_bounds(const Box3& box, double theta, Interval& outer, Interva
   }
 }
 
+Interval Field::relief_bounds(const Box3& box, const Interval& theta, const Interval& rho, double psi_from, double psi_span,
+                              const Interval& half_breadth, const Interval& plain, const Interval& unit) const noexcept {
+  const Interval t2 = Interval(1.0) - over_positive(2.0 * plain, unit);
+  const Interval fade = relief_fade(t2);
+  if (fade.hi == 0.0) return Interval(0.0);
+  const Interval growth = growth_range(scene_, theta, rho, box);
+  const Interval h = half_breadth * scene_.sculpture.range(growth, psi_from, psi_span);
+  return fade * (h + over_positive(0.5 * square(h), unit));
+}
+
 void Field::piece_bounds(const Box3& box, Interval rho, Interval theta, Interval& outer,
                          Interval& hollow) const noexcept {
   const SectionBox s = section_box(scene_.law, box, {rho, theta});
@@ -167,6 +193,8 @@ void Field::piece_bounds(const Box3& box, Interval rho, Interval theta, Interval
   }
   const OutlineBounds o = outline_bounds(scene_, s, false, false), i = outline_bounds(scene_, s, true, false);
   outer = length_range(s, o, t2_range(scene_, s, o, false, box));
+  if (!scene_.sculpture.empty())
+    outer = outer + relief_bounds(box, s.at.theta, s.at.rho, s.psi_from, s.psi_span, s.r, outer, s.r * o.normal_scale);
   if (scene_.pillar.present) {
     const Interval pillar = bounds({Part::kPillar, 0.0}, box);
     // Where the pillar's length is negative a larger radius brings it nearer to zero, elsewhere a smaller one raises it.
@@ -293,6 +321,22 @@ double Field::steepness(const Term& term, const Box3& box) const noexcept {
     const double of_unit = squeeze * o.scale_slope / q_lo * std::hypot(1.0, drift * s.r.hi / std::max(s.at.rho.lo, 1e-3 * s.r.lo));
     steep += near * near * (3.0 * o.normal_scale.hi * (steepness({Part::kPillar, 0.0}, box) + radius * of_radius) +
                             near * scene::Pillar::kFillet * of_unit);
+  }
+  if (!scene_.sculpture.empty() && term.part == Part::kWhorl) {
+    const Interval growth = growth_range(scene_, s.at.theta, s.at.rho, box);
+    const growth::Sculpture::Slopes slope = scene_.sculpture.slopes(growth, s.psi_from, s.psi_span);
+    const Interval h = s.r * scene_.sculpture.range(growth, s.psi_from, s.psi_span);
+    const Interval unit = s.r * o.normal_scale;
+    const double rho_lo = std::max(s.at.rho.lo, 1e-3 * s.r.lo), tan = std::abs(scene_.front.tan_inclination);
+    const double by_growth = (1.0 + tan * k * s.h.magnitude() / rho_lo + std::max(1.0, tan)) / rho_lo;
+    const double by_psi = squeeze / (q_lo * s.r.lo) * std::hypot(1.0, drift * s.r.hi / rho_lo);
+    const double of_h = s.r.hi * (slope.by_growth * by_growth + slope.by_psi * by_psi) + k * h.magnitude() / rho_lo;
+    const double added = h.magnitude() * (1.0 + 0.5 * h.magnitude() / unit.lo);
+    steep += of_h * (1.0 + h.magnitude() / unit.lo) + 0.5 * square(h).hi / unit.lo * (k / rho_lo + o.scale_slope * by_psi / o.normal_scale.lo);
+    if (t2.lo < kInnerFull || t2.hi > kOuterFull)
+      steep += kSteepestFade * added * 2.0 / unit.lo *
+               (std::hypot(in_plane, along) + 0.5 * Interval(1.0 - t2.hi, 1.0 - t2.lo).magnitude() *
+                                                  (unit.hi * k / rho_lo + s.r.hi * o.scale_slope * by_psi));
   }
   if (s.at.theta.hi > law.theta_lip - kFrontReach) {
     const double turn = (Interval(law.theta_lip) - s.at.theta).magnitude() + 0.5 * kPi;

@@ -2,6 +2,7 @@
 // Signed lengths at a point: the tube's chains of stations, the growth front, the embryonic shell, the columella.
 #include "field/field.h"
 
+#include "field/relief_fade.h"
 #include "field/stations.h"
 
 #include <algorithm>
@@ -93,6 +94,16 @@ double Field::chain(const InSection& at, const Vec3& p, bool hollow, double& uni
   return 0.5 * at.s.half_breadth * (1.0 - t2) * normal_scale;
 }
 
+// What sculpture adds to the plain signed length. A length of L = unit (1 - t^2) / 2 has its surface raised by h where
+// h + h^2 / (2 unit) is added. Far from the surface, where directions lose their meaning or the support ends, it fades.
+double Field::relief(const InSection& at, double plain, double unit) const noexcept {
+  const double fade = relief_fade(1.0 - 2.0 * plain / unit);
+  if (fade == 0.0) return 0.0;
+  const double lead = growth::front_lead(scene_.front.tan_inclination, at.s.depth, {at.rho, at.z});
+  const double h = at.s.half_breadth * scene_.sculpture.height(at.theta - lead, at.psi);
+  return fade * (h + 0.5 * h * h / unit);
+}
+
 double Field::front(const InSection& at) const noexcept {
   const scene::Front& f = scene_.front;
   const double lead = growth::front_lead(f.tan_inclination, scene_.law.depth, {at.rho, at.z});
@@ -107,6 +118,7 @@ void Field::whorl(const Vec3& p, double theta, double& outer, double& hollow) co
   }
   double unit, hollow_unit;
   outer = chain(at, p, false, unit);
+  if (!scene_.sculpture.empty()) outer += relief(at, outer, unit);
   // The flare goes with the outline's own unit: away from the tube the length levels off at half of that below zero, and
   // a flare of one size would lift it above, all along the pillar.
   if (scene_.pillar.present)

@@ -89,6 +89,9 @@ class Field {
   // Signed length inside a chain's surface, and the length that one unit of section coordinates spans at this section angle.
   double chain(const InSection& at, const Vec3& p, bool hollow, double& unit) const noexcept;
   bool out_of_reach(double theta, const Vec3& p) const noexcept;
+  double relief(const InSection& at, double plain, double unit) const noexcept;
+  Interval relief_bounds(const Box3& box, const Interval& theta, const Interval& rho, double psi_from, double psi_span,
+                         const Interval& half_breadth, const Interval& plain, const Interval& unit) const noexcept;
   double front(const InSection& at) const noexcept;
   double opening_penalty(double theta) const noexcept;
   void piece_bounds(const Box3& box, Interval rho, Interval theta, Interval& outer, Interval& hollow) const noexcept;

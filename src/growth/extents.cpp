@@ -15,6 +15,22 @@ HalfPlanePoint outline_point(const Exterior& shell, double theta, double psi) {
   return shell.law.to_half_plane(shell.law.at(theta), {R * std::cos(psi), R * std::sin(psi)});
 }
 
+// The outline with its sculpture: moved along its normal in the half-plane.
+HalfPlanePoint raised_point(const Exterior& shell, double theta, double psi) {
+  HalfPlanePoint p = outline_point(shell, theta, psi);
+  if (shell.sculpture.empty()) return p;
+  constexpr double kStep = 1e-4;
+  const HalfPlanePoint a = outline_point(shell, theta, psi - kStep), b = outline_point(shell, theta, psi + kStep);
+  const double along_rho = b.rho - a.rho, along_z = b.z - a.z, length = std::hypot(along_rho, along_z);
+  const Station s = shell.law.at(theta);
+  const double growth = theta - front_lead(shell.tan_inclination, s.depth, p);
+  const double height = s.half_breadth * shell.sculpture.height(growth, psi);
+  // Section angles run from outwards to the apex, against the sense of (rho, z): the normal is to the left of their way.
+  p.rho += -along_z / length * height;
+  p.z += along_rho / length * height;
+  return p;
+}
+
 bool inside_outline(const Exterior& shell, double theta, HalfPlanePoint p) {
   const SectionPoint q = shell.law.to_section(shell.law.at(theta), p);
   return std::hypot(q.x, q.y) < shell.reach.value(std::atan2(q.y, q.x));
@@ -113,7 +129,7 @@ std::vector<Vec3> surface_points(const Exterior& shell, int turn_steps, int arou
       const int steps = std::max(1, static_cast<int>(std::ceil((to - from) / kTwoPi * per_turn)));
       for (int i = 0; i <= steps; ++i) {
         const double theta = from + (to - from) * i / steps;
-        HalfPlanePoint p = outline_point(shell, theta, psi);
+        HalfPlanePoint p = raised_point(shell, theta, psi);
         p.rho = std::max(p.rho, 0.0);
         points.push_back(in_space(p, theta));
       }

@@ -72,6 +72,12 @@ std::vector<Basis> basis_of(const specimen::Specimen& s) {
   painted("flame", "flames", !s.colouring.flames.empty());
   painted("spot", "spots", !s.colouring.spots.empty());
   painted("pattern", "pattern computed along the growing edge", !s.colouring.patterns.empty());
+  const auto formed = [&basis](const char* key, const char* words, bool stated) {
+    if (stated) basis.push_back({key, words, true, kForm});
+  };
+  formed("cord", "spiral cords", !s.sculpture.cords.empty());
+  formed("rib", "axial ribs", !s.sculpture.ribs.empty());
+  formed("nodule", "nodules", !s.sculpture.nodules.empty());
   return basis;
 }
 

@@ -17,9 +17,8 @@
 namespace whorl::plate {
 namespace {
 
-// The cells' surface stays this near to the true one: a tenth of a pixel, and finer where that would show in a measure:
-// a ray that meets the surface at a third of a right angle or more is then true to 1e-5 of the height.
-constexpr double kOfAPixel = 0.1, kOfTheHeight = 2e-6;
+// The cells' surface stays this near to the true one, and nearer where a measure asks for it.
+constexpr double kOfAPixel = 0.1;
 
 // Nothing but outlines is noisy in a radiograph.
 constexpr int kRadiographSamples = 32;
@@ -68,7 +67,7 @@ Studio::Studio(const specimen::Specimen& specimen) : specimen_(specimen) {
 
 void Studio::set_up(double mm_per_pixel, bool exact) {
   const double start = now();
-  const double tolerance = std::min(kOfAPixel * mm_per_pixel, kOfTheHeight * scene_->height_mm);
+  const double tolerance = std::min(kOfAPixel * mm_per_pixel, scene::measuring_tolerance_mm(*scene_));
   solid_ = std::make_unique<trace::EmbreeSolid>(*field_, trace::SolidOptions{tolerance, exact});
   if (const auto medium = transport::make_medium(specimen_))
     materials_.wall = std::make_shared<const transport::TranslucentWall>(*solid_, *medium);

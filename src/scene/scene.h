@@ -4,6 +4,7 @@
 
 #include "growth/coiling_law.h"
 #include "growth/outline.h"
+#include "growth/sculpture.h"
 #include "scene/edge_pattern.h"
 
 #include <algorithm>
@@ -75,6 +76,7 @@ struct Scene {
   std::vector<Station> stations;
   double first_station_theta = 0.0;
   std::vector<Ellipsoid> ellipsoids;
+  growth::Sculpture sculpture;  // primitives in the coordinates of growth that join the outer chain
   double theta_begin = 0.0;  // the tube's rounded end: nothing of it before
   double theta_end = 0.0;    // nothing of it after
   double cap_per_radian = 0.0;         // arc / half-breadth a radian, in the rounded end of the tube
@@ -89,5 +91,13 @@ struct Scene {
   double height_mm = 0.0;   // along the axis, from the growth law
   bool start_raised = false;  // whorls too small to draw were left to the embryonic cap
 };
+
+/// How far, in mm, surface cells may miss the true surface where lengths are measured: a share of the height that no caliper
+/// reads. At the plain share a ray that meets the surface at over twelve degrees is true to 1e-5 of the height along itself; a
+/// sculptured shell would need millions of cells for that.
+inline double measuring_tolerance_mm(const Scene& scene) {
+  constexpr double kPlain = 2e-6, kSculptured = 2e-5;
+  return scene.height_mm * (scene.sculpture.empty() ? kPlain : kSculptured);
+}
 
 }  // namespace whorl::scene

@@ -19,6 +19,7 @@ constexpr Range kAround{-180.0, 360.0};  // directions round a section, degrees
 constexpr Range kRate{0.1, 1000.0};      // a whorl
 constexpr Range kSpread{0.0, 10000.0};   // mm^2 a whorl
 constexpr Range kSeed{0.0, 1e6};
+constexpr Range kRelief{-100.0, 100.0};  // mm
 
 constexpr KeyRow kRows[] = {
     {"", "format", kWhole, {1.0, 1.0}, "", "", kRequired, "version of this format"},
@@ -131,6 +132,32 @@ constexpr KeyRow kRows[] = {
     {"pattern", "fade", kNumber, kShare, "", "", "0.2", "share of the threshold over which the edge fades"},
     {"pattern", "onset", kNumber, kOnset, "whorls", "", "0.0", "where it begins, counted from the pole"},
     {"pattern", "end", kNumber, kEnd, "whorls", "", "40.0", "where it ends, the lip at the latest"},
+
+    {"cord", "at", kNumber, kAround, "degrees", "", kRequired, "direction of the cord's crest"},
+    {"cord", "width", kNumber, {0.5, 180.0}, "degrees", "", kRequired, "width of its foot round the section"},
+    {"cord", "height", kNumber, kRelief, "mm", "", kRequired, "height at the lip; a negative one cuts a groove"},
+    {"cord", "onset", kNumber, kOnset, "whorls", "", "0.0", "where it begins to rise, the embryonic shell's end at the earliest"},
+    {"cord", "end", kNumber, kEnd, "whorls", "", "40.0", "where it has ended, counted from the pole"},
+    {"rib", "per_whorl", kNumber, {0.1, 1000.0}, "", "", kRequired, "number in a whorl"},
+    {"rib", "height", kNumber, kRelief, "mm", "", kRequired, "height at the lip; a negative one cuts"},
+    {"rib", "breadth", kNumber, {0.02, 1.0}, "", "", "0.6", "breadth of the foot / spacing"},
+    {"rib", "at", kNumber, kAround, "degrees", "", "0.0", "direction of the middle"},
+    {"rib", "width", kNumber, {1.0, 360.0}, "degrees", "", "360.0", "reach round the section; 360 runs all the way round"},
+    {"rib", "behind_lip", kNumber, {0.0, 40.0}, "whorls", "", "0.0", "one crest lies this far behind the lip"},
+    {"rib", "irregularity", kNumber, kShare, "", "", "0.0", "0 regular to 1, in place and height"},
+    {"rib", "seed", kWhole, kSeed, "", "", "1", "of the irregularity"},
+    {"rib", "onset", kNumber, kOnset, "whorls", "", "0.0", "where ribs begin to rise, the embryonic shell's end at the earliest"},
+    {"rib", "end", kNumber, kEnd, "whorls", "", "40.0", "where they have ended, counted from the pole"},
+    {"nodule", "per_whorl", kNumber, {0.1, 1000.0}, "", "", kRequired, "number in a whorl"},
+    {"nodule", "height", kNumber, kRelief, "mm", "", kRequired, "height at the lip; a negative one is a pit"},
+    {"nodule", "length", kNumber, {0.02, 1.0}, "", "", "0.6", "length of the foot along growth / spacing"},
+    {"nodule", "at", kNumber, kAround, "degrees", "", kRequired, "direction of the row"},
+    {"nodule", "width", kNumber, {0.5, 180.0}, "degrees", "", "24.0", "width of the foot round the section"},
+    {"nodule", "behind_lip", kNumber, {0.0, 40.0}, "whorls", "", "0.0", "one crest lies this far behind the lip"},
+    {"nodule", "irregularity", kNumber, kShare, "", "", "0.0", "0 regular to 1, in place and height"},
+    {"nodule", "seed", kWhole, kSeed, "", "", "1", "of the irregularity"},
+    {"nodule", "onset", kNumber, kOnset, "whorls", "", "0.0", "where nodules begin to rise, the embryonic shell's end at the earliest"},
+    {"nodule", "end", kNumber, kEnd, "whorls", "", "40.0", "where they have ended, counted from the pole"},
 
     {"light", "azimuth", kNumber, kAnyTurn, "degrees", "", "135.0", "direction on the page, anticlockwise from the right"},
     {"light", "elevation", kNumber, {0.0, 90.0}, "degrees", "", "45.0", "angle out of the page, towards the reader"},

@@ -53,7 +53,8 @@ std::vector<std::string> tables_with(std::string_view key, std::span<const KeyRo
 
 bool is_list(std::string_view table) {
   constexpr std::string_view kLists[] = {"section.lobe", "band",  "flame",       "spot",  "pattern",
-                                         "lamp",         "panel", "measurement", "series", "outline"};
+                                         "cord",         "rib",   "nodule",      "lamp",  "panel",
+                                         "measurement",  "series", "outline"};
   return std::find(std::begin(kLists), std::end(kLists), table) != std::end(kLists);
 }
 

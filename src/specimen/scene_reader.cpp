@@ -267,6 +267,7 @@ Specimen SceneReader::read() {
   specimen.nacre = read_nacre();
   specimen.translucence = read_translucence();
   specimen.colouring = read_colouring();
+  specimen.sculpture = read_sculpture();
   specimen.light = read_light();
   specimen.lamps = read_lamps();
   specimen.radiograph = read_radiograph();

@@ -35,6 +35,7 @@ class SceneReader {
   Nacre read_nacre();
   Translucence read_translucence();
   Colouring read_colouring();
+  Sculpture read_sculpture();
   Light read_light();
   std::vector<Lamp> read_lamps();
   Radiograph read_radiograph();

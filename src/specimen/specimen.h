@@ -140,6 +140,24 @@ struct Colouring {
   std::vector<EdgePattern> patterns;
 };
 
+/// Raised places fused with the wall; heights in mm at the lip (negative cuts), growing with the whorl.
+struct Cord {
+  Stated<double> at_deg, width_deg, height_mm, onset, end;
+};
+struct Rib {
+  Stated<double> per_whorl, height_mm, breadth, at_deg, width_deg, behind_lip, irregularity, onset, end;
+  Stated<int> seed;
+};
+struct Nodule {
+  Stated<double> per_whorl, height_mm, length, at_deg, width_deg, behind_lip, irregularity, onset, end;
+  Stated<int> seed;
+};
+struct Sculpture {
+  std::vector<Cord> cords;
+  std::vector<Rib> ribs;
+  std::vector<Nodule> nodules;
+};
+
 struct Light {
   Stated<double> azimuth_deg, elevation_deg, softness_deg, fill;
 };
@@ -194,6 +212,7 @@ struct Specimen {
   Nacre nacre;
   Translucence translucence;
   Colouring colouring;
+  Sculpture sculpture;
   Light light;
   std::vector<Lamp> lamps;
   Radiograph radiograph;

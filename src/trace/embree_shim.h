@@ -19,6 +19,13 @@ struct Payload {
 #endif
 };
 
+/// The thread sanitizer cannot see into the library's own threads: under it the hierarchy is built by the caller alone.
+#if defined(__SANITIZE_THREAD__)
+inline constexpr const char* kDeviceSettings = "threads=1,user_threads=1";
+#else
+inline constexpr const char* kDeviceSettings = nullptr;
+#endif
+
 inline void prepare(Payload& payload) {
 #if WHORL_EMBREE_MAJOR >= 4
   rtcInitRayQueryContext(&payload.context);

@@ -154,7 +154,7 @@ EmbreeSolid::EmbreeSolid(const field::Field& field, const SolidOptions& options)
   self.cell_seconds = seconds_since(start);
 
   start = std::chrono::steady_clock::now();
-  self.device = rtcNewDevice(nullptr);
+  self.device = rtcNewDevice(embree::kDeviceSettings);
   if (!self.device)
     throw diagnostics::Error(diagnostics::ExitCode::kUnexpected, "Embree could not be started on this machine");
   rtcSetDeviceMemoryMonitorFunction(self.device, &Impl::note_memory, impl_.get());

@@ -156,6 +156,32 @@ TEST_CASE("Bounds over a box contain every value in it, and steepness every grad
   }
 }
 
+TEST_CASE("Bounds and steepness hold with sculpture, raised and cut, regular and not", "[field][sculpture]") {
+  const auto carve = [](scene::Scene& scene) {
+    const double lip = scene.law.theta_lip, start = scene.law.theta_start;
+    scene.sculpture.reliefs = {
+        {0.06, 0.4, 0.2, 0.0, 0.0, 0.0, start, lip + kTwoPi, 0.0, 0},                      // a cord
+        {-0.04, -0.9, 0.15, 0.0, 0.0, 0.0, start + 3.0, lip - 2.0, 0.0, 0},                // a groove that begins and ends
+        {0.08, 0.5, 1.4, kTwoPi / 13.0, lip, 0.35 * kTwoPi / 13.0, start, lip + kTwoPi, 0.0, 0},
+        {0.01, 0.0, 0.0, kTwoPi / 90.0, lip, 0.5 * kTwoPi / 90.0, start, lip + kTwoPi, 0.7, 5},
+        {0.05, 0.4, 0.3, kTwoPi / 13.0, lip, 0.4 * kTwoPi / 13.0, start, lip + kTwoPi, 0.5, 6}};
+  };
+  test::ShellPlan tall = test::tall_plan(), lobed = test::globose_plan();
+  lobed.inclination_deg = 25.0;
+  lobed.size_kind = specimen::SizeKind::kApertureHeight;
+  lobed.size_mm = 9.0;
+  lobed.lobes = {{80.0, 0.25, 40.0}};
+  for (const test::ShellPlan& plan : {tall, lobed}) {
+    CAPTURE(plan.name);
+    const test::Shell shell(plan, carve);
+    const Tally tally = BoxTrial(shell, 21).run(3000);
+    CAPTURE(tally.worst);
+    CHECK(tally.boxes > 10000);
+    CHECK(tally.outside == 0);
+    CHECK(tally.steeper == 0);
+  }
+}
+
 TEST_CASE("Bounds contain every value with primitives in space, that add and that cut", "[field]") {
   const auto add = [](scene::Scene& scene) {
     for (int i = 0; i < 6; ++i) {

@@ -84,6 +84,15 @@ TEST_CASE("Every key of a scene arrives with its value", "[specimen]") {
   const auto is_pigment = [](const Pigment& p, int red) {
     return same(p.colour, red, 10, 11) && p.opacity == 0.625 && p.fade == 0.375 && p.onset == 1.5 && p.end == 6.5;
   };
+  REQUIRE((s.sculpture.cords.size() == 1 && s.sculpture.ribs.size() == 1 && s.sculpture.nodules.size() == 1));
+  const Cord& cord = s.sculpture.cords[0];
+  CHECK((cord.at_deg == 15.0 && cord.width_deg == 11.0 && cord.height_mm == 0.125 && cord.onset == 1.5 && cord.end == 6.5));
+  const auto is_series = [](const auto& x, int seed) {
+    return x.per_whorl == 13.0 && x.height_mm == 0.0625 && x.at_deg == -25.0 && x.width_deg == 75.0 && x.behind_lip == 0.03 &&
+           x.irregularity == 0.3 && x.seed == seed && x.onset == 1.25 && x.end == 6.25;
+  };
+  CHECK((is_series(s.sculpture.ribs[0], 8) && s.sculpture.ribs[0].breadth == 0.7));
+  CHECK((is_series(s.sculpture.nodules[0], 9) && s.sculpture.nodules[0].length == 0.8));
   REQUIRE(s.colouring.bands.size() == 1);
   CHECK((s.colouring.bands[0].at_deg == 45.0 && s.colouring.bands[0].width_deg == 12.5));
   CHECK(is_pigment(s.colouring.bands[0].pigment, 0x11));
@@ -211,6 +220,7 @@ TEST_CASE("A scene of only what is required has the defaults of the format, none
   CHECK(s.look.interior_finish == Finish::kPlain);
   CHECK(s.translucence.mean_free_path_mm == 0.0);
   CHECK((s.nacre.tablet_nm == 440.0 && s.nacre.spread_nm == 12.0 && s.nacre.layers == 60));
+  CHECK((s.sculpture.cords.empty() && s.sculpture.ribs.empty() && s.sculpture.nodules.empty()));
   CHECK((s.colouring.bands.empty() && s.colouring.flames.empty()));
   CHECK((s.colouring.spots.empty() && s.colouring.patterns.empty()));
   CHECK(s.light.azimuth_deg == 135.0);

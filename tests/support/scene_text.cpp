@@ -65,6 +65,17 @@ SceneText SceneText::with_every_key() {
   scene.set("pattern", "activator_spread", "0.5").set("pattern", "inhibitor_spread", "0.25");
   scene.set("pattern", "variation", "0.15").set("pattern", "threshold", "1.75");
   pigment("pattern", "14");
+  scene.set("cord", "at", "15").set("cord", "width", "11").set("cord", "height", "0.125").set("cord", "onset", "1.5");
+  scene.set("cord", "end", "6.5");
+  const auto series = [&scene](const char* table, const char* seed) {
+    scene.set(table, "per_whorl", "13").set(table, "height", "0.0625").set(table, "at", "-25").set(table, "width", "75");
+    scene.set(table, "behind_lip", "0.03").set(table, "irregularity", "0.3").set(table, "seed", seed);
+    scene.set(table, "onset", "1.25").set(table, "end", "6.25");
+  };
+  series("rib", "8");
+  scene.set("rib", "breadth", "0.7");
+  series("nodule", "9");
+  scene.set("nodule", "length", "0.8");
   scene.set("light", "azimuth", "90")
       .set("light", "elevation", "30")
       .set("light", "softness", "5")

@@ -1,0 +1,156 @@
+// SPDX-License-Identifier: Apache-2.0
+// Heights of sculpture and their bounds.
+#include "growth/sculpture.h"
+
+#include "math/hash.h"
+#include "math/vec.h"
+
+#include <algorithm>
+#include <cmath>
+
+namespace whorl::growth {
+namespace {
+
+constexpr double kRamp = 0.25 * kTwoPi;    // growth over which a relief rises to its height and falls from it
+constexpr double kSteepestKernel = 1.717;  // greatest slope of (1 - u^2)^3: 6 u (1 - u^2)^2 at u^2 = 1/5
+constexpr double kSteepestRamp = 1.875;    // of the quintic step
+constexpr double kShift = 0.25, kVary = 0.5;
+
+double kernel(double u2) {
+  const double v = std::max(0.0, 1.0 - u2);
+  return v * v * v;
+}
+
+double step(double x) {
+  const double t = std::clamp(x, 0.0, 1.0);
+  return t * t * t * (t * (6.0 * t - 15.0) + 10.0);
+}
+
+double ramp(const Relief& r, double growth) { return step((growth - r.onset) / kRamp) * step((r.end - growth) / kRamp); }
+
+// The ramp rises once and falls once.
+Interval ramp_range(const Relief& r, Interval growth) {
+  const double a = ramp(r, growth.lo), b = ramp(r, growth.hi);
+  const double top = std::clamp(0.5 * (r.onset + r.end), growth.lo, growth.hi);
+  return {std::min(a, b), std::max({a, b, ramp(r, top)})};
+}
+
+struct Crest {
+  double at, scale;
+};
+
+Crest crest(const Relief& r, double number) {
+  if (r.irregularity == 0.0) return {r.crest + number * r.spacing, 1.0};
+  const std::uint64_t word = hash_with(r.seed, static_cast<std::uint64_t>(static_cast<std::int64_t>(number)));
+  const auto centred = [](std::uint32_t half) { return 2.0 * static_cast<double>(unit_float(half)) - 1.0; };
+  return {r.crest + (number + kShift * r.irregularity * centred(low_word(word))) * r.spacing,
+          1.0 + kVary * r.irregularity * centred(high_word(word))};
+}
+
+// Crests that can reach a range of growth.
+struct Numbers {
+  double first, last;
+};
+Numbers numbers(const Relief& r, Interval growth) {
+  const double reach = r.growth_reach + kShift * r.irregularity * r.spacing;
+  return {std::ceil((growth.lo - reach - r.crest) / r.spacing), std::floor((growth.hi + reach - r.crest) / r.spacing)};
+}
+
+// Least and greatest distance round the section.
+Interval psi_distance(const Relief& r, double from, double span) {
+  if (r.psi_reach == 0.0) return Interval(0.0);
+  const double d = std::abs(std::remainder(from + 0.5 * span - r.psi, kTwoPi));
+  return {std::max(0.0, d - 0.5 * span), std::min(kPi, d + 0.5 * span)};
+}
+
+double squared_share(double distance, double reach) { return reach > 0.0 ? distance * distance / (reach * reach) : 0.0; }
+
+bool reaches(const Relief& r, Interval growth, double psi_from, double psi_span) {
+  return growth.hi > r.onset && growth.lo < r.end && (r.psi_reach == 0.0 || psi_distance(r, psi_from, psi_span).lo < r.psi_reach);
+}
+
+}  // namespace
+
+double Sculpture::height(double growth, double psi) const noexcept {
+  double sum = 0.0;
+  for (const Relief& r : reliefs) {
+    if (growth <= r.onset || growth >= r.end) continue;
+    const double v2 = squared_share(std::remainder(psi - r.psi, kTwoPi), r.psi_reach);
+    if (v2 >= 1.0) continue;
+    double profile = 0.0;
+    if (r.spacing == 0.0) {
+      profile = kernel(v2);
+    } else {
+      const Numbers n = numbers(r, Interval(growth));
+      for (double number = n.first; number <= n.last; number += 1.0) {
+        const Crest c = crest(r, number);
+        profile += c.scale * kernel(v2 + squared_share(growth - c.at, r.growth_reach));
+      }
+    }
+    sum += r.height * ramp(r, growth) * profile;
+  }
+  return sum;
+}
+
+Interval Sculpture::range(Interval growth, double psi_from, double psi_span) const noexcept {
+  Interval sum(0.0);
+  for (const Relief& r : reliefs) {
+    if (!reaches(r, growth, psi_from, psi_span)) continue;
+    const Interval v = psi_distance(r, psi_from, psi_span);
+    const Interval v2(squared_share(v.lo, r.psi_reach), squared_share(v.hi, r.psi_reach));
+    Interval profile(0.0);
+    if (r.spacing == 0.0) {
+      profile = {kernel(v2.hi), kernel(v2.lo)};
+    } else {
+      const Numbers n = numbers(r, growth);
+      constexpr double kMany = 8.0;  // more crests than that: all heights occur
+      if (n.last - n.first > kMany) {
+        // Neighbours overlap where they are broad or shifted: at most this many have a say at one place.
+        const double overlap = 1.0 + std::ceil(2.0 * (r.growth_reach / r.spacing + kShift * r.irregularity));
+        profile.hi = overlap * (1.0 + kVary * r.irregularity) * kernel(v2.lo);
+      } else {
+        for (double number = n.first; number <= n.last; number += 1.0) {
+          const Crest c = crest(r, number);
+          const double near = std::max({0.0, growth.lo - c.at, c.at - growth.hi});
+          const double far = std::max(std::abs(growth.lo - c.at), std::abs(growth.hi - c.at));
+          profile = profile + c.scale * Interval(kernel(v2.hi + squared_share(far, r.growth_reach)),
+                                                 kernel(v2.lo + squared_share(near, r.growth_reach)));
+        }
+      }
+    }
+    sum = sum + r.height * (ramp_range(r, growth) * profile);
+  }
+  return sum;
+}
+
+Sculpture::Slopes Sculpture::slopes(Interval growth, double psi_from, double psi_span) const noexcept {
+  Slopes sum;
+  for (const Relief& r : reliefs) {
+    if (!reaches(r, growth, psi_from, psi_span)) continue;
+    const bool unbroken = r.spacing == 0.0;
+    const double together = unbroken ? 1.0 : 1.0 + std::ceil(2.0 * (r.growth_reach / r.spacing + kShift * r.irregularity));
+    const double most = std::abs(r.height) * (1.0 + kVary * r.irregularity) * together;
+    sum.by_growth += most * (kSteepestRamp / kRamp + (unbroken ? 0.0 : kSteepestKernel / r.growth_reach));
+    if (r.psi_reach > 0.0) sum.by_psi += most * kSteepestKernel / r.psi_reach;
+  }
+  return sum;
+}
+
+Interval Sculpture::extremes(double psi) const noexcept {
+  Interval sum(0.0);
+  for (const Relief& r : reliefs) {
+    const double most = r.height * (1.0 + kVary * r.irregularity) *
+                        kernel(squared_share(std::remainder(psi - r.psi, kTwoPi), r.psi_reach));
+    (most > 0.0 ? sum.hi : sum.lo) += most;
+  }
+  return sum;
+}
+
+double Sculpture::highest() const noexcept {
+  double most = 0.0;
+  constexpr int kDirections = 1440;
+  for (int i = 0; i < kDirections; ++i) most = std::max(most, extremes(kTwoPi * i / kDirections).hi);
+  return most;
+}
+
+}  // namespace whorl::growth

@@ -1,0 +1,46 @@
+// SPDX-License-Identifier: Apache-2.0
+// Sculpture fused with the wall: cords, ribs and nodules as raised or sunk places in the coordinates of growth.
+#pragma once
+
+#include "math/interval.h"
+
+#include <cstdint>
+#include <vector>
+
+namespace whorl::growth {
+
+/// One series of like places: a cord, a set of ribs, a row of nodules. Angles in radians. Growth is counted along growth
+/// lines, so that what has one growth lies parallel to the lip. Profiles are Wyvill's (1 - u^2)^3: no edge, no kink.
+struct Relief {
+  double height = 0.0;        // at the crest, in half-breadths of the section there; negative cuts
+  double psi = 0.0;           // direction of the middle round the section
+  double psi_reach = 0.0;     // half-width round the section; 0: all the way round
+  double spacing = 0.0;       // growth from one crest to the next; 0: unbroken along growth
+  double crest = 0.0;         // growth of one of the crests
+  double growth_reach = 0.0;  // half-length along growth
+  double onset = 0.0, end = 0.0;
+  double irregularity = 0.0;  // 0 .. 1: crests shift by up to a quarter of their spacing and vary by half in height
+  std::uint64_t seed = 0;
+};
+
+/// How far the surface stands above the plain one, in half-breadths, measured along its normal in space. The sum of its reliefs. Total, thread-safe.
+class Sculpture {
+ public:
+  std::vector<Relief> reliefs;
+
+  bool empty() const { return reliefs.empty(); }
+  double height(double growth, double psi) const noexcept;
+  /// Bounds over a range of growth and the section angles [psi_from, psi_from + psi_span]; never too narrow.
+  Interval range(Interval growth, double psi_from, double psi_span) const noexcept;
+  /// Upper bounds of the derivatives' absolute values by growth and by section angle, over the same.
+  struct Slopes {
+    double by_growth = 0.0, by_psi = 0.0;
+  };
+  Slopes slopes(Interval growth, double psi_from, double psi_span) const noexcept;
+  /// Bounds of the height in one direction over all of growth.
+  Interval extremes(double psi) const noexcept;
+  /// The greatest height of any place, at least 0.
+  double highest() const noexcept;
+};
+
+}  // namespace whorl::growth
