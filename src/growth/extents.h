@@ -14,7 +14,7 @@ struct Exterior {
   CoilingLaw law;
   PeriodicSpline reach;
   double tan_inclination = 0.0;
-  Sculpture sculpture;  // raises the surface points, not the mouth: apertures are measured on the plain outline
+  Sculpture sculpture{};  // raises the surface points, not the mouth: apertures are measured on the plain outline
 };
 
 /// The embryonic shell closes the apex: an ellipsoid of revolution on the axis that reaches past the centre of the first section.
