@@ -9,6 +9,7 @@
 
 #include "diagnostics/error.h"
 #include "math/parallel.h"
+#include "measure/provenance_shares.h"
 #include "measure/report.h"
 #include "plate/figure.h"
 #include "plate/studio.h"
@@ -95,7 +96,7 @@ int plate_command(const Options& options, Progress& progress) {
     const double share = static_cast<double>(panel.rect.width) * panel.rect.height / area;
     plate::Studio& studio = *studios[sheet ? i : 0];
     if (sheet) studio.set_up(finest, options.exact);
-    films.push_back(studio.picture(panel.view, panel.look, panel.camera(studio.front_mm()), samples, options.seed,
+    films.push_back(studio.picture(panel.view, panel.look, panel.shows, panel.camera(studio.front_mm()), samples, options.seed,
                                    static_cast<std::uint32_t>(i), PictureProgress(progress, before, share)));
     before += share;
     if (!sheet) continue;
@@ -116,6 +117,8 @@ int plate_command(const Options& options, Progress& progress) {
     progress.step("measuring the shell");
     facts.measurements = measure::to_json(measure::measure_shell(
         studios[0]->solid(), specimen.identity.mineral, {measure_lines(specimen.plate.quality.value), options.seed}));
+    if (const specimen::Preservation preservation(specimen); preservation.stated())
+      facts.provenance = measure::provenance_shares(studios[0]->solid(), preservation, {1 << 16, options.seed});
   }
   progress.step("writing the files");
   const auto paths = plate::write_figure(plan, specimen, films, facts, options.out, plate::figure_stem(options.scene));

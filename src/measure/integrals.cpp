@@ -3,7 +3,6 @@
 #include "measure/integrals.h"
 
 #include "math/parallel.h"
-#include "math/sobol.h"
 
 #include <array>
 
@@ -19,13 +18,7 @@ using Sums = std::array<double, kQuantities>;
 
 void add_line(const trace::EmbreeSolid& solid, const Vec3& centre, double radius,
               const std::array<float, kSobolDimensions>& u, std::vector<trace::Crossing>& crossings, Sums& sums) {
-  const double z = 1.0 - 2.0 * static_cast<double>(u[0]), around = kTwoPi * static_cast<double>(u[1]);
-  const double across = std::sqrt(std::max(0.0, 1.0 - z * z));
-  const Frame frame = frame_around({across * std::cos(around), across * std::sin(around), z});
-  const double r = radius * std::sqrt(static_cast<double>(u[2])), turn = kTwoPi * static_cast<double>(u[3]);
-  const Vec3 start = centre + frame.to_world({r * std::cos(turn), r * std::sin(turn), -1.001 * radius});
-  const trace::Ray line{Vec3f(start), Vec3f(frame.z)};
-  solid.crossings(line, State::kOutside, crossings);
+  solid.crossings(isotropic_line(centre, radius, u), State::kOutside, crossings);
   for (std::size_t i = 0; i < crossings.size(); ++i) {
     const trace::Crossing& c = crossings[i];
     const bool solid_side = c.before == State::kSolid || c.after == State::kSolid;
@@ -40,6 +33,15 @@ void add_line(const trace::EmbreeSolid& solid, const Vec3& centre, double radius
 }
 
 }  // namespace
+
+trace::Ray isotropic_line(const Vec3& centre, double radius, const std::array<float, kSobolDimensions>& u) {
+  const double z = 1.0 - 2.0 * static_cast<double>(u[0]), around = kTwoPi * static_cast<double>(u[1]);
+  const double across = std::sqrt(std::max(0.0, 1.0 - z * z));
+  const Frame frame = frame_around({across * std::cos(around), across * std::sin(around), z});
+  const double r = radius * std::sqrt(static_cast<double>(u[2])), turn = kTwoPi * static_cast<double>(u[3]);
+  const Vec3 start = centre + frame.to_world({r * std::cos(turn), r * std::sin(turn), -1.001 * radius});
+  return {Vec3f(start), Vec3f(frame.z)};
+}
 
 Integrals integrate(const trace::EmbreeSolid& solid, const MeasureOptions& options) {
   const Box3& box = solid.field().scene().bounds;

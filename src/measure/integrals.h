@@ -2,9 +2,15 @@
 // Volumes and areas of the solid by random lines.
 #pragma once
 
+#include "math/sobol.h"
 #include "measure/measurements.h"
 
+#include <array>
+
 namespace whorl::measure {
+
+/// An isotropic uniform line through a sphere, for numbers u in [0, 1); it starts outside.
+trace::Ray isotropic_line(const Vec3& centre, double radius, const std::array<float, kSobolDimensions>& u);
 
 struct Integrals {
   Measured outer_volume, lumen_volume, wall_volume, outer_area, inner_area;

@@ -3,6 +3,7 @@
 #include "plate/caption.h"
 
 #include "plate/disclosure.h"
+#include "plate/provenance_words.h"
 #include "plate/scale_bar.h"
 
 #include <fmt/format.h>
@@ -63,6 +64,8 @@ std::vector<std::string> plain(const std::vector<double>& numbers) {
 /// "apertural view, whitened"
 std::string panel_words(const FigurePanel& panel, const specimen::Specimen& specimen) {
   std::string words = panel.eye ? pair_label(panel) : panel.view.label;
+  if (panel.shows == specimen::Shows::kMould) words += ", internal mould";
+  if (panel.shows == specimen::Shows::kBoth) words += ", internal mould in the shell cut open along its axis";
   if (panel.look == specimen::PanelLook::kWhitened) words += ", whitened";
   if (panel.look == specimen::PanelLook::kRadiograph) words += ", " + radiograph_label(specimen.radiograph);
   if (panel.eye) words += fmt::format(", stereo pair for parallel viewing ({:g}°)", specimen.stereo.angle_deg.value);
@@ -75,6 +78,8 @@ std::string looks_sentence(const FigurePlan& plan, const specimen::Specimen& spe
     return std::any_of(plan.panels.begin(), plan.panels.end(), [look](const FigurePanel& p) { return p.look == look; });
   };
   std::string text;
+  if (std::any_of(plan.panels.begin(), plan.panels.end(), [](const FigurePanel& p) { return p.shows != specimen::Shows::kShell; }))
+    text += " The internal mould is the fill of the model's lumen up to the aperture.";
   if (shows(specimen::PanelLook::kWhitened)) text += " The whitening is computed: no specimen was coated.";
   if (shows(specimen::PanelLook::kRadiograph))
     text += fmt::format(" The radiograph is computed from the wall of the model (exp(-µt), {:g} keV, {}) and no X-ray picture of a "
@@ -167,6 +172,7 @@ std::string make_caption(const FigurePlan& plan, const specimen::Specimen& speci
 
   text += "The figure shows a " + std::string(kDisclosureClass) + " (Whorlwright " + run.version +
           "), no photograph of a specimen. " + std::string(kTypeSentence) + looks_sentence(plan, specimen);
+  if (plan.provenance) text += " " + provenance_sentences(plan, specimen, run.provenance);
   const std::vector<Basis> basis = basis_of(specimen);
   const std::string stated = shaping_words(basis, true), assumed = shaping_words(basis, false);
   if (!stated.empty()) text += " Stated: " + stated + ".";

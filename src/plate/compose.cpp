@@ -4,6 +4,7 @@
 
 #include "math/parallel.h"
 #include "plate/ink.h"
+#include "plate/unobserved.h"
 #include "shaders_cpu/tone/curve.h"
 #include "shaders_cpu/tone/srgb.h"
 
@@ -51,13 +52,15 @@ Vec3 developed(const Vec3f& radiance, double cover) {
   return {std::min(shown.x, 1.0), std::min(shown.y, 1.0), std::min(shown.z, 1.0)};
 }
 
-void put_film(const FigurePanel& panel, const transport::Film& film, int y, std::vector<Light>& row) {
+void put_film(const FigurePlan& plan, const FigurePanel& panel, const transport::Film& film, int y, std::vector<Light>& row) {
   if (film.size() == 0 || y < panel.rect.y || y >= panel.rect.bottom()) return;
+  const UnobservedStyle style(plan, panel);
   for (int x = 0; x < panel.rect.width; ++x) {
     const std::size_t at = film.index(x, y - panel.rect.y);
     const double cover = std::min(1.0, positive(film.coverage[at]));
     if (cover < kNoCoverage) continue;
-    row[static_cast<std::size_t>(panel.rect.x + x)].put_over(developed(film.radiance[at], cover), cover);
+    const Vec3 seen = developed(film.radiance[at], cover);
+    row[static_cast<std::size_t>(panel.rect.x + x)].put_over(style.drawn(seen, film.facts[at], panel.rect.x + x, y), cover);
   }
 }
 
@@ -108,7 +111,7 @@ Picture compose(const FigurePlan& plan, const std::vector<transport::Film>& film
   parallel_for(static_cast<std::size_t>(plan.height), 16, [&](std::size_t line) {
     const int y = static_cast<int>(line);
     std::vector<Light> row(static_cast<std::size_t>(plan.width), paper);
-    for (std::size_t i = 0; i < films.size(); ++i) put_film(plan.panels[i], films[i], y, row);
+    for (std::size_t i = 0; i < films.size(); ++i) put_film(plan, plan.panels[i], films[i], y, row);
     for (const Ink& ink : inks) put_ink(ink, ink_colour, y, row);
     store(row, y, picture);
   });

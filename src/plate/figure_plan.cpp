@@ -83,6 +83,7 @@ std::vector<specimen::Specimen> sheet_shells(const specimen::Specimen& specimen)
       shell.growth.W_depth.reset();
       shell.growth.W_section.reset();
       shell.growth.T.value = T;
+      shell.preserved.clear();
       shells.push_back(std::move(shell));
     }
   return shells;
@@ -93,6 +94,8 @@ specimen::Specimen sheet_plate(const specimen::Specimen& specimen) {
   const specimen::ContactSheet& sheet = specimen.contact_sheet;
   plate.plate.columns.value = static_cast<int>(sheet.W.value.size());
   plate.plate.letters.value = specimen::Letters::kNone;
+  plate.preserved.clear();  // no specimen has those shells
+  plate.plate.unobserved.value = specimen::Unobserved::kPlain;
   plate.plate.panels.assign(sheet.W.value.size() * sheet.T.value.size(), specimen.plate.panels.at(0));
   return plate;
 }
@@ -201,6 +204,9 @@ FigurePlan plan_figure(const specimen::Specimen& specimen, const std::vector<Vie
   plan.resolution_ppi = layout.resolution_ppi;
   plan.common_scale = layout.common_scale;
   plan.bars = layout.bars;
+  plan.provenance = !specimen.preserved.empty();
+  plan.unobserved = plate.unobserved;
+  plan.hatch_mm = plate.hatch_mm;
   for (std::size_t i = 0; i < views.size(); ++i) {
     const LayoutPanel& place = layout.panels[i];
     FigurePanel panel;
@@ -215,6 +221,7 @@ FigurePlan plan_figure(const specimen::Specimen& specimen, const std::vector<Vie
     panel.letter_left = place.letter_left;
     panel.letter_top = place.letter_top;
     panel.look = plate.panels[i].look;
+    panel.shows = plate.panels[i].shows;
     if (specimen.contact_sheet.wanted()) panel.note = sheet_note(specimen.contact_sheet, i);
     if (panel.look == specimen::PanelLook::kRadiograph) panel.label = radiograph_label(specimen.radiograph);
     if (!panel.note.empty()) panel.label = panel.note + (panel.label.empty() ? "" : ", " + panel.label);

@@ -17,6 +17,7 @@ struct FigurePanel {
   View view;
   std::string letter;         // as it is printed, "" for none
   specimen::PanelLook look = specimen::PanelLook::kNatural;
+  specimen::Shows shows = specimen::Shows::kShell;
   std::optional<Eye> eye;     // of a stereo pair: its left picture is followed at once by its right one
   std::string note;           // what is peculiar to this picture, for caption and label: "W 2, T 1"
   std::string label;          // words above the picture, "" for none
@@ -39,6 +40,9 @@ struct FigurePlan {
   double common_scale = 0.0;        // mm on paper for a mm of shell
   std::vector<FigurePanel> panels;  // in reading order
   std::vector<LayoutBar> bars;
+  bool provenance = false;          // the specimen states what is preserved: films tell what was observed
+  specimen::Unobserved unobserved = specimen::Unobserved::kPlain;  // how the rest is drawn
+  double hatch_mm = 0.0;            // spacing of hatching on paper
 };
 
 /// The shells of a contact sheet, row by row, and the specimen whose panels they fill: as many panels as shells, columns as W, no

@@ -4,6 +4,7 @@
 
 #include "plate/compose.h"
 #include "plate/disclosure.h"
+#include "plate/provenance_words.h"
 #include "plate/sha256.h"
 #include "shaders_cpu/medium/attenuation.h"
 #include "shaders_cpu/tone/curve.h"
@@ -102,6 +103,7 @@ ordered_json panel_record(const FigurePanel& panel, const transport::Film& film)
   if (panel.eye) json["eye"] = panel.eye == Eye::kLeft ? "left" : "right";
   if (!panel.note.empty()) json["shell"] = panel.note;
   if (!panel.label.empty()) json["label"] = panel.label;
+  if (panel.shows != specimen::Shows::kShell) json["shows"] = panel.shows == specimen::Shows::kMould ? "internal mould" : "internal mould in the shell cut open";
   json["rendered"] = film.size() != 0;
   json["samples_per_pixel"] = {{"mean", film.mean_samples}, {"max", film.max_samples}};
   json["noise"] = film.noise;
@@ -197,6 +199,7 @@ ordered_json make_record(const FigurePlan& plan, const specimen::Specimen& speci
   add_looks(plan, specimen, json);
   json.update(picture_making(specimen.light));
   json["disclosure"] = disclosure(specimen);
+  if (plan.provenance) json["provenance"] = provenance_record(plan, specimen, run.provenance);
   if (!run.measurements.is_null()) json["measurements"] = run.measurements;
   json["counters"] = counters(films, run.counters);
   json["notes"] = ordered_json::array();

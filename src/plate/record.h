@@ -3,12 +3,14 @@
 #pragma once
 
 #include "plate/figure_plan.h"
+#include "specimen/provenance.h"
 #include "specimen/specimen.h"
 #include "transport/film.h"
 
 #include <nlohmann/json.hpp>
 
 #include <cstdint>
+#include <optional>
 #include <string>
 #include <vector>
 
@@ -24,6 +26,7 @@ struct RunFacts {
   specimen::Quality quality = specimen::Quality::kPrint;   // as used
   nlohmann::ordered_json measurements;                     // as `measure --json` writes it; null leaves it out
   nlohmann::ordered_json counters;                         // of the solid: cells, primitives, exact_cells ..; an object or null
+  std::optional<specimen::ProvenanceShares> provenance;    // measured on the solid, where the specimen states what is preserved
 };
 
 /// Keys in a fixed order; all but `seconds` and `threads` depend only on scene, seed and build.

@@ -4,7 +4,9 @@
 
 #include "compile/compile.h"
 #include "growth/extents.h"
+#include "plate/provenance_layer.h"
 #include "shaders_cpu/medium/attenuation.h"
+#include "trace/mould_solid.h"
 #include "trace/sectioned_solid.h"
 #include "transport/lighting.h"
 #include "transport/path_tracer.h"
@@ -22,6 +24,9 @@ constexpr double kOfAPixel = 0.1;
 
 // Nothing but outlines is noisy in a radiograph.
 constexpr int kRadiographSamples = 32;
+
+// The direction towards the reader, square to the axis of coiling.
+Vec3 beside_axis(const Vec3& towards_reader) { return Vec3(towards_reader.x, towards_reader.y, 0.0).normalized(); }
 
 double now() {
   return std::chrono::duration<double>(std::chrono::steady_clock::now().time_since_epoch()).count();
@@ -74,7 +79,15 @@ void Studio::set_up(double mm_per_pixel, bool exact) {
   compile_seconds_ += now() - start;
 }
 
-transport::Film Studio::picture(const View& view, specimen::PanelLook look, const transport::Camera& camera, int samples,
+transport::Film Studio::picture(const View& view, specimen::PanelLook look, specimen::Shows shows, const transport::Camera& camera, int samples,
+                                std::uint64_t seed, std::uint32_t number, const transport::Progress& progress) const {
+  transport::Film film = exposed(view, look, shows, camera, samples, seed, number, progress);
+  const specimen::Preservation preservation(specimen_);
+  if (preservation.stated()) add_provenance(preservation, *field_, camera, film);
+  return film;
+}
+
+transport::Film Studio::exposed(const View& view, specimen::PanelLook look, specimen::Shows shows, const transport::Camera& camera, int samples,
                                 std::uint64_t seed, std::uint32_t number, const transport::Progress& progress) const {
   if (look == specimen::PanelLook::kRadiograph) {
     transport::RadiographJob job;
@@ -90,18 +103,23 @@ transport::Film Studio::picture(const View& view, specimen::PanelLook look, cons
     return transport::radiograph(job, progress);
   }
   std::vector<transport::PlacedLamp> lamps;
-  for (const scene::Lamp& lamp : scene_->lamps)
-    lamps.push_back({lamp.centre, lamp.radius, lamp.strength, lamp.temperature_k});
+  if (shows == specimen::Shows::kShell)  // a mould fills the place of lamps
+    for (const scene::Lamp& lamp : scene_->lamps)
+      lamps.push_back({lamp.centre, lamp.radius, lamp.strength, lamp.temperature_k});
   std::optional<trace::SectionedSolid> half;
   if (view.cut) half.emplace(*solid_, view.fixed_page.z);
 
   transport::RenderJob job;
   job.shell = half ? static_cast<const trace::Surfaces*>(&*half) : solid_.get();
+  std::optional<trace::MouldSolid> mould;
+  if (shows == specimen::Shows::kMould) mould.emplace(*solid_);
+  if (shows == specimen::Shows::kBoth) mould.emplace(*solid_, beside_axis(view.fixed_page.z));
+  if (mould) job.shell = &*mould;
   job.bounds_mm = scene_->bounds;
   job.camera = camera;
   job.lighting = transport::light_page(specimen_.light, lamps, view.fixed_page);
   job.materials = look == specimen::PanelLook::kWhitened ? whitened_ : materials_;
-  if (view.cut) job.materials.wall.reset();
+  if (view.cut || mould) job.materials.wall.reset();
   job.samples_per_pixel = samples;
   job.seed = seed;
   job.panel = number;

@@ -37,7 +37,7 @@ class Studio {
   void set_up(double mm_per_pixel, bool exact);
 
   /// One picture. Not for several threads at once: it uses all of them itself.
-  transport::Film picture(const View& view, specimen::PanelLook look, const transport::Camera& camera, int samples,
+  transport::Film picture(const View& view, specimen::PanelLook look, specimen::Shows shows, const transport::Camera& camera, int samples,
                           std::uint64_t seed, std::uint32_t number, const transport::Progress& progress) const;
 
   const scene::Scene& scene() const { return *scene_; }
@@ -50,6 +50,10 @@ class Studio {
   double compile_seconds() const { return compile_seconds_; }
 
  private:
+  /// The picture without its layer of provenance.
+  transport::Film exposed(const View& view, specimen::PanelLook look, specimen::Shows shows, const transport::Camera& camera, int samples, std::uint64_t seed,
+                          std::uint32_t number, const transport::Progress& progress) const;
+
   specimen::Specimen specimen_;
   std::unique_ptr<scene::Scene> scene_;
   std::unique_ptr<field::Field> field_;

@@ -59,7 +59,7 @@ std::vector<std::filesystem::path> Turntable::render(const transport::Progress& 
     const plate::FigurePanel& panel = figure.panels[0];
     const auto start = std::chrono::steady_clock::now();
     const transport::Film film =
-        studio_.picture(panel.view, panel.look, panel.camera(studio_.front_mm()), samples, facts.seed, static_cast<std::uint32_t>(frame),
+        studio_.picture(panel.view, panel.look, panel.shows, panel.camera(studio_.front_mm()), samples, facts.seed, static_cast<std::uint32_t>(frame),
                         FrameProgress(progress, i, missing_.size()));
     facts.seconds_render = std::chrono::duration<double>(std::chrono::steady_clock::now() - start).count();
     const FrameFiles files = frame_files(job_.folder, job_.stem, frame);

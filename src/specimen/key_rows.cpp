@@ -15,6 +15,7 @@ constexpr Range kLine{1.0, 200.0};  // characters
 constexpr Range kNothing{};
 constexpr Range kShare{0.0, 1.0};
 constexpr Range kOnset{0.0, 40.0, false, true}, kEnd{0.0, 40.0, true, false};  // whorls from the pole
+constexpr Range kWhorls{0.0, 40.0};      // whorls
 constexpr Range kAround{-180.0, 360.0};  // directions round a section, degrees
 constexpr Range kRate{0.1, 1000.0};      // a whorl
 constexpr Range kSpread{0.0, 10000.0};   // mm^2 a whorl
@@ -60,6 +61,11 @@ constexpr KeyRow kRows[] = {
     {"lip", "inclination", kNumber, {-60.0, 60.0}, "degrees", "", "0.0", "angle between aperture plane and axis; + prosocline"},
     {"lip", "thickness", kNumber, kThickness, "mm", "", "(the thickness of the wall)", "thickness of the rounded rim"},
 
+    {"preserved", "from", kNumber, kWhorls, "whorls", "", "(the apex)", "the end that lies nearer to the apex"},
+    {"preserved", "to", kNumber, kWhorls, "whorls", "", "(the lip)", "the end that lies nearer to the lip"},
+    {"preserved", "counted", kWord, kNothing, "", "from the pole|from the lip", "\"from the pole\"", "where the whorls of from and to are counted from"},
+    {"preserved", "parts", kWord, kNothing, "", "whole|wall|outside|inside", "\"whole\"", "what is preserved there"},
+
     {"look", "exterior", kColour, kNothing, "", "", "\"#d8c7a8\"", "colour of the outside"},
     {"look", "interior", kColour, kNothing, "", "", "\"#f1e6da\"", "colour of the inside"},
     {"look", "section", kColour, kNothing, "", "", "\"#b08d82\"", "colour of cut faces"},
@@ -72,6 +78,7 @@ constexpr KeyRow kRows[] = {
     {"look", "exterior_finish", kWord, kNothing, "", "plain|polished|glazed|periostracum|nacre", "\"plain\"", "surface of the outside"},
     {"look", "interior_finish", kWord, kNothing, "", "plain|polished|glazed|periostracum|nacre", "\"plain\"", "surface of the inside"},
     {"look", "periostracum", kColour, kNothing, "", "", "\"#a5814a\"", "colour of white shell under its periostracum"},
+    {"look", "mould", kColour, kNothing, "", "", "\"#b4a58c\"", "colour of the internal mould"},
 
     {"nacre", "tablet", kNumber, {50.0, 1500.0}, "nm", "", "440.0", "mean thickness of a tablet"},
     {"nacre", "spread", kNumber, {0.0, 300.0}, "nm", "", "12.0", "standard deviation of the tablets' thickness"},
@@ -185,11 +192,14 @@ constexpr KeyRow kRows[] = {
     {"plate", "letters", kWord, kNothing, "", "none|A|a|(a)", "\"A\"", "how panels are lettered"},
     {"plate", "bar", kBar, {0.001, 1000.0}, "mm", "", "\"auto\"", "length of the scale bar"},
     {"plate", "quality", kWord, kNothing, "", "draft|proof|print", "\"print\"", "how much noise may stay"},
+    {"plate", "unobserved", kWord, kNothing, "", "plain|tint|hatch", "\"plain\"", "how parts are drawn that [[preserved]] leaves unobserved"},
+    {"plate", "hatch_spacing", kNumber, {0.4, 10.0}, "mm", "", "1.2", "between hatching lines on paper"},
 
     {"panel", "view", kView, kNothing, "", "apertural|abapertural|right lateral|left lateral|apical|umbilical|axial section", kRequired, "from where the specimen is seen"},
     {"panel", "scale", kNumber, {0.1, 20.0}, "", "", "1.0", "enlargement over the common scale of the plate"},
     {"panel", "look", kWord, kNothing, "", "natural|whitened|radiograph", "\"natural\"", "as the specimen is, coated for relief, or seen through"},
     {"panel", "picture", kWord, kNothing, "", "single|stereo pair", "\"single\"", "one picture, or two for the two eyes"},
+    {"panel", "shows", kWord, kNothing, "", "shell|mould|both", "\"shell\"", "the shell, its internal mould, or the mould within the shell cut open"},
     {"panel.view", "azimuth", kNumber, kAnyTurn, "degrees", "", kRequired, "degrees the eye walks to its right round the upright shell, from the apertural view"},
     {"panel.view", "elevation", kNumber, {-90.0, 90.0}, "degrees", "", kRequired, "degrees the eye rises towards the apex"},
 };

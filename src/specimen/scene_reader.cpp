@@ -2,6 +2,8 @@
 // The specimen, table by table.
 #include "specimen/scene_reader.h"
 
+#include "specimen/preserved.h"
+
 #include <fmt/format.h>
 
 #include <algorithm>
@@ -166,6 +168,7 @@ Look SceneReader::read_look(const Lip& lip) {
   look.exterior_finish = t.word<Finish>("exterior_finish");
   look.interior_finish = t.word<Finish>("interior_finish");
   look.periostracum = t.colour("periostracum");
+  look.mould = t.colour("mould");
   return look;
 }
 
@@ -173,6 +176,12 @@ Nacre SceneReader::read_nacre() {
   const TableReader t = table("nacre");
   return {t.number("tablet"), t.number("spread"), t.number("sheet"), t.number("sheet_index"), t.whole("layers"),
           t.number("drift")};
+}
+
+std::vector<Preserved> SceneReader::read_preserved() {
+  std::vector<Preserved> stretches;
+  for (const TableReader& t : list("preserved", &root_)) stretches.push_back(preserved_of(t));
+  return stretches;
 }
 
 Translucence SceneReader::read_translucence() {
@@ -216,6 +225,8 @@ Plate SceneReader::read_plate() {
   plate.letters = t.word<Letters>("letters");
   plate.bar_mm = t.bar("bar");
   plate.quality = t.word<Quality>("quality");
+  plate.unobserved = t.word<Unobserved>("unobserved");
+  plate.hatch_mm = t.number("hatch_spacing");
   plate.panels = read_panels();
   return plate;
 }
@@ -235,6 +246,7 @@ Panel SceneReader::read_panel(const TableReader& t) {
   panel.look = t.word<PanelLook>("look");
   const Stated<int> picture = t.word<int>("picture");
   panel.stereo = {picture.value == 1, picture.where, picture.given};
+  panel.shows = t.word<Shows>("shows");
   return panel;
 }
 
@@ -263,6 +275,7 @@ Specimen SceneReader::read() {
   specimen.size = read_size();
   specimen.wall = read_wall();
   specimen.lip = read_lip(specimen.wall);
+  specimen.preserved = read_preserved();
   specimen.look = read_look(specimen.lip);
   specimen.nacre = read_nacre();
   specimen.translucence = read_translucence();

@@ -34,6 +34,7 @@ class SceneReader {
   Look read_look(const Lip& lip);
   Nacre read_nacre();
   Translucence read_translucence();
+  std::vector<Preserved> read_preserved();
   Colouring read_colouring();
   Sculpture read_sculpture();
   Light read_light();

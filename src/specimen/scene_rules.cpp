@@ -3,8 +3,11 @@
 #include "specimen/scene_rules.h"
 
 #include "specimen/key_table.h"
+#include "specimen/preserved.h"
 
 #include <fmt/format.h>
+
+#include <cmath>
 
 namespace whorl::specimen {
 namespace {
@@ -100,6 +103,25 @@ void check_contact_sheet(const Specimen& s, ProblemList& problems) {
     problems.add(s.plate.panels[0].stereo.where, "[[panel]] picture: a contact sheet takes single pictures");
 }
 
+// A shell is cut open along its axis towards the reader, who must stand beside it.
+void check_shows(const Plate& plate, ProblemList& problems) {
+  constexpr double kBeside = 45.0;  // degrees of elevation
+  for (const Panel& panel : plate.panels) {
+    const ViewName view = panel.view.value;
+    if (panel.shows.value == Shows::kShell) continue;
+    if (view == ViewName::kAxialSection)
+      problems.add(panel.shows.where, "[[panel]] shows: an axial section shows the shell; choose a view from outside");
+    const bool along = view == ViewName::kApical || view == ViewName::kUmbilical ||
+                       (view == ViewName::kFree && std::abs(panel.elevation_deg) > kBeside);
+    if (panel.shows.value == Shows::kBoth && along)
+      problems.add(panel.shows.where, fmt::format("[[panel]] shows = \"both\": the shell is cut open along its axis, which must be seen "
+                                                  "from the side; choose a side view, or a free view of at most {:g} degrees elevation",
+                                                  kBeside));
+    if (panel.look.value == PanelLook::kRadiograph)
+      problems.add(panel.shows.where, "[[panel]] shows: a radiograph goes through the wall of the shell; choose another look");
+  }
+}
+
 void check_looks(const Plate& plate, ProblemList& problems) {
   for (const Panel& panel : plate.panels) {
     if (panel.look.value == PanelLook::kRadiograph && panel.view.value == ViewName::kAxialSection)
@@ -118,6 +140,11 @@ void check_rules(const Specimen& specimen, ProblemList& problems) {
     check_thickness("[lip] thickness", specimen.lip.thickness_mm, specimen, problems);
   check_colouring(specimen, problems);
   check_looks(specimen.plate, problems);
+  check_preserved(specimen.preserved, specimen.growth.whorls.value, problems);
+  check_shows(specimen.plate, problems);
+  if (specimen.plate.unobserved.value != Unobserved::kPlain && specimen.preserved.empty())
+    problems.add(specimen.plate.unobserved.where,
+                 "[plate] unobserved: nothing says what was observed; state what is preserved in tables [[preserved]]");
   check_contact_sheet(specimen, problems);
   check_page(specimen.plate, problems);
 }

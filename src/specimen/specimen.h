@@ -31,6 +31,12 @@ enum class Background { kWhite, kBlack, kClear };
 enum class Letters { kNone, kUpper, kLower, kLowerInBrackets };
 enum class Finish { kPlain, kPolished, kGlazed, kPeriostracum, kNacre };
 enum class PanelLook { kNatural, kWhitened, kRadiograph };
+/// How a plate draws what was not observed.
+enum class Unobserved { kPlain, kTint, kHatch };
+/// What a panel shows: the shell, the fill of its lumen, or that within the shell cut open.
+enum class Shows { kShell, kMould, kBoth };
+/// What of the shell is preserved in a stretch of growth. `kWall`: outside and inside; `kWhole`: the columella, too.
+enum class PreservedParts { kWhole, kWall, kOutside, kInside };
 enum class Quality { kDraft, kProof, kPrint };
 enum class ViewName { kApertural, kAbapertural, kRightLateral, kLeftLateral, kApical, kUmbilical, kAxialSection, kFree };
 
@@ -89,6 +95,7 @@ struct Look {
   Stated<double> lip_breadth_mm, callus_breadth_mm;
   Stated<Finish> exterior_finish, interior_finish;
   Stated<Colour> periostracum;  // of white shell under it
+  Stated<Colour> mould;
 };
 
 struct Translucence {
@@ -100,6 +107,15 @@ struct Nacre {
   Stated<double> tablet_nm, spread_nm, sheet_nm, sheet_index;
   Stated<int> layers;
   Stated<double> drift;
+};
+
+/// A stretch of growth in which the specimen is preserved. As stated: whorls from the pole, or back from the lip; `from` lies nearer
+/// to the apex and may equal `to`. Without a value: the apex, the lip.
+struct Preserved {
+  std::optional<Stated<double>> from, to;
+  Stated<bool> from_lip;
+  Stated<PreservedParts> parts;
+  diagnostics::Position where;
 };
 
 /// Colour laid down along the growing edge, from `onset` to `end` in whorls; growth is counted along growth lines.
@@ -172,6 +188,7 @@ struct Panel {
   Stated<double> scale;                           // relative to the plate's common scale
   Stated<PanelLook> look;
   Stated<bool> stereo;                            // a pair of pictures
+  Stated<Shows> shows;
 };
 
 struct Stereo {
@@ -190,6 +207,8 @@ struct Plate {
   Stated<Letters> letters;
   Stated<double> bar_mm;  // 0 = by the 1-2-5 rule
   Stated<Quality> quality;
+  Stated<Unobserved> unobserved;
+  Stated<double> hatch_mm;  // spacing of hatching on paper
   std::vector<Panel> panels;
 };
 
@@ -208,6 +227,7 @@ struct Specimen {
   Size size;
   Wall wall;
   Lip lip;
+  std::vector<Preserved> preserved;  // none: nothing is said of it
   Look look;
   Nacre nacre;
   Translucence translucence;

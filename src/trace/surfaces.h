@@ -18,7 +18,7 @@ struct Ray {
 };
 
 /// What a place on the picture shows. The numbers are those of the `part` layer (scene-file contract).
-enum class Part : std::uint8_t { kNothing = 0, kExterior = 1, kInterior = 2, kCutFace = 3, kOrnament = 4, kLamp = 5 };
+enum class Part : std::uint8_t { kNothing = 0, kExterior = 1, kInterior = 2, kCutFace = 3, kOrnament = 4, kLamp = 5, kMould = 6 };
 
 struct Hit {
   float t = 0.0f;

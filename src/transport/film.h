@@ -18,6 +18,7 @@ struct PixelFacts {
   float turn = 0.0f;         // whorls from the pole
   float around_deg = 0.0f;   // section angle
   std::uint8_t part = 0;     // trace::Part
+  std::uint8_t provenance = 0;  // specimen::Provenance; 0 also where the specimen says nothing of it
 };
 
 /// Row-major, top row first. Radiance is scene-linear with sRGB primaries, premultiplied by coverage:

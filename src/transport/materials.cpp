@@ -41,6 +41,7 @@ Finish make_finish(specimen::Finish kind, const specimen::Specimen& specimen) {
 
 shaders_cpu::CoatedDiffuse Materials::surface(const trace::Hit& hit) const noexcept {
   if (hit.part == trace::Part::kCutFace) return {section_display, nullptr};
+  if (hit.part == trace::Part::kMould && !whitening) return {mould, nullptr};
   if (whitening) return {whitening->albedo(hit), nullptr};
   const bool inside = hit.part == trace::Part::kInterior;
   const Finish* finish = inside ? &inner : &outer;
@@ -63,6 +64,7 @@ Materials make_materials(const field::Field& field, const specimen::Specimen& sp
   m.exterior = m.ornament = linear(look.exterior.value);
   m.interior = linear(look.interior.value);
   m.section_display = linear(look.section.value);
+  m.mould = linear(look.mould.value);
   m.outer = make_finish(look.exterior_finish, specimen);
   m.inner = look.interior_finish.value == look.exterior_finish.value ? m.outer : make_finish(look.interior_finish, specimen);
   m.rim = make_finish(specimen::Finish::kPlain, specimen);

@@ -23,6 +23,7 @@ struct Finish {
 /// Colours are linear, with sRGB primaries.
 struct Materials {
   Vec3f exterior{0.8f}, interior{0.8f}, ornament{0.8f};  // albedo of the matt body
+  Vec3f mould{0.5f};                                     // albedo of the internal mould, which is matt
   Vec3f section_display{0.5f};                           // a cut face prints as exactly this, unlit
   Finish outer, inner;
   Finish rim;                                            // of the inside within the lip, where `inner` is nacre

@@ -52,7 +52,8 @@ double Whitening::body(const Vec3& p, bool from_inside, const Nearby& near) cons
   const scene::Scene& scene = field_.scene();
   double outer_so_far = -reach_, lumen = -reach_;
   const auto add = [&](double outer, double hollow) {
-    lumen = std::max(lumen, std::min(hollow, -outer_so_far));
+    // Beyond the growth front the lumen's function is positive everywhere; the tube's ends there.
+    lumen = std::max(lumen, std::min({hollow, outer, -outer_so_far}));
     outer_so_far = std::max(outer_so_far, outer);
   };
   if (near.chamber) {
@@ -82,7 +83,10 @@ double Whitening::relief(const Vec3& p, bool from_inside) const noexcept {
 }
 
 Vec3f Whitening::albedo(const trace::Hit& hit) const noexcept {
-  const double thickness = std::clamp(kPlain * std::exp(kGain * relief(Vec3(hit.position), hit.part == trace::Part::kInterior)), kThinnest, kThickest);
+  const Vec3 p(hit.position);
+  // What is a crest to the mould is a hollow to the shell's inside.
+  const double stands_out = hit.part == trace::Part::kMould ? -relief(p, true) : relief(p, hit.part == trace::Part::kInterior);
+  const double thickness = std::clamp(kPlain * std::exp(kGain * stands_out), kThinnest, kThickest);
   const auto bare = static_cast<float>(std::exp(-thickness));
   return Vec3f(kCoat + (kGround - kCoat) * bare);
 }

@@ -16,7 +16,7 @@ namespace {
 
 std::string sound_value(const KeyRow& row) {
   if (row.type == KeyType::kColour) return "\"#112233\"";
-  if (row.type == KeyType::kView) return "\"apical\"";
+  if (row.type == KeyType::kView) return "\"apertural\"";
   return row.key == "reach" ? "0.1" : "1";
 }
 
@@ -26,6 +26,7 @@ SceneText scene_with(const KeyRow& row, const std::string& value) {
   scene.set("growth", "whorls", "40").set("size", "shell_height", "5000");
   const std::string table(row.table), key(row.key);
   if (table == "size") scene.drop("size", "shell_height").set("wall", "thickness", "0.001");
+  if (key == "unobserved") scene.set("preserved", "parts", "\"whole\"");
   if (key == "callus_breadth") scene.set("look", "callus", "\"#000000\"");
   if (table != "panel.view" && is_list(table))
     for (const KeyRow& other : key_table())

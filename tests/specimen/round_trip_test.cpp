@@ -76,6 +76,15 @@ TEST_CASE("Every key of a scene arrives with its value", "[specimen]") {
   CHECK(s.look.exterior_finish == Finish::kPeriostracum);
   CHECK(s.look.interior_finish == Finish::kNacre);
   CHECK(same(s.look.periostracum, 12, 13, 14));
+  CHECK(same(s.look.mould, 15, 16, 17));
+  REQUIRE(s.preserved.size() == 1);
+  REQUIRE((s.preserved[0].from && s.preserved[0].to));
+  CHECK(*s.preserved[0].from == 3.5);
+  CHECK(*s.preserved[0].to == 0.25);
+  CHECK(s.preserved[0].from_lip);
+  CHECK(s.preserved[0].parts == PreservedParts::kOutside);
+  CHECK(s.plate.unobserved == Unobserved::kHatch);
+  CHECK(s.plate.hatch_mm == 0.9);
   CHECK((s.translucence.mean_free_path_mm == 0.15 && s.translucence.anisotropy == 0.7));
   CHECK(same(s.translucence.colour, 0xf0, 0xf1, 0xf2));
   CHECK((s.nacre.tablet_nm == 410.0 && s.nacre.spread_nm == 30.0 && s.nacre.sheet_nm == 12.0));
@@ -140,6 +149,7 @@ TEST_CASE("Every key of a scene arrives with its value", "[specimen]") {
   CHECK(s.plate.panels[0].scale == 2.0);
   CHECK(s.plate.panels[0].look == PanelLook::kWhitened);
   CHECK_FALSE(s.plate.panels[0].stereo);
+  CHECK(s.plate.panels[0].shows == Shows::kMould);
   CHECK((s.contact_sheet.W.value == std::vector{1.5, 2.0} && s.contact_sheet.T.value == std::vector{0.5, 1.0, 2.0}));
   CHECK(s.radiograph.energy_kev == 35.0);
   CHECK((s.stereo.angle_deg == 7.0 && s.stereo.spacing_mm == 62.0));
@@ -238,6 +248,9 @@ TEST_CASE("A scene of only what is required has the defaults of the format, none
   CHECK(s.plate.letters == Letters::kUpper);
   CHECK(s.plate.bar_mm == 0.0);
   CHECK(s.plate.quality == Quality::kPrint);
+  CHECK(s.plate.unobserved == Unobserved::kPlain);
+  CHECK(s.plate.hatch_mm == 1.2);
+  CHECK(s.preserved.empty());
   const ViewName usual[] = {ViewName::kApertural, ViewName::kAbapertural, ViewName::kRightLateral,
                             ViewName::kApical,    ViewName::kUmbilical,   ViewName::kAxialSection};
   REQUIRE(s.plate.panels.size() == 6);

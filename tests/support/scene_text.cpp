@@ -42,7 +42,10 @@ SceneText SceneText::with_every_key() {
       .set("look", "callus_breadth", "1.5")
       .set("look", "exterior_finish", "\"periostracum\"")
       .set("look", "interior_finish", "\"nacre\"")
-      .set("look", "periostracum", "\"#0c0d0e\"");
+      .set("look", "periostracum", "\"#0c0d0e\"")
+      .set("look", "mould", "\"#0f1011\"");
+  scene.set("preserved", "from", "3.5").set("preserved", "to", "0.25").set("preserved", "counted", "\"from the lip\"");
+  scene.set("preserved", "parts", "\"outside\"");
   scene.set("nacre", "tablet", "410").set("nacre", "spread", "30").set("nacre", "sheet", "12").set("nacre", "layers", "40");
   scene.set("nacre", "sheet_index", "1.55").set("nacre", "drift", "0.125");
   scene.set("translucence", "mean_free_path", "0.15").set("translucence", "anisotropy", "0.7");
@@ -92,10 +95,11 @@ SceneText SceneText::with_every_key() {
       .set("plate", "gap", "2.5")
       .set("plate", "letters", "\"(a)\"")
       .set("plate", "bar", "10.0");
-  scene.set("plate", "quality", "\"draft\"");
+  scene.set("plate", "quality", "\"draft\"").set("plate", "unobserved", "\"hatch\"").set("plate", "hatch_spacing", "0.9");
   return scene.set("panel", "view", "{ azimuth = 30.0, elevation = 10.0 }").set("panel", "scale", "2.0")
       .set("panel", "look", "\"whitened\"")
-      .set("panel", "picture", "\"single\"");
+      .set("panel", "picture", "\"single\"")
+      .set("panel", "shows", "\"mould\"");
 }
 
 SceneText& SceneText::set(const std::string& table, const std::string& key, const std::string& value) {
