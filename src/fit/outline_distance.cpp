@@ -4,6 +4,7 @@
 
 #include "fit/extents.h"
 #include "fit/predict.h"
+#include "fit/suture_distance.h"
 #include "fit/whorl_ellipse.h"
 
 #include <algorithm>
@@ -118,6 +119,11 @@ Box box_of(const TracedOutline& outline) {
   return box;
 }
 
+Box around(Box box, const SutureLines::Chord& chord) {
+  return {std::min({box.left, chord.x0, chord.x1}), std::max({box.right, chord.x0, chord.x1}), std::min({box.low, -chord.z0, -chord.z1}),
+          std::max({box.high, -chord.z0, -chord.z1})};
+}
+
 double right_azimuth(const Form& form, const TracedOutline& outline, bool sinistral) {
   const double walked = radians(outline.azimuth_deg);
   return form.law.theta_lip - (sinistral ? -walked : walked);
@@ -129,6 +135,12 @@ Box box_of(const Form& form, const TracedOutline& outline, bool sinistral) {
     return {section.inner(), section.outer(), -section.bottom(), -section.top()};
   }
   const double right = right_azimuth(form, outline, sinistral), end = form.law.theta_lip;
+  if (outline.kind == TracedOutline::Kind::kSuture) {
+    Box box;
+    const SutureLines sutures(form, right);
+    for (const SutureLines::Chord& chord : sutures.chords()) box = around(box, chord);
+    return box;
+  }
   const auto reach = [&](double azimuth) {
     double best = 0.0;
     constexpr int kSteps = 48;
@@ -147,7 +159,16 @@ void outline_distances(const Form& form, const TracedOutline& outline, const Pla
                        std::vector<double>& distances) {
   distances.clear();
   const double c = std::cos(placement.tilt), s = std::sin(placement.tilt), mirror = sinistral ? -1.0 : 1.0;
-  const Silhouette silhouette(form, right_azimuth(form, outline, sinistral));
+  const double right = right_azimuth(form, outline, sinistral);
+  if (outline.kind == TracedOutline::Kind::kSuture) {
+    const SutureLines sutures(form, right);
+    for (const TracedOutline::Point& p : outline.points) {
+      const double u = p.x - placement.x, v = p.y - placement.y;
+      distances.push_back(sutures.distance(mirror * (u * c + v * s), u * s - v * c));
+    }
+    return;
+  }
+  const Silhouette silhouette(form, right);
   const Disk section = disk_at(form.law, theta_of(form, outline.stage), 0.0);
   for (const TracedOutline::Point& p : outline.points) {
     const double u = p.x - placement.x, v = p.y - placement.y;
@@ -160,7 +181,7 @@ void outline_distances(const Form& form, const TracedOutline& outline, const Pla
 Placement boxed_placement(const Form& form, const TracedOutline& outline, bool sinistral) {
   Box model = box_of(form, outline, sinistral);
   const Box points = box_of(outline);
-  if (sinistral && outline.kind == TracedOutline::Kind::kSilhouette) model = {-model.right, -model.left, model.low, model.high};
+  if (sinistral && outline.kind != TracedOutline::Kind::kSection) model = {-model.right, -model.left, model.low, model.high};
   return {0.5 * (points.left + points.right - model.left - model.right), 0.5 * (points.low + points.high - model.low - model.high), 0.0};
 }
 

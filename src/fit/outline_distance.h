@@ -14,7 +14,7 @@ struct Placement {
   double x = 0.0, y = 0.0, tilt = 0.0;
 };
 
-/// Signed distances of the outline's points, mm: positive outside. Right to second order near the outline.
+/// Signed distances of the outline's points, mm: positive outside, or on the apical side of a suture; infinite where no suture shows. Right to second order near the outline.
 /// The tube is the union of its sections, so its silhouette is the edge of the union of their projections: a point's
 /// distance is the least over all sections. Front and lip stand upright.
 void outline_distances(const Form& form, const specimen::TracedOutline& outline, const Placement& placement, bool sinistral,

@@ -57,6 +57,40 @@ std::vector<TracedOutline::Point> traced(const test::Shell& shell, double azimut
   return right;
 }
 
+// Sutures as a picture shows them: in columns along the axis, places where the surface goes over from one whorl to the next.
+std::vector<TracedOutline::Point> traced_sutures(const test::Shell& shell, double azimuth_deg, int columns) {
+  const trace::EmbreeSolid solid(shell.field, {2e-5 * shell.height(), false});
+  const Frame page = plate::page_frame(shell.scene.law.theta_lip, specimen::Coiling::kDextral, azimuth_deg, 0.0);
+  const double far = (shell.scene.bounds.max - shell.scene.bounds.min).length();
+  // Whorls from the pole at a place of the picture; negative where there is none.
+  const auto whorl = [&](double x, double y) {
+    trace::Ray ray{Vec3f(page.to_world({x, y, far})), Vec3f(-page.z)};
+    trace::Hit hit;
+    return solid.closest(ray, hit) && hit.part == trace::Part::kExterior ? static_cast<double>(solid.growth_place(hit).turn) : -1.0;
+  };
+  std::vector<TracedOutline::Point> points;
+  const double top = -shell.scene.bounds.min.z, bottom = -shell.scene.bounds.max.z, step = (top - bottom) / 400.0;
+  const double aside = 0.8 * (shell.scene.law.distance + shell.scene.law.half_breadth);
+  for (int i = 0; i < columns; ++i) {
+    const double x = aside * (2.0 * (i + 0.5) / columns - 1.0);
+    double above = whorl(x, top);
+    for (double y = top - step; y > bottom; y -= step) {
+      const double here = whorl(x, y);
+      // A whole turn more, below a place of the tube.
+      if (above > 2.0 && here - above > 0.8 && here - above < 1.2) {
+        double hi = y + step, lo = y;
+        for (int k = 0; k < 25; ++k) {
+          const double mid = 0.5 * (lo + hi);
+          (whorl(x, mid) - above > 0.5 ? lo : hi) = mid;
+        }
+        points.push_back({x, 0.5 * (lo + hi)});
+      }
+      above = here;
+    }
+  }
+  return points;
+}
+
 test::ShellPlan spired() {
   test::ShellPlan plan;
   plan.name = "spired";
@@ -139,4 +173,63 @@ TEST_CASE("a traced whorl section gives the section's shape, and a mirrored silh
   CAPTURE(fit::to_table(fit, measured, {}));
   CHECK(parameter(fit, Parameter::kS).value == Approx(1.2).epsilon(0.01));
   CHECK(parameter(fit, Parameter::kW).value == Approx(1.5).epsilon(0.02));
+}
+
+TEST_CASE("points of the solid's sutures lie on the form's, in every side view", "[fit][suture]") {
+  const test::Shell shell(spired());
+  const fit::Form form{shell.scene.law, 0.0, 0.0, 0.0};
+  for (const double azimuth : {0.0, 90.0, 180.0, 270.0}) {
+    CAPTURE(azimuth);
+    const TracedOutline outline{TracedOutline::Kind::kSuture, azimuth, {}, traced_sutures(shell, azimuth, 24), 0.1, {}};
+    REQUIRE(outline.points.size() > 30);
+    std::vector<double> distances;
+    fit::outline_distances(form, outline, {}, false, distances);
+    std::sort(distances.begin(), distances.end(), [](double a, double b) { return std::abs(a) < std::abs(b); });
+    CHECK(std::abs(distances[distances.size() / 2]) < 5e-4 * shell.height());
+    CHECK(std::abs(distances[distances.size() * 9 / 10]) < 2e-3 * shell.height());
+    // Moved towards the apex, all points lie on the apical side by about as much.
+    std::vector<double> moved;
+    fit::outline_distances(form, outline, {0.0, -0.1, 0.0}, false, moved);
+    CHECK(std::count_if(moved.begin(), moved.end(), [](double d) { return d > 0.05 && d < 0.15; }) > static_cast<long>(moved.size()) * 9 / 10);
+  }
+}
+
+TEST_CASE("traced sutures give the expansion, mirrored ones of a sinistral shell the same, and a fifth of them missing changes little", "[fit][suture]") {
+  const test::Shell shell(spired());
+  const std::vector<TracedOutline::Point> whole = traced_sutures(shell, 0.0, 24);
+  for (const bool sinistral : {false, true}) {
+    CAPTURE(sinistral);
+    TracedOutline outline{TracedOutline::Kind::kSuture, 0.0, {}, {}, 0.05, {}};
+    for (std::size_t i = 0; i < whole.size(); ++i)
+      if (i % 5 != 2) outline.points.push_back({(sinistral ? -whole[i].x : whole[i].x) + 3.0, whole[i].y + 40.0});
+    specimen::MeasuredSpecimen measured = only({outline});
+    measured.identity.coiling.value = sinistral ? specimen::Coiling::kSinistral : specimen::Coiling::kDextral;
+    for (const auto& [definition, value] : {std::pair{specimen::Definition::kShellHeightAxial, shell.height()},
+                                            {specimen::Definition::kWhorlWidthSection, 2.0 * shell.scene.law.half_breadth}}) {
+      specimen::Reading reading;
+      reading.definition = definition;
+      reading.value = value;
+      reading.step = 0.1;
+      reading.standard_error = 0.1 / std::sqrt(12.0);
+      measured.readings.push_back(reading);
+    }
+    const fit::Fit fit = fit::fit_specimen(measured);
+    CAPTURE(fit::to_table(fit, measured, {}));
+    CHECK(parameter(fit, Parameter::kW).value == Approx(1.5).epsilon(0.02));
+    CHECK(parameter(fit, Parameter::kT).value == Approx(2.8).epsilon(0.1));
+    REQUIRE(fit.outlines.size() == 1);
+    CHECK(fit.outlines[0].fits);
+  }
+}
+
+TEST_CASE("a shell whose last whorl hides the spire has no sutures to hold points against", "[fit][suture]") {
+  test::ShellPlan flat = spired();
+  flat.T = 0.0;
+  const fit::Form form{growth::coiling_law(test::specimen_of(flat).growth, test::specimen_of(flat).section), 0.0, 0.0, 0.0};
+  fit::Form convolute = form;
+  convolute.law.distance = convolute.law.half_breadth;  // D = 0: each whorl clasps all earlier ones
+  const TracedOutline outline{TracedOutline::Kind::kSuture, 0.0, {}, std::vector<TracedOutline::Point>(8, {0.1, 0.2}), 0.1, {}};
+  std::vector<double> distances;
+  fit::outline_distances(convolute, outline, {}, false, distances);
+  CHECK(std::isinf(distances.at(0)));
 }
