@@ -6,6 +6,7 @@
 #include "compile/compile.h"
 #include "diagnostics/error.h"
 #include "diagnostics/whole_file.h"
+#include "fit/mould.h"
 #include "fit/on_solid.h"
 #include "fit/scene_text.h"
 #include "fit/words.h"
@@ -33,6 +34,11 @@ Done fit_one(const MeasuredSpecimen& measured, const Options& options, Progress&
   progress.step("fitting");
   Done done{fit::fit_specimen(measured), {}, {}};
   if (done.fit.verdict == fit::Verdict::kNotFixed || done.fit.parameters.empty()) return done;
+  if (done.fit.task.fixed.mould && !fit::shell_round(done.fit.trial.values, done.fit.task.fixed)) {
+    done.fit.verdict = fit::Verdict::kDoesNotFit;
+    done.fit.remarks.push_back("No shell has a wall of that thickness round this mould: state a thinner one in [wall].");
+    return done;
+  }
   std::string text = fit::scene_text(done.fit, measured, options.scene);
   try {
     const specimen::Specimen specimen = specimen::parse_scene(text, "fitted shell");

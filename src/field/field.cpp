@@ -142,6 +142,11 @@ double Field::tube(const Vec3& p, double theta) const noexcept {
   return chain(in_section(p, theta), p, false, unit);
 }
 
+double Field::lumen(const Vec3& p, double theta) const noexcept {
+  double unit;
+  return chain(in_section(p, theta), p, true, unit);
+}
+
 double Field::opening_penalty(double theta) const noexcept {
   const double past = std::max(0.0, theta - scene_.law.theta_start - 0.5 * kPi);
   return start_half_breadth_ * past * past;

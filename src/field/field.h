@@ -61,6 +61,8 @@ class Field {
   /// The outside of the tube alone at the passage nearest to `theta`: without the flare towards the columella, and running
   /// on past the lip.
   double tube(const Vec3& p, double theta) const noexcept;
+  /// Its lumen, likewise running on past the lip.
+  double lumen(const Vec3& p, double theta) const noexcept;
   /// By central differences over a thousandth of the passage's half-breadth. Not normalised.
   Vec3 gradient(const Term& term, const Vec3& p) const noexcept;
 

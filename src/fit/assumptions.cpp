@@ -66,8 +66,10 @@ double step_of_series(const specimen::MeasuredSpecimen& measured, std::size_t se
 bool all_planispiral(const Task& task) {
   bool any = false;
   for (const Reading& reading : task.readings) {
-    if (!is_length(reading)) continue;
     const specimen::DefinitionRow& row = specimen::row_of(reading.definition);
+    // Angles but that of the lip are those of a spire.
+    if (row.dimension == specimen::Dimension::kAngle && reading.definition != Definition::kLipInclinationProfile) return false;
+    if (!is_length(reading)) continue;
     if (!row.planispiral && reading.definition != Definition::kWhorlWidthProportional) return false;
     any = any || (row.planispiral && row.quantity != "umbilicus");
   }
@@ -81,6 +83,8 @@ Setting first_setting(const specimen::MeasuredSpecimen& measured) {
   Task& task = setting.task;
   task.fixed.start = measured.held.start.value_or(kUsualStart);
   task.fixed.roll_deg = measured.held.roll_deg.value_or(0.0);
+  task.fixed.mould = measured.mould;
+  if (measured.mould_wall) task.fixed.wall_mm = measured.mould_wall->value;
   for (const Reading& reading : measured.readings) {
     if (reading.definition == Definition::kWallThicknessWall) task.fixed.wall_mm = reading.value;
     if (reading.definition == Definition::kWallThicknessLip) task.fixed.lip_mm = reading.value;

@@ -17,14 +17,33 @@ namespace {
 
 using specimen::Definition;
 
+// Measures that are taken on whorl sections, which a mould has as well as a shell.
+bool by_sections(Definition definition) {
+  using enum Definition;
+  switch (definition) {
+    case kPleuralAngleLastTwo:
+    case kPenultimateWidthFlanks:
+    case kDiameterSumOfRadii:
+    case kWhorlWidthFlanks:
+    case kAperturalHeightVenters:
+    case kWhorlHeightMargin:
+    case kWhorlWidthSection:
+    case kWhorlWidthAlongAxis:
+    case kUmbilicusMargins:
+    case kWhorlsPole: return true;
+    default: return false;
+  }
+}
+
 // Measures of the whole are taken once, when first asked for.
 class Taker {
  public:
   Taker(const Fit& fit, const field::Field& field, const trace::SolidOptions& options)
-      : form_(*form_of(fit.trial.values, fit.task.fixed)), field_(field), options_(options) {}
+      : form_(*form_of(fit.trial.values, fit.task.fixed)), fit_is_of_mould_(fit.task.fixed.mould), field_(field), options_(options) {}
 
   std::optional<double> take(const specimen::Reading& reading) {
     using enum Definition;
+    if (fit_is_of_mould_ && !by_sections(reading.definition)) return std::nullopt;
     const bool whole = reading.stage.kind == specimen::GrowthStage::Kind::kLip;
     const double theta = theta_of(form_, reading.stage);
     switch (reading.definition) {
@@ -77,10 +96,13 @@ class Taker {
     if (!suture_) suture_ = measure::suture_depth(solid(), z) ? std::optional(z) : std::nullopt;
     return *suture_;
   }
-  measure::WhorlSection section(double theta) const { return measure::whorl_section(field_, theta); }
+  measure::WhorlSection section(double theta) const {
+    return fit_is_of_mould_ ? measure::lumen_section(field_, theta) : measure::whorl_section(field_, theta);
+  }
   double outer(double theta) const { return section(theta).rho_max; }
 
   Form form_;
+  bool fit_is_of_mould_;
   const field::Field& field_;
   trace::SolidOptions options_;
   std::optional<trace::EmbreeSolid> solid_;

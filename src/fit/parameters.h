@@ -43,6 +43,7 @@ struct Fixed {
   double start = 0.75;     // whorls
   double roll_deg = 0.0;
   double wall_mm = 0.0, lip_mm = 0.0;
+  bool mould = false;      // the form is that of an internal mould, with a wall of `wall_mm` at the lip round it
 };
 
 /// Empty where the values make no shell: an expansion that falls to 1 or below, a lip before the start.

@@ -2,6 +2,7 @@
 // The table for people and the row of many.
 #include "fit/report.h"
 
+#include "fit/observed.h"
 #include "fit/words.h"
 
 #include <fmt/format.h>
@@ -112,7 +113,7 @@ std::string csv_cell(const std::string& text) {
 }  // namespace
 
 std::string to_table(const Fit& fit, const specimen::MeasuredSpecimen& measured, const OnSolid& on_solid) {
-  std::string text = fmt::format("{}: {}\n", measured.identity.name.value, verdict_words(fit.verdict));
+  std::string text = fmt::format("{}{}: {}\n", measured.identity.name.value, measured.mould ? " (internal mould)" : "", verdict_words(fit.verdict));
   if (!fit.parameters.empty()) text += "\n" + parameter_lines(fit);
   if (!fit.readings.empty()) {
     text += "\n" + reading_lines(fit, on_solid);
@@ -125,6 +126,10 @@ std::string to_table(const Fit& fit, const specimen::MeasuredSpecimen& measured,
     text += fmt::format("\n  outline: {} of {} points on it, median distance {:.3g} mm, axis leans by {:.1f} degrees{}\n", outline.on_outline,
                         outline.points, outline.median_distance, outline.tilt_deg, outline.fits ? "" : "  misfit");
   if (const std::string models = model_lines(fit); !models.empty()) text += "\n" + models;
+  if (!fit.parameters.empty()) {
+    text += measured.preserved.empty() ? "\n  observed, by the readings' stages of growth\n" : "\n  preserved, as stated\n";
+    for (const std::string& line : preserved_words(preserved_of(fit, measured))) text += "    " + line + "\n";
+  }
   if (!fit.remarks.empty()) text += "\n";
   for (const std::string& remark : fit.remarks) text += "  " + remark + "\n";
   return text;

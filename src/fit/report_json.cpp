@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: Apache-2.0
 // The report as JSON; its keys are public.
+#include "fit/observed.h"
 #include "fit/report.h"
 #include "fit/words.h"
 
@@ -77,6 +78,7 @@ nlohmann::ordered_json to_json(const Fit& fit, const specimen::MeasuredSpecimen&
   ordered_json json;
   json["specimen"] = measured.identity.name.value;
   json["verdict"] = verdict_words(fit.verdict);
+  json["measured"] = measured.mould ? "internal mould" : "shell";
   json["success"] = is_success(fit.verdict);
   json["units"] = "mm, degrees, whorls";
   json["parameters"] = parameters_json(fit);
@@ -103,6 +105,9 @@ nlohmann::ordered_json to_json(const Fit& fit, const specimen::MeasuredSpecimen&
   for (const ModelResult& model : fit.models)
     json["models"].push_back({{"name", model.name}, {"parameters", model.parameters}, {"chi_square", model.chi_square},
                               {"corrected_aic", finite(model.aicc)}, {"chosen", model.chosen}});
+  if (!fit.parameters.empty())
+    json["preserved"] = {{"by", measured.preserved.empty() ? "readings" : "statement"},
+                         {"stretches", preserved_words(preserved_of(fit, measured))}};
   json["remarks"] = fit.remarks;
   return json;
 }

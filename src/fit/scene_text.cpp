@@ -2,6 +2,8 @@
 // Writes scene files.
 #include "fit/scene_text.h"
 
+#include "fit/mould.h"
+#include "fit/observed.h"
 #include "fit/predict.h"
 #include "fit/words.h"
 
@@ -42,8 +44,13 @@ std::string expansion(const Fit& fit, double more) {
                      std::exp(ln_W_at_start(fit.trial.values, fit.task.fixed) + more), at(fit.trial.values, Parameter::kWhorls), at_lip);
 }
 
-std::string growth_table(const Fit& fit) {
-  const Values& v = fit.trial.values;
+// Where the readings are a mould's, the scene states the shell round it.
+std::string mould_origin(const Fit& fit, Parameter parameter, double of_the_mould) {
+  if (!fit.task.fixed.mould) return origin(fit, parameter);
+  return fmt::format("of the shell; that of the mould is {:.6g}, {}", of_the_mould, origin(fit, parameter));
+}
+
+std::string growth_table(const Fit& fit, const Values& v) {
   std::string text = "[growth]\n";
   const auto line = [&](const std::string& key, const std::string& value, const std::string& comment) {
     text += fmt::format("{:<24} # {}\n", key + " = " + value, comment);
@@ -56,8 +63,9 @@ std::string growth_table(const Fit& fit) {
   for (const auto& [key, parameter] : {std::pair{"W_distance", Parameter::kDistanceRate}, {"W_depth", Parameter::kDepthRate}})
     if (at(v, parameter) != 0.0)
       line(key, expansion(fit, at(v, parameter)), fmt::format("times W by {}", origin(fit, parameter)));
-  line("D", fmt::format("{:.8g}", at(v, Parameter::kD)), origin(fit, Parameter::kD));
-  line("T", fmt::format("{:.8g}", at(v, Parameter::kT)), origin(fit, Parameter::kT));
+  const Values& own = fit.trial.values;
+  line("D", fmt::format("{:.8g}", at(v, Parameter::kD)), mould_origin(fit, Parameter::kD, at(own, Parameter::kD)));
+  line("T", fmt::format("{:.8g}", at(v, Parameter::kT)), mould_origin(fit, Parameter::kT, at(own, Parameter::kT)));
   line("start", fmt::format("{:.8g}", fit.task.fixed.start), "end of the embryonic shell: by convention, unless the file holds it");
   return text;
 }
@@ -70,18 +78,18 @@ std::string size_table(const Fit& fit, const Form& form) {
   });
   return fmt::format("[size]\n{:<24} # as the fitted shell has it{}\n",
                      fmt::format("{} = {:.8g}", flat ? "shell_width" : "shell_height", predict(form, definition, {})),
-                     read ? "" : "; not itself measured");
+                     fit.task.fixed.mould ? ", round the mould; not itself measured" : read ? "" : "; not itself measured");
 }
 
-std::string wall_tables(const Fit& fit, const specimen::MeasuredSpecimen& measured, const Form& form) {
+std::string wall_tables(const Fit& fit, const Values& v, const specimen::MeasuredSpecimen& measured, const Form& form) {
   constexpr double kUsualWall = 0.04, kUsualPillar = 0.12, kNearAxis = 0.02;  // of the half-breadth; of the half-breadth; D
   const Fixed& fixed = fit.task.fixed;
   const bool wall = fixed.wall_mm > 0.0, lip = fixed.lip_mm > 0.0;
   const double thickness = wall ? fixed.wall_mm : kUsualWall * form.law.half_breadth * std::min(1.0, form.law.S);
   std::string text = fmt::format("[wall]\n{:<24} # {}\n", fmt::format("thickness = {:.6g}", thickness),
-                                 wall ? "as measured" : "assumed: a fiftieth of the whorl section; measure wall_thickness wall");
+                                 fixed.mould ? "stated: round the internal mould" : wall ? "as measured" : "assumed: a fiftieth of the whorl section; measure wall_thickness wall");
   // Whorls that reach the axis need a pillar to part them.
-  const double D = at(fit.trial.values, Parameter::kD), T = at(fit.trial.values, Parameter::kT);
+  const double D = at(v, Parameter::kD), T = at(v, Parameter::kT);
   const bool needs_pillar = D < kNearAxis && T > 0.0;
   if (measured.held.columella)
     text += fmt::format("{:<24} # held by the file\n", fmt::format("columella = {:.6g}", *measured.held.columella));
@@ -97,10 +105,30 @@ std::string wall_tables(const Fit& fit, const specimen::MeasuredSpecimen& measur
   return text;
 }
 
+std::string preserved_tables(const Fit& fit, const specimen::MeasuredSpecimen& measured) {
+  const std::vector<specimen::Preserved> tables = preserved_of(fit, measured);
+  if (tables.empty()) return {};
+  std::string text = measured.preserved.empty() ? "\n# What was observed, by the stages of growth that the readings tell of.\n"
+                                                : "\n# What is preserved, as the measurement file states it.\n";
+  text += "# In [plate], unobserved = \"hatch\" or \"tint\" draws the rest as such.\n";
+  constexpr const char* kParts[] = {"whole", "wall", "outside", "inside"};
+  bool first = true;
+  for (const specimen::Preserved& table : tables) {
+    text += first ? "[[preserved]]\n" : "\n[[preserved]]\n";
+    first = false;
+    if (table.from) text += fmt::format("from = {:.6f}\n", table.from->value);
+    if (table.to) text += fmt::format("to = {:.6f}\n", table.to->value);
+    if (table.from_lip) text += "counted = \"from the lip\"\n";
+    text += fmt::format("parts = \"{}\"\n", kParts[static_cast<std::size_t>(table.parts.value)]);
+  }
+  return text;
+}
+
 }  // namespace
 
 std::string scene_text(const Fit& fit, const specimen::MeasuredSpecimen& measured, const std::string& source) {
-  const Form form = *form_of(fit.trial.values, fit.task.fixed);
+  const Values values = fit.task.fixed.mould ? *shell_round(fit.trial.values, fit.task.fixed) : fit.trial.values;
+  const Form form = *form_of(values, fit.task.fixed);
   const specimen::Identity& identity = measured.identity;
   std::string text = fmt::format("# Fitted to the measurements in {}: {}.\n"
                                  "# A computed model is an aid to comparison and never a name-bearing type.\n"
@@ -112,12 +140,12 @@ std::string scene_text(const Fit& fit, const specimen::MeasuredSpecimen& measure
                                    {"locality", &identity.locality}, {"note", &identity.note}, {"licence", &identity.licence}})
     if (value->given) text += fmt::format("{} = {}\n", key, quoted(value->value));
   text += fmt::format("mineral = \"{}\"\n\n", identity.mineral.value == specimen::Mineral::kAragonite ? "aragonite" : "calcite");
-  text += growth_table(fit);
-  text += fmt::format("\n[section]\n{:<24} # {}\n", fmt::format("S = {:.8g}", std::exp(at(fit.trial.values, Parameter::kS))),
-                      origin(fit, Parameter::kS));
+  text += growth_table(fit, values);
+  text += fmt::format("\n[section]\n{:<24} # {}\n", fmt::format("S = {:.8g}", std::exp(at(values, Parameter::kS))),
+                      mould_origin(fit, Parameter::kS, std::exp(at(fit.trial.values, Parameter::kS))));
   if (fit.task.fixed.roll_deg != 0.0) text += fmt::format("{:<24} # held by the file\n", fmt::format("roll = {:.6g}", fit.task.fixed.roll_deg));
-  text += "\n" + size_table(fit, form) + "\n" + wall_tables(fit, measured, form);
-  return text;
+  text += "\n" + size_table(fit, form) + "\n" + wall_tables(fit, values, measured, form);
+  return text + preserved_tables(fit, measured);
 }
 
 }  // namespace whorl::fit

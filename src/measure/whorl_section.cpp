@@ -19,12 +19,15 @@ double WhorlSection::support(double n_rho, double n_z) const {
   return bend < 0.0 ? b - (c - a) * (c - a) / (8.0 * bend) : b;
 }
 
-WhorlSection whorl_section(const field::Field& field, double theta) {
+namespace {
+
+// Of the function that is positive inside the outline.
+WhorlSection section_of(const field::Field& field, double theta, double (field::Field::*inside)(const Vec3&, double) const noexcept) {
   constexpr int kDirections = 1440;
   const growth::Station s = field.scene().law.at(theta);
   const double c = std::cos(theta), n = std::sin(theta);
   const auto value = [&](growth::HalfPlanePoint p) {
-    return field.tube(Vec3(p.rho * c, p.rho * n, p.z), theta);
+    return (field.*inside)(Vec3(p.rho * c, p.rho * n, p.z), theta);
   };
   WhorlSection section;
   // Somewhere inside: the highest value on a coarse grid over the tube's reach.
@@ -69,6 +72,11 @@ WhorlSection whorl_section(const field::Field& field, double theta) {
   section.z_min = -section.support(0.0, -1.0);
   return section;
 }
+
+}  // namespace
+
+WhorlSection whorl_section(const field::Field& field, double theta) { return section_of(field, theta, &field::Field::tube); }
+WhorlSection lumen_section(const field::Field& field, double theta) { return section_of(field, theta, &field::Field::lumen); }
 
 double touching_angle(const WhorlSection& last, const WhorlSection& before) {
   // Outward normal (cos beta, -sin beta) in (rho, z), beta from outwards through the apex: where both reach equally far, a

@@ -21,6 +21,8 @@ struct WhorlSection {
 
 /// The outside of the tube at growth angle `theta`, also where it is overlapped or fused with the columella.
 WhorlSection whorl_section(const field::Field& field, double theta);
+/// The lumen of the tube there: the internal mould's outline.
+WhorlSection lumen_section(const field::Field& field, double theta);
 
 /// Semi-angle, in radians from the axis towards growth, of the straight line that touches both outlines on the apical
 /// side of the shell's outside: of the enveloping cone's generator.

@@ -48,6 +48,7 @@ struct TracedOutline {
   enum class Kind {
     kSilhouette,  // of the shell in a side view, the axis upright
     kSection,     // of one whorl in the half-plane through the axis, which lies to the left of it
+    kSuture,      // sutures of the spire in a side view, the axis upright
   };
   struct Point {
     double x, y;  // mm from any origin; x to the right, y towards the apex
@@ -71,6 +72,9 @@ struct MeasuredSpecimen {
   std::vector<Reading> readings;  // those of series too
   std::vector<Series> series;
   std::vector<TracedOutline> outlines;
+  bool mould = false;                        // measured on the internal mould
+  std::optional<Stated<double>> mould_wall;  // of the shell round it, at the lip, mm
+  std::vector<Preserved> preserved;          // as stated; none: the readings tell
   double tolerance = 0.02;  // misfit that still counts as fitting, as a fraction of the value
   diagnostics::Position where;
 };

@@ -27,6 +27,14 @@ constexpr KeyRow kRows[] = {
     {"specimen", "note", kText, {1.0, 2000.0}, "", "", kNoDefault, "anything else, such as the source of the figures"},
     {"specimen", "licence", kText, kLine, "", "", kNoDefault, "terms under which the figures may be used"},
     {"specimen", "mineral", kWord, kNothing, "", "aragonite|calcite", "\"aragonite\"", "mineral of the wall"},
+    {"specimen", "measured", kWord, kNothing, "", "shell|internal mould", "\"shell\"", "what the readings were taken on"},
+
+    {"wall", "thickness", kNumber, kPositive, "", "", kNoDefault, "of the shell round an internal mould, at its lip, in the unit of the file"},
+
+    {"preserved", "from", kNumber, kStage, "whorls", "", "(the apex)", "the end that lies nearer to the apex"},
+    {"preserved", "to", kNumber, kStage, "whorls", "", "(the lip)", "the end that lies nearer to the lip"},
+    {"preserved", "counted", kWord, kNothing, "", "from the pole|from the lip", "\"from the pole\"", "where the whorls of from and to are counted from"},
+    {"preserved", "parts", kWord, kNothing, "", "whole|wall|outside|inside", "\"whole\"", "what is preserved there"},
 
     {"held", "whorls", kNumber, {0.5, 40.0}, "whorls", "", kNoDefault, "turns from the pole to the lip"},
     {"held", "W", kNumber, {1.0, 1e6, true, false}, "", "", kNoDefault, "whorl expansion per turn"},
@@ -58,8 +66,8 @@ constexpr KeyRow kRows[] = {
     {"series", "scatter", kNumber, {0.0, 50.0}, "%", "", "(estimated from the series)", "natural irregularity from whorl to whorl"},
     {"series", "behind_lip", kNumber, kStage, "whorls", "", "0.0", "whorls between the lip and the value nearest to it"},
 
-    {"outline", "kind", kWord, kNothing, "", "silhouette|section", kRequired, "what was traced: the shell's silhouette in a side view, or one whorl section"},
-    {"outline", "view", kWord, kNothing, "", "apertural|abapertural|right lateral|left lateral", "\"apertural\"", "from where, the axis upright; of a silhouette"},
+    {"outline", "kind", kWord, kNothing, "", "silhouette|section|suture", kRequired, "what was traced: the shell's silhouette or sutures in a side view, or one whorl section"},
+    {"outline", "view", kWord, kNothing, "", "apertural|abapertural|right lateral|left lateral", "\"apertural\"", "from where, the axis upright; of a silhouette or sutures"},
     {"outline", "file", kText, kLine, "", "", kRequired, "table of the points, beside the measurement file: columns x, y and, if wanted, missing"},
     {"outline", "scale", kNumber, kPositive, "", "", "1.0", "length of one unit of the points, in the unit of the file: mm a pixel"},
     {"outline", "y_axis", kWord, kNothing, "", "up|down", "\"up\"", "whether y grows towards the apex, or away from it as in pictures"},

@@ -46,6 +46,7 @@ void add_series(const RawSeries& raw, const RowDefaults& defaults, MeasuredSpeci
 
 /// After all rows of a specimen: the stage that a bracketed diameter gives to rows without one, and contradictions between
 /// rows that no shell can have.
+void check_mould(const MeasuredSpecimen& specimen, ProblemList& problems);
 void finish_specimen(MeasuredSpecimen& specimen, std::optional<double> bracketed_mm, ProblemList& problems);
 
 }  // namespace whorl::specimen

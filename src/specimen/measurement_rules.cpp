@@ -83,6 +83,7 @@ void finish_specimen(MeasuredSpecimen& specimen, std::optional<double> bracketed
           reading.stage.kind == GrowthStage::Kind::kLip)
         reading.stage = {GrowthStage::Kind::kAtDiameter, *bracketed_mm};
   }
+  check_mould(specimen, problems);
   check_orders(specimen, problems);
   check_repeats(specimen, problems);
 }

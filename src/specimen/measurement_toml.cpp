@@ -4,6 +4,7 @@
 
 #include "specimen/measurement_rows.h"
 #include "specimen/outline_points.h"
+#include "specimen/preserved.h"
 #include "specimen/table_reader.h"
 #include "specimen/toml_text.h"
 
@@ -31,6 +32,9 @@ class Reader {
     specimen_.tolerance = 0.01 * top.number("tolerance").value;
     read_identity();
     read_held();
+    read_wall();
+    for (const TableReader& t : list("preserved")) specimen_.preserved.push_back(preserved_of(t));
+    check_preserved(specimen_.preserved, specimen_.held.whorls, problems_);
     read_measurements();
     read_series();
     read_outlines();
@@ -102,6 +106,13 @@ class Reader {
     identity.note = t.text("note");
     identity.licence = t.text("licence");
     identity.mineral = t.word<Mineral>("mineral");
+    specimen_.mould = t.word<int>("measured").value == 1;
+  }
+
+  void read_wall() {
+    const TableReader t = table("wall");
+    specimen_.mould_wall = optional(t, "thickness");
+    if (specimen_.mould_wall) specimen_.mould_wall->value *= millimetres_in(defaults_.unit).value();
   }
 
   void read_held() {

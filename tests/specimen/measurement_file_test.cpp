@@ -147,3 +147,31 @@ TEST_CASE("faults of a table are told by line and column", "[specimen]") {
   says(said, "m.csv:4:11: row: quantity = \"SpH\": an abbreviation without a definition");
   says(said, "its first row must state coiling");
 }
+
+TEST_CASE("on an internal mould what needs the shell's own edge is refused, and the wall round it must be stated", "[specimen][mould]") {
+  const std::string head = "format = 1\nstep = 0.1\nunit = \"cm\"\n[specimen]\nname = \"x\"\ncoiling = \"dextral\"\nmeasured = \"internal mould\"\n";
+  const std::string wall = "[wall]\nthickness = 0.05\n";
+  const auto file = parse_measurements(head + wall + measurement("dm", "sum_of_radii", "3"), "m.toml");
+  REQUIRE(file.specimens.at(0).mould_wall);
+  CHECK(*file.specimens[0].mould_wall == Approx(0.5));  // mm
+  CHECK(file.specimens[0].mould);
+  const std::string said = fault(head + wall + measurement("umbilicus", "seam_to_seam", "1") + measurement("wall_thickness", "wall", "0.1"));
+  says(said, "m.toml:10:1: umbilicus seam_to_seam can't be read on an internal mould");
+  says(said, "wall_thickness wall can't be read on an internal mould");
+  says(fault(head + measurement("dm", "sum_of_radii", "3")), "m.toml:4:1: [wall] thickness is missing: an internal mould says nothing of its shell's wall");
+  says(fault(kHead + wall + measurement("dm", "sum_of_radii", "3")), "m.toml:7:13: [wall] thickness is that of the shell round an internal mould");
+}
+
+TEST_CASE("stretches that are preserved are read with their parts, and faulty ones refused", "[specimen][provenance]") {
+  const auto file = parse_measurements(kHead + measurement("dm", "sum_of_radii", "30") +
+                                           "[[preserved]]\nfrom = 2.5\nto = 0.5\ncounted = \"from the lip\"\nparts = \"outside\"\n[[preserved]]\nto = 1\n",
+                                       "m.toml");
+  const auto& preserved = file.specimens.at(0).preserved;
+  REQUIRE(preserved.size() == 2);
+  CHECK(*preserved[0].from == 2.5);
+  CHECK(preserved[0].from_lip);
+  CHECK(preserved[0].parts == PreservedParts::kOutside);
+  CHECK_FALSE(preserved[1].from);
+  says(fault(kHead + measurement("dm", "sum_of_radii", "30") + "[[preserved]]\nfrom = 1\nto = 2\ncounted = \"from the lip\"\n"),
+       "m.toml:11:8: [[preserved]] from = 1: must be at least to = 2, since from lies nearer to the apex and whorls are counted from the lip");
+}
