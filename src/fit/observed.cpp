@@ -105,8 +105,8 @@ std::vector<specimen::Preserved> preserved_of(const Fit& fit, const specimen::Me
   std::vector<specimen::Preserved> tables;
   for (const Stretch& stretch : observed_stretches(fit)) {
     specimen::Preserved table;
-    table.from = specimen::Stated<double>{lip - stretch.from, {}, true};
-    table.to = specimen::Stated<double>{lip - stretch.to, {}, true};
+    table.from = specimen::Stated<double>{std::max(0.0, lip - stretch.from), {}, true};
+    table.to = specimen::Stated<double>{std::max(0.0, lip - stretch.to), {}, true};
     table.from_lip = {true, {}, true};
     table.parts = {observed_parts(measured), {}, true};
     tables.push_back(table);

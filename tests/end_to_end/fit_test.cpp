@@ -56,6 +56,31 @@ TEST_CASE("a broken shell is fitted, written as a scene, and measures on its sol
   CHECK(run_program({"check", scene}).code == 0);
 }
 
+TEST_CASE("an internal mould is fitted, and the scene's lumen measures on its solid what was read on the mould", "[end_to_end][mould]") {
+  const ScratchFolder folder;
+  const std::string scene = (folder.path() / "shell.toml").string();
+  const Ran ran = run_program({"fit", kMeasured + "helicorna_mould.toml", "-o", scene, "--quiet"});
+  REQUIRE(ran.code == 0);
+  CHECK(contains(ran.out, "Helicorna nucleata (internal mould): fits\n"));
+  CHECK(contains(ran.out, "inside, whorls 2.00 to 0.00 counted from the lip"));
+  const auto report = nlohmann::json::parse(read_file(folder.path() / "shell.fit.json"));
+  CHECK(report.at("measured") == "internal mould");
+  int on_solid = 0;
+  for (const auto& row : report.at("measurements")) {
+    CAPTURE(row.dump());
+    REQUIRE(row.contains("on_solid"));
+    ++on_solid;
+    CHECK(row.at("on_solid").get<double>() == Approx(row.at("read").get<double>()).margin(0.1));  // the caliper's step
+  }
+  CHECK(on_solid == 7);
+  const specimen::Specimen written = specimen::read_scene_file(scene);
+  CHECK(written.wall.thickness_mm == Approx(1.1));
+  // Across the two venters the shell is wider than its mould by twice the wall along the surface's normal, a little more since that leans.
+  CHECK(written.size.mm > 55.8 + 1.8);
+  CHECK(written.size.mm < 55.8 + 2.4);
+  CHECK(run_program({"check", scene}).code == 0);
+}
+
 TEST_CASE("measurements that do not fit end with 4, a report, and no scene", "[end_to_end]") {
   const ScratchFolder folder;
   const fs::path scene = folder.path() / "no.toml";

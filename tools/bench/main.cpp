@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: Apache-2.0
 // The benchmark's program; tools/bench/run builds and calls it.
 #include "cells_contender.h"
+#include "fit_time.h"
 #include "race.h"
 #include "report.h"
 #include "triangles_contender.h"
@@ -29,7 +30,7 @@ constexpr std::size_t kExactEvery = 16;
 
 struct Settings {
   std::string shape;       // "" for all
-  bool json = false, mesh = true, exact = true;
+  bool json = false, mesh = true, exact = true, rays = true;
   std::size_t pixels = 700'000;  // a view, of three
   int rounds = 3;
   double most_triangles = 12e6;  // what limits time and memory
@@ -91,7 +92,7 @@ nlohmann::ordered_json run_shape(const ShapeName& name, const Settings& settings
 int usage() {
   std::fputs(
       "usage: tools/bench/run [--shape tall|globose|planispiral] [--json] [--no-mesh] [--no-exact] [--pixels N] [--rounds N]\n"
-      "                       [--triangles N]\n",
+      "                       [--triangles N] [--fit-only]\n",
       stderr);
   return 2;
 }
@@ -103,6 +104,7 @@ int run(int argc, char** argv) {
     const char* value = i + 1 < argc ? argv[i + 1] : nullptr;
     if (word == "--json") settings.json = true;
     else if (word == "--no-mesh") settings.mesh = false;
+    else if (word == "--fit-only") settings.rays = false;
     else if (word == "--no-exact") settings.exact = false;
     else if (value == nullptr) return usage();
     else if (word == "--shape") settings.shape = value, ++i;
@@ -113,6 +115,13 @@ int run(int argc, char** argv) {
   }
   if (settings.pixels < 10'000 || settings.rounds < 1 || !(settings.most_triangles >= 1e5)) return usage();
   nlohmann::ordered_json all = {{"threads", thread_count()}, {"shapes", nlohmann::ordered_json::array()}};
+  say("fit");
+  all["fit"] = time_fit(settings.rounds);
+  if (!settings.json) std::printf("%s\n", fit_text(all["fit"]).c_str());
+  if (!settings.rays) {
+    if (settings.json) std::printf("%s\n", all.dump(2).c_str());
+    return 0;
+  }
   if (!settings.json)
     std::printf("Millions of rays a second on %d threads (the best of %d rounds); then the ratio to the first row, within the same\n"
                 "round; errors of hits in half-breadths of the aperture and, under *, in 1e-5 of the height; share of scattered\n"
