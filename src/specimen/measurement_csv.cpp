@@ -24,9 +24,9 @@ struct Cell {
 };
 using CellRow = std::vector<Cell>;
 
-constexpr std::array<std::string_view, 14> kColumns{"specimen", "coiling", "catalogue", "mineral",    "quantity",
+constexpr std::array<std::string_view, 16> kColumns{"specimen", "coiling", "catalogue", "mineral",    "quantity",
                                                     "definition", "value", "unit",      "step",       "error",
-                                                    "behind_lip", "at_whorl", "at_diameter", "tolerance"};
+                                                    "behind_lip", "at_whorl", "at_diameter", "tolerance", "measured", "wall"};
 constexpr std::array<std::string_view, 5> kNeeded{"specimen", "coiling", "quantity", "definition", "value"};
 
 std::string trimmed(std::string text) {
@@ -85,6 +85,8 @@ class Reader {
     for (std::size_t i = 1; i < rows.size(); ++i) read_row(rows[i]);
     if (specimens_.empty() && problems_.empty())
       problems_.add(rows.front().front().where, "the table has a header but no rows");
+    for (std::size_t i = 0; i < specimens_.size(); ++i)
+      if (specimens_[i].mould_wall) specimens_[i].mould_wall->value *= millimetres_in(unit_[i].value_or("mm")).value();
     for (std::size_t i = 0; i < specimens_.size(); ++i) finish_specimen(specimens_[i], bracketed_[i], problems_);
     return std::move(specimens_);
   }
@@ -165,6 +167,8 @@ class Reader {
       identity.coiling = {*coiling, name.where, true};
     }
     if (const auto mineral = word<Mineral>(row, "mineral", "aragonite", "calcite")) identity.mineral = {*mineral, name.where, true};
+    if (const auto mould = word<int>(row, "measured", "shell", "internal mould")) specimen.mould = *mould == 1;
+    if (const auto wall = number(row, "wall", true)) specimen.mould_wall = *wall;
     if (const Stated<std::string> catalogue = text(row, "catalogue"); catalogue.given) identity.catalogue = catalogue;
     if (const auto tolerance = number(row, "tolerance", true)) specimen.tolerance = 0.01 * tolerance->value;
     return place->second;

@@ -162,6 +162,24 @@ TEST_CASE("on an internal mould what needs the shell's own edge is refused, and 
   says(fault(kHead + wall + measurement("dm", "sum_of_radii", "3")), "m.toml:7:13: [wall] thickness is that of the shell round an internal mould");
 }
 
+TEST_CASE("a table may hold internal moulds beside shells, each with its wall in the specimen's unit", "[specimen][mould]") {
+  const auto file = parse_measurements("specimen,coiling,measured,wall,quantity,definition,value,unit,step\n"
+                                       "KSM 1,dextral,internal mould,0.08,dm,sum_of_radii,3,cm,0.01\n"
+                                       "KSM 1,,,,wh,margin_to_venter,1.2,cm,0.01\n"
+                                       "KSM 2,dextral,shell,,dm,sum_of_radii,30,mm,0.1\n",
+                                       "m.csv");
+  REQUIRE(file.specimens.size() == 2);
+  CHECK(file.specimens[0].mould);
+  REQUIRE(file.specimens[0].mould_wall);
+  CHECK(*file.specimens[0].mould_wall == Approx(0.8));  // mm
+  CHECK_FALSE(file.specimens[1].mould);
+  const std::string said = fault("specimen,coiling,measured,wall,quantity,definition,value,step\na,dextral,mould,1,dm,sum_of_radii,30,0.1\n"
+                                 "b,dextral,internal mould,,dm,sum_of_radii,30,0.1\n",
+                                 "m.csv");
+  says(said, "m.csv:2:11: measured = \"mould\": wanted is shell or internal mould");
+  says(said, "m.csv:3:1: [wall] thickness is missing");
+}
+
 TEST_CASE("stretches that are preserved are read with their parts, and faulty ones refused", "[specimen][provenance]") {
   const auto file = parse_measurements(kHead + measurement("dm", "sum_of_radii", "30") +
                                            "[[preserved]]\nfrom = 2.5\nto = 0.5\ncounted = \"from the lip\"\nparts = \"outside\"\n[[preserved]]\nto = 1\n",
