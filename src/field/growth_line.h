@@ -10,11 +10,14 @@ namespace whorl::field {
 
 /// Whorls from the pole at a place of the passage `theta`.
 inline double whorl_at(const Field& field, const Vec3& p, double theta) {
+  constexpr int kRounds = 14;  // the front's lead depends on where it stood; steps swing from side to side, so each goes half its way
   double growth, around;
   field.coordinates(p, theta, growth, around);
   const scene::Scene& scene = field.scene();
-  const double lead = growth::front_lead(scene.front.tan_inclination, scene.law.at(growth).depth, {std::hypot(p.x, p.y), p.z});
-  return (growth - lead) / kTwoPi;
+  double stood = growth;
+  for (int round = 0; round < kRounds && scene.front.tan_inclination != 0.0; ++round)
+    stood = 0.5 * (stood + growth - growth::front_lead(scene.front.tan_inclination, scene.law.at(stood).depth, {std::hypot(p.x, p.y), p.z}));
+  return stood / kTwoPi;
 }
 
 /// Whorls from the pole of the section whose centre lies at depth `z`, the embryonic shell's end and the lip at the outermost.
