@@ -87,7 +87,14 @@ std::vector<Stretch> observed_stretches(const Fit& fit) {
     all.push_back(outline.kind == specimen::TracedOutline::Kind::kSection ? Stretch{whorl, whorl} : Stretch{start, lip});
   }
   for (Stretch& stretch : all) stretch = {std::clamp(stretch.from, start, lip), std::clamp(stretch.to, start, lip)};
-  return joined(std::move(all));
+  std::vector<Stretch> apart = joined(std::move(all));
+  // A scene file takes so many; the shortest between others tell least.
+  constexpr std::size_t kMost = 64;
+  while (apart.size() > kMost) {
+    const auto length = [](const Stretch& s) { return s.to - s.from; };
+    apart.erase(std::min_element(apart.begin() + 1, apart.end() - 1, [&](const Stretch& a, const Stretch& b) { return length(a) < length(b); }));
+  }
+  return apart;
 }
 
 specimen::PreservedParts observed_parts(const specimen::MeasuredSpecimen& measured) {
@@ -115,13 +122,12 @@ std::vector<specimen::Preserved> preserved_of(const Fit& fit, const specimen::Me
 }
 
 std::vector<std::string> preserved_words(const std::vector<specimen::Preserved>& stretches) {
-  constexpr const char* kParts[] = {"whole", "wall", "outside", "inside"};
   std::vector<std::string> lines;
   for (const specimen::Preserved& stretch : stretches) {
     const auto end = [](const std::optional<specimen::Stated<double>>& whorl, const char* unstated) {
       return whorl ? fmt::format("{:.2f}", whorl->value) : std::string(unstated);
     };
-    lines.push_back(fmt::format("{}, whorls {} to {} counted from the {}", kParts[static_cast<std::size_t>(stretch.parts.value)],
+    lines.push_back(fmt::format("{}, whorls {} to {} counted from the {}", specimen::parts_word(stretch.parts),
                                 end(stretch.from, "(apex)"), end(stretch.to, "(lip)"), stretch.from_lip ? "lip" : "pole"));
   }
   return lines;

@@ -105,9 +105,14 @@ nlohmann::ordered_json to_json(const Fit& fit, const specimen::MeasuredSpecimen&
   for (const ModelResult& model : fit.models)
     json["models"].push_back({{"name", model.name}, {"parameters", model.parameters}, {"chi_square", model.chi_square},
                               {"corrected_aic", finite(model.aicc)}, {"chosen", model.chosen}});
-  if (!fit.parameters.empty())
-    json["preserved"] = {{"by", measured.preserved.empty() ? "readings" : "statement"},
-                         {"stretches", preserved_words(preserved_of(fit, measured))}};
+  if (!fit.parameters.empty()) {
+    json["preserved"] = {{"by", measured.preserved.empty() ? "readings" : "statement"}, {"stretches", ordered_json::array()}};
+    for (const specimen::Preserved& stated : preserved_of(fit, measured)) {
+      const specimen::Stretch stretch = specimen::stretch_of(stated, at(fit.trial.values, Parameter::kWhorls));
+      json["preserved"]["stretches"].push_back(
+          {{"from_whorl", stretch.from}, {"to_whorl", stretch.to}, {"parts", specimen::parts_word(stated.parts)}});
+    }
+  }
   json["remarks"] = fit.remarks;
   return json;
 }

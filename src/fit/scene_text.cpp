@@ -111,7 +111,6 @@ std::string preserved_tables(const Fit& fit, const specimen::MeasuredSpecimen& m
   std::string text = measured.preserved.empty() ? "\n# What was observed, by the stages of growth that the readings tell of.\n"
                                                 : "\n# What is preserved, as the measurement file states it.\n";
   text += "# In [plate], unobserved = \"hatch\" or \"tint\" draws the rest as such.\n";
-  constexpr const char* kParts[] = {"whole", "wall", "outside", "inside"};
   bool first = true;
   for (const specimen::Preserved& table : tables) {
     text += first ? "[[preserved]]\n" : "\n[[preserved]]\n";
@@ -119,7 +118,7 @@ std::string preserved_tables(const Fit& fit, const specimen::MeasuredSpecimen& m
     if (table.from) text += fmt::format("from = {:.6f}\n", table.from->value);
     if (table.to) text += fmt::format("to = {:.6f}\n", table.to->value);
     if (table.from_lip) text += "counted = \"from the lip\"\n";
-    text += fmt::format("parts = \"{}\"\n", kParts[static_cast<std::size_t>(table.parts.value)]);
+    text += fmt::format("parts = \"{}\"\n", specimen::parts_word(table.parts));
   }
   return text;
 }

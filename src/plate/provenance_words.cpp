@@ -89,7 +89,10 @@ ordered_json provenance_record(const FigurePlan& plan, const specimen::Specimen&
                                const std::optional<specimen::ProvenanceShares>& shares) {
   ordered_json json;
   json["preserved"] = ordered_json::array();
-  for (const specimen::Preserved& stretch : specimen.preserved) json["preserved"].push_back(stretch_words(stretch));
+  for (const specimen::Preserved& stated : specimen.preserved) {
+    const specimen::Stretch stretch = specimen::stretch_of(stated, specimen.growth.whorls);
+    json["preserved"].push_back({{"from_whorl", stretch.from}, {"to_whorl", stretch.to}, {"parts", specimen::parts_word(stated.parts)}});
+  }
   for (const Provenance one : kAll) json["layer"][std::to_string(static_cast<int>(one))] = provenance_word(one);
   if (shares) {
     json["arc_share"] = share_record(shares->arc);

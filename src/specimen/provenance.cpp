@@ -24,12 +24,27 @@ const char* provenance_word(Provenance provenance) {
   return "";
 }
 
+Stretch stretch_of(const Preserved& stated, double whorls) {
+  Stretch stretch{0.0, whorls};
+  if (stated.from) stretch.from = stated.from_lip ? whorls - stated.from->value : stated.from->value;
+  if (stated.to) stretch.to = stated.from_lip ? whorls - stated.to->value : stated.to->value;
+  return stretch;
+}
+
+const char* parts_word(PreservedParts parts) {
+  switch (parts) {
+    case PreservedParts::kWhole: return "whole";
+    case PreservedParts::kWall: return "wall";
+    case PreservedParts::kOutside: return "outside";
+    case PreservedParts::kInside: return "inside";
+  }
+  return "";
+}
+
 Preservation::Preservation(const Specimen& specimen)
     : stated_(!specimen.preserved.empty()), start_(specimen.growth.start.value), whorls_(specimen.growth.whorls.value) {
   for (const Preserved& stated : specimen.preserved) {
-    Stretch stretch{0.0, whorls_};
-    if (stated.from) stretch.from = stated.from_lip ? whorls_ - stated.from->value : stated.from->value;
-    if (stated.to) stretch.to = stated.from_lip ? whorls_ - stated.to->value : stated.to->value;
+    const Stretch stretch = stretch_of(stated, whorls_);
     const PreservedParts parts = stated.parts;
     any_.push_back(stretch);
     if (parts != PreservedParts::kInside) outside_.push_back(stretch);

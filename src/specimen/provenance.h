@@ -34,6 +34,11 @@ struct Stretch {
   double from, to;
 };
 
+/// Where a stated stretch lies on a shell of so many whorls.
+Stretch stretch_of(const Preserved& stated, double whorls);
+/// As the files have it: "whole", "wall" ..
+const char* parts_word(PreservedParts parts);
+
 class Preservation {
  public:
   /// From what the specimen states as preserved.

@@ -67,6 +67,15 @@ TEST_CASE("a shell's height tells of apex and base, its count of whorls of all o
   CHECK(all[0].to == Approx(7.0));
 }
 
+TEST_CASE("however many stretches readings tell of, a scene file takes them, the outermost kept", "[fit][provenance]") {
+  fit::Fit many = seven_whorls();
+  for (int i = 0; i <= 100; ++i) read(many, Definition::kWhorlWidthSection, {GrowthStage::Kind::kAtWhorl, 1.0 + 0.06 * i});
+  const auto kept = fit::observed_stretches(many);
+  CHECK(kept.size() == 64);
+  CHECK(kept.front().from == Approx(1.0));
+  CHECK(kept.back().to == Approx(7.0));
+}
+
 TEST_CASE("the fitted scene states what the file states as preserved, else what the readings tell, and what of the shell that is", "[fit][provenance]") {
   const std::string head = "format = 1\nstep = 0.1\n[specimen]\nname = \"x\"\ncoiling = \"dextral\"\n";
   std::string readings;

@@ -151,6 +151,9 @@ TEST_CASE("the caption says in words what was observed, how much that is and how
   const auto record = make_record(plan, s, test_plate::films_of(balls, plan), run);
   CHECK(record.at("provenance").at("arc_share").at("extrapolated") == 0.248);
   CHECK(record.at("provenance").at("layer").at("2") == "interpolated");
+  CHECK(record.at("provenance").at("preserved").at(0).at("from_whorl") == 3.0);
+  CHECK(record.at("provenance").at("preserved").at(0).at("to_whorl") == 7.25);  // the lip
+  CHECK(record.at("provenance").at("preserved").at(0).at("parts") == "outside");
   s.preserved.clear();
   const FigurePlan silent = plan_figure(s, views, test_plate::extents_of(balls, views));
   CHECK_FALSE(make_record(silent, s, test_plate::films_of(balls, silent), {}).contains("provenance"));
