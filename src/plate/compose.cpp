@@ -4,6 +4,7 @@
 
 #include "math/parallel.h"
 #include "plate/ink.h"
+#include "plate/legend.h"
 #include "plate/unobserved.h"
 #include "shaders_cpu/tone/curve.h"
 #include "shaders_cpu/tone/srgb.h"
@@ -64,6 +65,15 @@ void put_film(const FigurePlan& plan, const FigurePanel& panel, const transport:
   }
 }
 
+void put_swatch(const FigurePlan& plan, const LegendEntry& entry, int y, std::vector<Light>& row) {
+  if (y < entry.swatch.y || y >= entry.swatch.bottom()) return;
+  const UnobservedStyle style(plan, {});
+  transport::PixelFacts facts;
+  facts.provenance = static_cast<std::uint8_t>(entry.provenance);
+  for (int x = entry.swatch.x; x < entry.swatch.right(); ++x)
+    row[static_cast<std::size_t>(x)].put_over(style.drawn(Vec3(kSwatchTone), facts, x, y), 1.0);
+}
+
 void put_ink(const Ink& ink, const Vec3& colour, int y, std::vector<Light>& row) {
   if (y < ink.place.y || y >= ink.place.bottom()) return;
   const std::size_t from = static_cast<std::size_t>(y - ink.place.y) * static_cast<std::size_t>(ink.place.width);
@@ -98,7 +108,9 @@ void check(const FigurePlan& plan, const std::vector<transport::Film>& films) {
 
 Picture compose(const FigurePlan& plan, const std::vector<transport::Film>& films, Background ground) {
   check(plan, films);
-  const std::vector<Ink> inks = all_ink(plan);
+  std::vector<Ink> inks = all_ink(plan);
+  const std::vector<LegendEntry> legend = legend_of(plan, films);
+  for (const LegendEntry& entry : legend) inks.push_back(entry.words);
   const Light paper = ground_light(ground);
   const Vec3 ink_colour(ground == Background::kBlack ? 1.0 : 0.0);
 
@@ -112,6 +124,7 @@ Picture compose(const FigurePlan& plan, const std::vector<transport::Film>& film
     const int y = static_cast<int>(line);
     std::vector<Light> row(static_cast<std::size_t>(plan.width), paper);
     for (std::size_t i = 0; i < films.size(); ++i) put_film(plan, plan.panels[i], films[i], y, row);
+    for (const LegendEntry& entry : legend) put_swatch(plan, entry, y, row);
     for (const Ink& ink : inks) put_ink(ink, ink_colour, y, row);
     store(row, y, picture);
   });

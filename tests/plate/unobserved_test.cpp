@@ -6,6 +6,7 @@
 #include "plate/ball_shell.h"
 #include "plate/compose.h"
 #include "plate/image_exr.h"
+#include "plate/legend.h"
 #include "support/catch.h"
 #include "support/program.h"
 #include "support/read_image.h"
@@ -158,6 +159,44 @@ TEST_CASE("the caption says in words what was observed, how much that is and how
   const FigurePlan silent = plan_figure(s, views, test_plate::extents_of(balls, views));
   CHECK_FALSE(make_record(silent, s, test_plate::films_of(balls, silent), {}).contains("provenance"));
   CHECK(make_caption(silent, s, {}).find("observed") == std::string::npos);
+}
+
+TEST_CASE("the plate explains its hatching where there is room, each kind once, and never over a picture", "[plate][provenance]") {
+  // The flat picture fills its figure: a strip below it has room for words, 25 mm of paper has none for three.
+  const auto with_strip = [](int strip_px, int width_px) {
+    Flat flat(Unobserved::kHatch);
+    flat.plan.height += strip_px;
+    flat.plan.width = width_px;
+    return flat;
+  };
+  const Flat roomy = with_strip(90, 2200);
+  const std::vector<LegendEntry> legend = legend_of(roomy.plan, roomy.films);
+  REQUIRE(legend.size() == 3);
+  CHECK(legend[0].provenance == Provenance::kInterpolated);
+  CHECK(legend[2].provenance == Provenance::kAssumed);
+  for (std::size_t i = 0; i < 3; ++i) {
+    CHECK(legend[i].swatch.y >= 100);
+    CHECK(legend[i].swatch.bottom() <= roomy.plan.height);
+    CHECK(legend[i].words.place.x > legend[i].swatch.right());
+    if (i > 0) CHECK(legend[i].swatch.x > legend[i - 1].words.place.right());
+  }
+  const Picture picture = roomy.picture();
+  double darkest = 255.0, lightest = 0.0;  // of a swatch: lines on a shell's tone
+  const PixelRect& swatch = legend[0].swatch;
+  for (int x = swatch.x; x < swatch.right(); ++x) {
+    darkest = std::min(darkest, grey(picture, x, swatch.y + swatch.height / 2));
+    lightest = std::max(lightest, grey(picture, x, swatch.y + swatch.height / 2));
+  }
+  CHECK(darkest < 60.0);
+  CHECK(lightest > 150.0);
+  CHECK(legend_of(with_strip(90, 600).plan, roomy.films).empty());  // too narrow
+  CHECK(legend_of(with_strip(20, 2200).plan, roomy.films).empty());  // too low
+  Flat plain = roomy;
+  plain.plan.unobserved = Unobserved::kPlain;
+  CHECK(legend_of(plain.plan, plain.films).empty());
+  Flat observed = roomy;
+  for (transport::PixelFacts& facts : observed.films[0].facts) facts.provenance = facts.provenance == 4 ? 4 : 1;
+  CHECK(legend_of(observed.plan, observed.films).size() == 1);
 }
 
 }  // namespace whorl::plate
