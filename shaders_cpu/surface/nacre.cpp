@@ -2,6 +2,7 @@
 // From stacks to tables.
 #include "shaders_cpu/surface/nacre.h"
 
+#include "math/falloff.h"
 #include "math/hash.h"
 #include "math/parallel.h"
 #include "shaders_cpu/light/observer.h"
@@ -134,8 +135,7 @@ float nacre_drift(double turn, float around_deg, std::uint64_t seed) noexcept {
       const std::uint64_t word = hash_with(hash_with(mix64(seed + octave), static_cast<std::uint64_t>(static_cast<std::int64_t>(i))), row);
       return 2.0f * unit_float(high_word(word)) - 1.0f;
     };
-    const auto ease = [](double t) { return static_cast<float>(t * t * t * (t * (6.0 * t - 15.0) + 10.0)); };
-    const float u = ease(x - cx), v = ease(y - cy);
+    const auto u = static_cast<float>(smooth_step(x - cx)), v = static_cast<float>(smooth_step(y - cy));
     const float low = value(cx, cy) + (value(cx + 1.0, cy) - value(cx, cy)) * u;
     const float high = value(cx, cy + 1.0) + (value(cx + 1.0, cy + 1.0) - value(cx, cy + 1.0)) * u;
     sum += share * (low + (high - low) * v);

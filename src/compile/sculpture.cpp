@@ -12,7 +12,6 @@ namespace {
 
 using growth::Relief;
 
-constexpr double kHighest = 0.24;       // of the outline's own scale, see field/relief_fade.h
 constexpr double kDeepest = 0.8;        // of the wall
 constexpr double kPastLip = kTwoPi;     // sculpture that is not ended runs on past the lip, where the front cuts it
 
@@ -59,14 +58,10 @@ void build_sculpture(scene::Scene& scene, const specimen::Specimen& specimen, Fa
   const double half_breadth = scene.law.half_breadth;
   scene.sculpture = sculpture_of(specimen, scene.law, half_breadth);
   if (scene.sculpture.empty()) return;
-  double scale = 1e300, highest = 0.0, deepest = 0.0;
+  double scale = 1e300;
   for (const growth::Outline& outline : scene.outlines) scale = std::min(scale, outline.normal_scale.bounds().lo);
-  constexpr int kDirections = 1440;
-  for (int i = 0; i < kDirections; ++i) {
-    const Interval extremes = scene.sculpture.extremes(kTwoPi * i / kDirections);
-    highest = std::max(highest, extremes.hi);
-    deepest = std::max(deepest, -extremes.lo);
-  }
+  const Interval extremes = scene.sculpture.extremes();
+  const double highest = extremes.hi, deepest = -extremes.lo;
   // What rises, or cuts, the most is at fault.
   const auto worst = [&](const char*& table, double sign) {
     const specimen::Stated<double>* found = nullptr;
@@ -82,12 +77,12 @@ void build_sculpture(scene::Scene& scene, const specimen::Specimen& specimen, Fa
     return *found;
   };
   const char* table = "";
-  if (highest > kHighest * scale) {
+  if (highest > growth::kHighestRelief * scale) {
     const specimen::Stated<double> height = worst(table, 1.0);
     faults.add(height.where,
                fmt::format("[[{}]] height = {:g} mm: all sculpture together rises {:.3g} mm in one direction; what is fused with "
                            "this whorl may rise {:.3g} mm; make it lower, or spread it",
-                           table, height.value, highest * half_breadth, kHighest * scale * half_breadth));
+                           table, height.value, highest * half_breadth, growth::kHighestRelief * scale * half_breadth));
   }
   if (deepest * half_breadth > kDeepest * scene.wall.at_lip) {
     const specimen::Stated<double> height = worst(table, -1.0);

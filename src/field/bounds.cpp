@@ -3,6 +3,7 @@
 #include "field/field.h"
 #include "field/relief_fade.h"
 #include "field/stations.h"
+#include "math/falloff.h"
 
 #include <algorithm>
 #include <cmath>
@@ -104,8 +105,7 @@ Interval t2_range(const scene::Scene& scene, const SectionBox& s, const OutlineB
   Interval t2(std::min(kS2, s.q2.lo / (o.reach.hi * o.reach.hi) + cap_lo * cap_lo),
               std::min(kS2, s.q2.hi / (o.reach.lo * o.reach.lo) + cap_hi * cap_hi));
   if (scene.ellipsoids.empty()) return t2;
-  const auto density = [](double v) { return std::pow(std::max(0.0, 1.0 - v / kS2), 3); };
-  Interval f(density(t2.hi), density(t2.lo));
+  Interval f(wyvill(t2.hi / kS2), wyvill(t2.lo / kS2));
   for (const scene::Ellipsoid& e : scene.ellipsoids) {
     if (e.hollow != hollow) continue;
     // The box in the primitive's unit coordinates: centre and half-extents of each row.
@@ -118,8 +118,7 @@ Interval t2_range(const scene::Scene& scene, const SectionBox& s, const OutlineB
       nearest2 += d * d;
     }
     if (nearest2 >= 1.0) continue;
-    const double most = std::pow(1.0 - nearest2, 3);
-    (e.weight > 0.0 ? f.hi : f.lo) += e.weight * most;
+    (e.weight > 0.0 ? f.hi : f.lo) += e.weight * wyvill(nearest2);
   }
   return {kS2 * (1.0 - std::cbrt(f.hi)), kS2 * (1.0 - std::cbrt(f.lo))};
 }

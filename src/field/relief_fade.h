@@ -2,6 +2,8 @@
 // Where sculpture counts in full: round the surface, not at the centre line and not at the support's end.
 #pragma once
 
+#include "growth/sculpture.h"
+#include "math/falloff.h"
 #include "math/interval.h"
 
 #include <algorithm>
@@ -11,16 +13,11 @@ namespace whorl::field {
 /// Squared distances from the centre line, in outlines: none below kInnerNone, in full from kInnerFull to kOuterFull, none from
 /// kOuterNone on, which is within the support of the stations (1.44^2).
 inline constexpr double kInnerNone = 0.1, kInnerFull = 0.4, kOuterFull = 1.6, kOuterNone = 2.05;
-/// A length of t^2 = kOuterFull is that much of its unit below zero: sculpture may rise so high.
-inline constexpr double kHighestRelief = 0.24;
-inline constexpr double kSteepestFade = 1.875 / (kInnerFull - kInnerNone);
+static_assert((1.0 + growth::kHighestRelief) * (1.0 + growth::kHighestRelief) < kOuterFull);
+inline constexpr double kSteepestFade = kSteepestSmoothStep / (kInnerFull - kInnerNone);
 
 inline double relief_fade(double t2) {
-  const auto step = [](double x) {
-    const double t = std::clamp(x, 0.0, 1.0);
-    return t * t * t * (t * (6.0 * t - 15.0) + 10.0);
-  };
-  return step((t2 - kInnerNone) / (kInnerFull - kInnerNone)) * step((kOuterNone - t2) / (kOuterNone - kOuterFull));
+  return smooth_step((t2 - kInnerNone) / (kInnerFull - kInnerNone)) * smooth_step((kOuterNone - t2) / (kOuterNone - kOuterFull));
 }
 
 /// It rises once and falls once.

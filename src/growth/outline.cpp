@@ -2,6 +2,8 @@
 // Lobes, surface normals and the wall taken off along them.
 #include "growth/outline.h"
 
+#include "math/falloff.h"
+
 #include <algorithm>
 #include <limits>
 
@@ -75,8 +77,7 @@ double WallLaw::thickness(const CoilingLaw& law, double theta, HalfPlanePoint at
   const double plain = proportional ? at_lip * s.half_breadth / law.half_breadth
                                     : std::min(at_lip, kMostOfTube * std::min(1.0, law.S) * s.half_breadth);
   const double behind = law.theta_lip - (theta - front_lead(tan_inclination, s.depth, at));
-  const double x = std::clamp((kLipFades - behind) / (kLipFades - kLipWhole), 0.0, 1.0);
-  return plain + (lip_thickness - plain) * x * x * x * (x * (6.0 * x - 15.0) + 10.0);
+  return plain + (lip_thickness - plain) * smooth_step((kLipFades - behind) / (kLipFades - kLipWhole));
 }
 
 std::optional<PeriodicSpline> hollow_reach(const CoilingLaw& law, double theta, const PeriodicSpline& reach,

@@ -2,7 +2,8 @@
 // Heights of sculpture and their bounds.
 #include "growth/sculpture.h"
 
-#include "math/hash.h"
+#include "growth/irregularity.h"
+#include "math/falloff.h"
 #include "math/vec.h"
 
 #include <algorithm>
@@ -12,21 +13,8 @@ namespace whorl::growth {
 namespace {
 
 constexpr double kRamp = 0.25 * kTwoPi;    // growth over which a relief rises to its height and falls from it
-constexpr double kSteepestKernel = 1.717;  // greatest slope of (1 - u^2)^3: 6 u (1 - u^2)^2 at u^2 = 1/5
-constexpr double kSteepestRamp = 1.875;    // of the quintic step
-constexpr double kShift = 0.25, kVary = 0.5;
 
-double kernel(double u2) {
-  const double v = std::max(0.0, 1.0 - u2);
-  return v * v * v;
-}
-
-double step(double x) {
-  const double t = std::clamp(x, 0.0, 1.0);
-  return t * t * t * (t * (6.0 * t - 15.0) + 10.0);
-}
-
-double ramp(const Relief& r, double growth) { return step((growth - r.onset) / kRamp) * step((r.end - growth) / kRamp); }
+double ramp(const Relief& r, double growth) { return smooth_step((growth - r.onset) / kRamp) * smooth_step((r.end - growth) / kRamp); }
 
 // The ramp rises once and falls once.
 Interval ramp_range(const Relief& r, Interval growth) {
@@ -40,11 +28,8 @@ struct Crest {
 };
 
 Crest crest(const Relief& r, double number) {
-  if (r.irregularity == 0.0) return {r.crest + number * r.spacing, 1.0};
-  const std::uint64_t word = hash_with(r.seed, static_cast<std::uint64_t>(static_cast<std::int64_t>(number)));
-  const auto centred = [](std::uint32_t half) { return 2.0 * static_cast<double>(unit_float(half)) - 1.0; };
-  return {r.crest + (number + kShift * r.irregularity * centred(low_word(word))) * r.spacing,
-          1.0 + kVary * r.irregularity * centred(high_word(word))};
+  const Deviation d = deviation(r.seed, static_cast<std::int64_t>(number), r.irregularity);
+  return {r.crest + (number + d.shift) * r.spacing, d.scale};
 }
 
 // Crests that can reach a range of growth.
@@ -52,7 +37,7 @@ struct Numbers {
   double first, last;
 };
 Numbers numbers(const Relief& r, Interval growth) {
-  const double reach = r.growth_reach + kShift * r.irregularity * r.spacing;
+  const double reach = r.growth_reach + kMostShift * r.irregularity * r.spacing;
   return {std::ceil((growth.lo - reach - r.crest) / r.spacing), std::floor((growth.hi + reach - r.crest) / r.spacing)};
 }
 
@@ -79,12 +64,12 @@ double Sculpture::height(double growth, double psi) const noexcept {
     if (v2 >= 1.0) continue;
     double profile = 0.0;
     if (r.spacing == 0.0) {
-      profile = kernel(v2);
+      profile = wyvill(v2);
     } else {
       const Numbers n = numbers(r, Interval(growth));
       for (double number = n.first; number <= n.last; number += 1.0) {
         const Crest c = crest(r, number);
-        profile += c.scale * kernel(v2 + squared_share(growth - c.at, r.growth_reach));
+        profile += c.scale * wyvill(v2 + squared_share(growth - c.at, r.growth_reach));
       }
     }
     sum += r.height * ramp(r, growth) * profile;
@@ -100,21 +85,21 @@ Interval Sculpture::range(Interval growth, double psi_from, double psi_span) con
     const Interval v2(squared_share(v.lo, r.psi_reach), squared_share(v.hi, r.psi_reach));
     Interval profile(0.0);
     if (r.spacing == 0.0) {
-      profile = {kernel(v2.hi), kernel(v2.lo)};
+      profile = {wyvill(v2.hi), wyvill(v2.lo)};
     } else {
       const Numbers n = numbers(r, growth);
       constexpr double kMany = 8.0;  // more crests than that: all heights occur
       if (n.last - n.first > kMany) {
         // Neighbours overlap where they are broad or shifted: at most this many have a say at one place.
-        const double overlap = 1.0 + std::ceil(2.0 * (r.growth_reach / r.spacing + kShift * r.irregularity));
-        profile.hi = overlap * (1.0 + kVary * r.irregularity) * kernel(v2.lo);
+        const double overlap = 1.0 + std::ceil(2.0 * (r.growth_reach / r.spacing + kMostShift * r.irregularity));
+        profile.hi = overlap * (1.0 + kMostVariation * r.irregularity) * wyvill(v2.lo);
       } else {
         for (double number = n.first; number <= n.last; number += 1.0) {
           const Crest c = crest(r, number);
           const double near = std::max({0.0, growth.lo - c.at, c.at - growth.hi});
           const double far = std::max(std::abs(growth.lo - c.at), std::abs(growth.hi - c.at));
-          profile = profile + c.scale * Interval(kernel(v2.hi + squared_share(far, r.growth_reach)),
-                                                 kernel(v2.lo + squared_share(near, r.growth_reach)));
+          profile = profile + c.scale * Interval(wyvill(v2.hi + squared_share(far, r.growth_reach)),
+                                                 wyvill(v2.lo + squared_share(near, r.growth_reach)));
         }
       }
     }
@@ -128,10 +113,10 @@ Sculpture::Slopes Sculpture::slopes(Interval growth, double psi_from, double psi
   for (const Relief& r : reliefs) {
     if (!reaches(r, growth, psi_from, psi_span)) continue;
     const bool unbroken = r.spacing == 0.0;
-    const double together = unbroken ? 1.0 : 1.0 + std::ceil(2.0 * (r.growth_reach / r.spacing + kShift * r.irregularity));
-    const double most = std::abs(r.height) * (1.0 + kVary * r.irregularity) * together;
-    sum.by_growth += most * (kSteepestRamp / kRamp + (unbroken ? 0.0 : kSteepestKernel / r.growth_reach));
-    if (r.psi_reach > 0.0) sum.by_psi += most * kSteepestKernel / r.psi_reach;
+    const double together = unbroken ? 1.0 : 1.0 + std::ceil(2.0 * (r.growth_reach / r.spacing + kMostShift * r.irregularity));
+    const double most = std::abs(r.height) * (1.0 + kMostVariation * r.irregularity) * together;
+    sum.by_growth += most * (kSteepestSmoothStep / kRamp + (unbroken ? 0.0 : kSteepestWyvill / r.growth_reach));
+    if (r.psi_reach > 0.0) sum.by_psi += most * kSteepestWyvill / r.psi_reach;
   }
   return sum;
 }
@@ -139,17 +124,17 @@ Sculpture::Slopes Sculpture::slopes(Interval growth, double psi_from, double psi
 Interval Sculpture::extremes(double psi) const noexcept {
   Interval sum(0.0);
   for (const Relief& r : reliefs) {
-    const double most = r.height * (1.0 + kVary * r.irregularity) *
-                        kernel(squared_share(std::remainder(psi - r.psi, kTwoPi), r.psi_reach));
+    const double most = r.height * (1.0 + kMostVariation * r.irregularity) *
+                        wyvill(squared_share(std::remainder(psi - r.psi, kTwoPi), r.psi_reach));
     (most > 0.0 ? sum.hi : sum.lo) += most;
   }
   return sum;
 }
 
-double Sculpture::highest() const noexcept {
-  double most = 0.0;
+Interval Sculpture::extremes() const noexcept {
+  Interval most(0.0);
   constexpr int kDirections = 1440;
-  for (int i = 0; i < kDirections; ++i) most = std::max(most, extremes(kTwoPi * i / kDirections).hi);
+  for (int i = 0; i < kDirections; ++i) most = hull(most, extremes(kTwoPi * i / kDirections));
   return most;
 }
 

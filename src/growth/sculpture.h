@@ -23,6 +23,10 @@ struct Relief {
   std::uint64_t seed = 0;
 };
 
+/// Sculpture fused with a whorl rises to at most this share of the outline's own scale: farther out the field no longer has a
+/// length for it (field/relief_fade.h). What stands higher is a solid of its own.
+inline constexpr double kHighestRelief = 0.24;
+
 /// How far the surface stands above the plain one, in half-breadths, measured along its normal in space. The sum of its reliefs. Total, thread-safe.
 class Sculpture {
  public:
@@ -39,8 +43,8 @@ class Sculpture {
   Slopes slopes(Interval growth, double psi_from, double psi_span) const noexcept;
   /// Bounds of the height in one direction over all of growth.
   Interval extremes(double psi) const noexcept;
-  /// The greatest height of any place, at least 0.
-  double highest() const noexcept;
+  /// The same over all directions; holds 0.
+  Interval extremes() const noexcept;
 };
 
 }  // namespace whorl::growth

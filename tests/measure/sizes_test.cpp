@@ -31,7 +31,7 @@ double of_kind(const test::Shell& shell, SizeKind kind) {
 }  // namespace
 
 TEST_CASE("every stated size measures back on the solid within 0.2 %", "[measure]") {
-  const auto plan = GENERATE(test::tall_plan(), test::globose_plan(), test::planispiral_plan());
+  const auto plan = GENERATE(test::tall_plan(), test::globose_plan(), test::planispiral_plan(), test::ornate_plan());
   for (const SizeKind kind :
        {SizeKind::kShellHeight, SizeKind::kShellWidth, SizeKind::kApertureHeight, SizeKind::kApertureWidth}) {
     test::ShellPlan stated = plan;
