@@ -113,7 +113,7 @@ int plate_command(const Options& options, Progress& progress) {
   facts.quality = specimen.plate.quality.value;
   if (!sheet) {
     facts.seconds_compile = studios[0]->compile_seconds();
-    facts.counters = solid_counters(studios[0]->solid());
+    facts.counters = solid_counters(studios[0]->solid(), studios[0]->attached());
     progress.step("measuring the shell");
     facts.measurements = measure::to_json(measure::measure_shell(
         studios[0]->solid(), specimen.identity.mineral, {measure_lines(specimen.plate.quality.value), options.seed}));

@@ -2,9 +2,11 @@
 // Solves the stated size and puts the compiled scene together.
 #include "compile/compile.h"
 
+#include "compile/attached.h"
 #include "compile/axis.h"
 #include "compile/edge_patterns.h"
 #include "compile/lamps.h"
+#include "compile/mouth.h"
 #include "compile/sculpture.h"
 #include "compile/tube.h"
 
@@ -53,7 +55,7 @@ Box3 bounds_of(const scene::Scene& scene, const growth::Exterior& shell) {
     box.extendBy(e.centre - Vec3(reach));
     box.extendBy(e.centre + Vec3(reach));
   }
-  const double room = 2.0 * scene.front.rim_radius + scene.sculpture.highest() * scene.law.half_breadth + 0.01 * (box.max - box.min).length();
+  const double room = 2.0 * scene.front.rim_radius + scene.sculpture.extremes().hi * scene.law.half_breadth + 0.01 * (box.max - box.min).length();
   return {box.min - Vec3(room), box.max + Vec3(room)};
 }
 
@@ -100,9 +102,11 @@ scene::Scene compile_scene(const specimen::Specimen& specimen) {
   if (!faults.any()) build_axis(scene, specimen, reach, faults);
   if (!faults.any()) build_lamps(scene, specimen, faults);
   if (!faults.any()) build_edge_patterns(scene, specimen, reach, faults);
+  const growth::Exterior shell = exterior_of(scene);
+  if (!faults.any()) build_attached(scene, specimen, shell, faults);
   faults.raise(specimen.source);
 
-  const growth::Exterior shell = exterior_of(scene);
+  scene.mouth = mouth_of(scene);
   scene.height_mm = growth::height_of(growth::surface_points(shell, 180, 128));
   scene.bounds = bounds_of(scene, shell);
   return scene;

@@ -6,6 +6,8 @@
 
 #include <cmath>
 #include <limits>
+#include <optional>
+#include <vector>
 
 namespace whorl::compile {
 namespace {
@@ -53,11 +55,6 @@ bool in_air(const scene::Scene& scene, double theta, HalfPlanePoint p) {
   return theta > front ? clear_of_earlier(scene, theta, p) : in_lumen(scene, theta, p);
 }
 
-struct Room {
-  HalfPlanePoint centre{};
-  double clearance = 0.0;
-};
-
 // Distance of a place from the nearest wall, at most `most`: walls lean, so that the nearest may lie in another half-plane.
 double clearance(const scene::Scene& scene, double theta, HalfPlanePoint centre, double most) {
   constexpr int kPlanes = 24, kGrid = 48;  // to either side
@@ -75,36 +72,63 @@ double clearance(const scene::Scene& scene, double theta, HalfPlanePoint centre,
   return std::max(0.0, nearest - step - most / kPlanes * 0.5);
 }
 
-// The centroid of the free lumen's section and its distance from the nearest wall, both to a grid step.
-Room room_at(const scene::Scene& scene, double theta) {
-  constexpr int kGrid = 160;
+// Grid over the half-plane round a section.
+struct Grid {
+  static constexpr int kSteps = 160;
+  double middle_rho, middle_z, extent;
+  HalfPlanePoint point(int i, int j) const {
+    return {middle_rho + extent * (2.0 * i / kSteps - 1.0), middle_z + extent * (2.0 * j / kSteps - 1.0)};
+  }
+  template <class Visit>
+  void each(const Visit& visit) const {
+    for (int j = 0; j <= kSteps; ++j)
+      for (int i = 0; i <= kSteps; ++i) visit(point(i, j));
+  }
+};
+Grid grid_at(const scene::Scene& scene, double theta) {
   const growth::Station s = scene.law.at(theta);
-  const double half_z = 1.2 * scene.law.S * s.half_breadth, half_rho = 1.2 * s.half_breadth;
-  const double extent = std::max(half_z, half_rho);
-  const auto point = [&](int i, int j) {
-    return HalfPlanePoint{s.distance + extent * (2.0 * i / kGrid - 1.0), s.depth + extent * (2.0 * j / kGrid - 1.0)};
-  };
+  return {s.distance, s.depth, 1.2 * s.half_breadth * std::max(1.0, scene.law.S)};
+}
+
+// The centroid of the free lumen's section.
+std::optional<HalfPlanePoint> centre_line(const scene::Scene& scene, double theta) {
   double rho = 0.0, z = 0.0, count = 0.0;
-  std::vector<bool> free(static_cast<std::size_t>((kGrid + 1) * (kGrid + 1)));
-  for (int j = 0; j <= kGrid; ++j)
-    for (int i = 0; i <= kGrid; ++i) {
-      const HalfPlanePoint p = point(i, j);
-      if (!in_lumen(scene, theta, p)) continue;
-      free[static_cast<std::size_t>(j * (kGrid + 1) + i)] = true;
-      rho += p.rho;
-      z += p.z;
-      count += 1.0;
-    }
-  if (count == 0.0) return {};
-  Room room{{rho / count, z / count}, std::numeric_limits<double>::infinity()};
-  for (int j = 0; j <= kGrid; ++j)
-    for (int i = 0; i <= kGrid; ++i)
-      if (!free[static_cast<std::size_t>(j * (kGrid + 1) + i)]) {
-        const HalfPlanePoint p = point(i, j);
-        room.clearance = std::min(room.clearance, std::hypot(p.rho - room.centre.rho, p.z - room.centre.z));
-      }
-  room.clearance = clearance(scene, theta, room.centre, room.clearance);
-  return room;
+  grid_at(scene, theta).each([&](HalfPlanePoint p) {
+    if (!in_lumen(scene, theta, p)) return;
+    rho += p.rho;
+    z += p.z;
+    count += 1.0;
+  });
+  if (count == 0.0) return std::nullopt;
+  return HalfPlanePoint{rho / count, z / count};
+}
+
+// Distance of a place in the lumen from the nearest wall, to a grid step; 0 where it is in the wall.
+double room_round(const scene::Scene& scene, double theta, HalfPlanePoint centre) {
+  if (!in_lumen(scene, theta, centre)) return 0.0;
+  double nearest = std::numeric_limits<double>::infinity();
+  grid_at(scene, theta).each([&](HalfPlanePoint p) {
+    const double apart = std::hypot(p.rho - centre.rho, p.z - centre.z);
+    if (apart < nearest && !in_lumen(scene, theta, p)) nearest = apart;
+  });
+  return clearance(scene, theta, centre, nearest);
+}
+
+// Where a lamp's balls hang in the half-plane.
+std::vector<HalfPlanePoint> places_of(const scene::Scene& scene, const specimen::Lamp& lamp, double theta, HalfPlanePoint centre) {
+  const growth::Station s = scene.law.at(theta);
+  const double at = radians(lamp.at_deg);
+  const HalfPlanePoint middle = scene.law.to_half_plane(s, {0.0, 0.0}), towards = scene.law.to_half_plane(s, {std::cos(at), std::sin(at)});
+  const double length = std::hypot(towards.rho - middle.rho, towards.z - middle.z);
+  centre.rho += lamp.offset_mm * (towards.rho - middle.rho) / length;
+  centre.z += lamp.offset_mm * (towards.z - middle.z) / length;
+  if (lamp.shape.value == specimen::LampShape::kBall) return {centre};
+  std::vector<HalfPlanePoint> places;
+  for (int i = 0; i < lamp.bulbs; ++i) {
+    const double turn = kTwoPi * i / lamp.bulbs;
+    places.push_back({centre.rho + lamp.ring_mm * std::cos(turn), centre.z + lamp.ring_mm * std::sin(turn)});
+  }
+  return places;
 }
 
 }  // namespace
@@ -119,19 +143,27 @@ void build_lamps(scene::Scene& scene, const specimen::Specimen& specimen, Faults
                              lamp.behind_lip.value, (scene.law.theta_lip - scene.law.theta_start) / kTwoPi));
       continue;
     }
-    const Room room = room_at(scene, theta);
-    if (lamp.radius_mm > room.clearance) {
+    const std::optional<HalfPlanePoint> centre = centre_line(scene, theta);
+    const std::vector<HalfPlanePoint> places = centre ? places_of(scene, lamp, theta, *centre) : std::vector<HalfPlanePoint>{};
+    double room = centre ? std::numeric_limits<double>::infinity() : 0.0;
+    for (const HalfPlanePoint& place : places) room = std::min(room, room_round(scene, theta, place));
+    if (lamp.radius_mm > room) {
+      const bool free = lamp.offset_mm > 0.0 || lamp.shape.value == specimen::LampShape::kRing;
       faults.add(lamp.radius_mm.where,
-                 fmt::format("[[lamp]] radius = {:g}: the lamp does not fit into the lumen {:g} whorls behind the lip, "
-                             "which has room for a radius of {:.3g} mm; give a smaller radius or a place nearer to the "
-                             "lip",
-                             lamp.radius_mm.value, lamp.behind_lip.value, room.clearance));
+                 room > 0.0 || !free
+                     ? fmt::format("[[lamp]] radius = {:g}: the lamp does not fit into the lumen {:g} whorls behind the lip, "
+                                   "which has room for a radius of {:.3g} mm; give a smaller radius or a place nearer to the "
+                                   "lip",
+                                   lamp.radius_mm.value, lamp.behind_lip.value, room)
+                     : fmt::format("[[lamp]]: {} lies in the wall {:g} whorls behind the lip; on the centre line a ball of radius {:.3g} "
+                                   "mm has room there; give a smaller {}",
+                                   lamp.shape.value == specimen::LampShape::kRing ? "the ring" : "the lamp", lamp.behind_lip.value,
+                                   room_round(scene, theta, *centre),
+                                   lamp.shape.value == specimen::LampShape::kRing ? "ring or offset" : "offset"));
       continue;
     }
-    scene.lamps.push_back({{room.centre.rho * std::cos(theta), room.centre.rho * std::sin(theta), room.centre.z},
-                           lamp.radius_mm,
-                           lamp.strength,
-                           lamp.temperature_k});
+    for (const HalfPlanePoint& place : places)
+      scene.lamps.push_back({{place.rho * std::cos(theta), place.rho * std::sin(theta), place.z}, lamp.radius_mm, lamp.strength, lamp.temperature_k});
   }
 }
 

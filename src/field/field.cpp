@@ -4,6 +4,7 @@
 
 #include "field/relief_fade.h"
 #include "field/stations.h"
+#include "math/falloff.h"
 
 #include <algorithm>
 #include <cmath>
@@ -15,16 +16,10 @@ constexpr double kS2 = scene::kSupport * scene::kSupport;
 // Farther behind the lip than this the growth front, which leads by a quarter turn at most, changes no sign.
 constexpr double kFrontReach = 2.6;
 
-double wyvill(double u2) {
-  const double v = std::max(0.0, 1.0 - u2);
-  return v * v * v;
-}
-
 // A primitive in space reaches a quarter turn along its whorl in full, and fades out before half a turn.
 double window(double distance_in_growth) {
   constexpr double kFull = 0.5 * kPi, kNone = 0.96 * kPi;
-  const double x = std::clamp((kNone - std::abs(distance_in_growth)) / (kNone - kFull), 0.0, 1.0);
-  return x * x * x * (x * (6.0 * x - 15.0) + 10.0);
+  return smooth_step((kNone - std::abs(distance_in_growth)) / (kNone - kFull));
 }
 
 }  // namespace
@@ -224,6 +219,28 @@ Place Field::place_at(const Vec3& p) const noexcept {
     if (outer > 0.0) return {hollow > 0.0 ? State::kLumen : State::kSolid, {Part::kWhorl, theta}};
   }
   return {};
+}
+
+Field::OnTube Field::on_tube(const Vec3& p, double theta) const noexcept {
+  const InSection at = in_section(p, theta);
+  const StationWeights w = stations_at(scene_, at.theta);
+  // Neighbouring stations often share one outline, which is then asked once.
+  double reach = 0.0, normal_scale = 0.0, weight = 0.0;
+  for (int i = 0; i < 4; ++i) {
+    weight += w.weight[i];
+    const std::uint32_t here = scene_.stations[static_cast<std::size_t>(w.first + i)].outer;
+    if (i < 3 && here == scene_.stations[static_cast<std::size_t>(w.first + i + 1)].outer) continue;
+    reach += weight * scene_.outlines[here].reach.value(at.psi);
+    normal_scale += weight * scene_.outlines[here].normal_scale.value(at.psi);
+    weight = 0.0;
+  }
+  const double slope = scene_.front.tan_inclination, u = slope * (at.s.depth - at.z), apart2 = at.rho * at.rho + u * u;
+  const double lead = growth::front_lead(slope, at.s.depth, {at.rho, at.z});
+  // The gradient of growth: round the axis, away from it and along it.
+  const double deeper = at.s.depth * scene_.law.by_depth.rate(at.theta);
+  const Vec3 gradient((1.0 - slope * deeper * at.rho / apart2) / at.rho, u / apart2, slope * at.rho / apart2);
+  return {at.theta - lead, at.psi, at.s.half_breadth * normal_scale * (std::sqrt(at.q2) / reach - 1.0), 1.0 / gradient.length(), at.rho,
+          at.s.half_breadth / scene_.law.half_breadth};
 }
 
 void Field::coordinates(const Vec3& p, double theta, double& growth, double& around) const noexcept {

@@ -85,6 +85,17 @@ class Field {
   /// Growth angle (of the passage nearest to `theta`) and section angle in radians at a point.
   void coordinates(const Vec3& p, double theta, double& growth, double& around) const noexcept;
 
+  /// A place against the plain outside of the tube's passage nearest to a growth angle.
+  struct OnTube {
+    double growth;     // along growth lines: the growth at which the lip stood there
+    double psi;        // section angle
+    double elevation;  // above the plain surface, along its normal; mm. True near the surface, and along normals to 1 %
+    double across;     // mm across the growth front a radian of growth
+    double rho;        // distance from the axis, mm
+    double scale;      // size of the whorl there / at the lip
+  };
+  OnTube on_tube(const Vec3& p, double theta) const noexcept;
+
  private:
   struct InSection;  // a point in the coordinates of one passage
   InSection in_section(const Vec3& p, double theta) const noexcept;

@@ -157,6 +157,15 @@ std::string views_in_short(const FigurePlan& plan) {
   return text;
 }
 
+/// ", and from within by lamps, against which that light is dimmed by 3 stops"
+std::string within_words(const specimen::Specimen& specimen) {
+  if (specimen.lamps.empty()) return "";
+  const double stops = specimen.light.stops;
+  return stops == 0.0 ? ", and by lamps within"
+                      : fmt::format(", and by lamps within, against which that light is dimmed by {:g} {}", -stops,
+                                    stops == -1.0 ? "stop" : "stops");
+}
+
 }  // namespace
 
 std::string make_caption(const FigurePlan& plan, const specimen::Specimen& specimen, const RunFacts& run) {
@@ -168,7 +177,7 @@ std::string make_caption(const FigurePlan& plan, const specimen::Specimen& speci
   if (!id.author.value.empty()) text += " (author: " + id.author.value + ")";
   text += fmt::format(". {} shell of {} whorls, {}. ", capital(coiling_word(specimen)),
                       plain_number(specimen.growth.whorls.value), size_phrase(specimen, run));
-  text += views_sentence(plan, specimen) + " " + bars_sentence(plan) + " Orthographic, lit from " + light_words(specimen.light) + ".\n\n";
+  text += views_sentence(plan, specimen) + " " + bars_sentence(plan) + " Orthographic, lit from " + light_words(specimen.light) + within_words(specimen) + ".\n\n";
 
   text += "The figure shows a " + std::string(kDisclosureClass) + " (Whorlwright " + run.version +
           "), no photograph of a specimen. " + std::string(kTypeSentence) + looks_sentence(plan, specimen);

@@ -166,7 +166,8 @@ ordered_json picture_making(const specimen::Light& light) {
                    {"azimuth_deg", light.azimuth_deg.value},
                    {"elevation_deg", light.elevation_deg.value},
                    {"softness_deg", light.softness_deg.value},
-                   {"fill", light.fill.value}};
+                   {"fill", light.fill.value},
+                   {"stops", light.stops.value}};
   const double card = shaders_cpu::kCardDisplay;
   json["tone_curve"] = {{"unit", "radiance of a matt white card that faces the key light"},
                         {"up_to_1", fmt::format("{:g} x", card)},

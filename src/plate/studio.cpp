@@ -4,6 +4,7 @@
 
 #include "compile/compile.h"
 #include "growth/extents.h"
+#include "growth/surface_frame.h"
 #include "plate/provenance_layer.h"
 #include "shaders_cpu/medium/attenuation.h"
 #include "trace/mould_solid.h"
@@ -27,6 +28,28 @@ constexpr int kRadiographSamples = 32;
 
 // The direction towards the reader, square to the axis of coiling.
 Vec3 beside_axis(const Vec3& towards_reader) { return Vec3(towards_reader.x, towards_reader.y, 0.0).normalized(); }
+
+// Where attached solids reach farthest, for framing; and a box that holds them.
+void add_attached(const scene::Scene& scene, std::vector<Vec3>& points, Box3& box) {
+  constexpr int kPlaces = 4;
+  for (const scene::Horn& h : scene.attached.horns) {
+    box.extendBy(scene::box_of(h));
+    for (int i = 1; i <= kPlaces; ++i) points.push_back(scene::axis_at(h, h.length * i / kPlaces).point);
+  }
+  for (const scene::Bead& b : scene.attached.beads) {
+    box.extendBy(scene::box_of(b));
+    points.push_back(Vec3(b.centre) + Vec3(b.rows[2]) / Vec3(b.rows[2]).length2());
+  }
+  const growth::Exterior shell = compile::exterior_of(scene);
+  for (const scene::Ledge& l : scene.attached.ledges)
+    for (int i = 0; i <= kPlaces; ++i) {
+      const double at = l.from + (l.to - l.from) * i / kPlaces;
+      const bool round = l.run == scene::Ledge::Run::kRoundSection;
+      const growth::SurfaceFrame f = growth::surface_frame(shell, round ? l.growth : at, round ? at : l.psi);
+      points.push_back(f.point + l.height * (f.normal + l.tan_lean * f.forward));
+      box.extendBy(points.back());
+    }
+}
 
 double now() {
   return std::chrono::duration<double>(std::chrono::steady_clock::now().time_since_epoch()).count();
@@ -63,8 +86,13 @@ Studio::Studio(const specimen::Specimen& specimen) : specimen_(specimen) {
   const std::size_t count = points_.size();
   for (std::size_t i = 0; i < count; ++i)
     if ((points_[i] - mouth).length() < nearby) points_.push_back(points_[i] + scene_->front.rim_radius * forward);
-  const Box3& box = scene_->bounds;
-  front_mm_ = 1.01 * std::max(box.min.length(), box.max.length());
+  bounds_ = scene_->bounds;
+  if (!scene_->attached.empty()) {
+    add_attached(*scene_, points_, bounds_);
+    const Vec3 room(0.02 * (bounds_.max - bounds_.min).length());  // for crests between the places asked
+    bounds_ = {bounds_.min - room, bounds_.max + room};
+  }
+  front_mm_ = 1.01 * std::max(bounds_.min.length(), bounds_.max.length());
   materials_ = transport::make_materials(*field_, specimen_);
   whitened_ = transport::whitened(materials_, *field_);
   compile_seconds_ = now() - start;
@@ -74,6 +102,7 @@ void Studio::set_up(double mm_per_pixel, bool exact) {
   const double start = now();
   const double tolerance = std::min(kOfAPixel * mm_per_pixel, scene::measuring_tolerance_mm(*scene_));
   solid_ = std::make_unique<trace::EmbreeSolid>(*field_, trace::SolidOptions{tolerance, exact});
+  if (!scene_->attached.empty()) attached_ = std::make_unique<trace::AttachedSolids>(*field_);
   if (const auto medium = transport::make_medium(specimen_))
     materials_.wall = std::make_shared<const transport::TranslucentWall>(*solid_, *medium);
   compile_seconds_ += now() - start;
@@ -89,10 +118,12 @@ transport::Film Studio::picture(const View& view, specimen::PanelLook look, spec
 
 transport::Film Studio::exposed(const View& view, specimen::PanelLook look, specimen::Shows shows, const transport::Camera& camera, int samples,
                                 std::uint64_t seed, std::uint32_t number, const transport::Progress& progress) const {
+  const trace::UnitedSolid all(*solid_, attached_.get());
   if (look == specimen::PanelLook::kRadiograph) {
     transport::RadiographJob job;
     job.solid = solid_.get();
-    job.bounds_mm = scene_->bounds;
+    job.attached = attached_.get();
+    job.bounds_mm = bounds_;
     job.camera = camera;
     job.attenuation_per_mm = shaders_cpu::carbonate_attenuation_per_mm(
         specimen_.radiograph.energy_kev, specimen::mineral_density(specimen_.identity.mineral));
@@ -107,17 +138,19 @@ transport::Film Studio::exposed(const View& view, specimen::PanelLook look, spec
     for (const scene::Lamp& lamp : scene_->lamps)
       lamps.push_back({lamp.centre, lamp.radius, lamp.strength, lamp.temperature_k});
   std::optional<trace::SectionedSolid> half;
-  if (view.cut) half.emplace(*solid_, view.fixed_page.z);
+  if (view.cut) half.emplace(all, view.fixed_page.z);
 
   transport::RenderJob job;
-  job.shell = half ? static_cast<const trace::Surfaces*>(&*half) : solid_.get();
+  job.shell = half ? static_cast<const trace::Surfaces*>(&*half) : &all;
   std::optional<trace::MouldSolid> mould;
   if (shows == specimen::Shows::kMould) mould.emplace(*solid_);
   if (shows == specimen::Shows::kBoth) mould.emplace(*solid_, beside_axis(view.fixed_page.z));
   if (mould) job.shell = &*mould;
-  job.bounds_mm = scene_->bounds;
+  job.bounds_mm = bounds_;
   job.camera = camera;
   job.lighting = transport::light_page(specimen_.light, lamps, view.fixed_page);
+  const scene::Mouth& mouth = scene_->mouth;
+  job.lighting.portal = shaders_cpu::Portal{mouth.centre, mouth.half_u, mouth.half_v, mouth.outwards};
   job.materials = look == specimen::PanelLook::kWhitened ? whitened_ : materials_;
   if (view.cut || mould) job.materials.wall.reset();
   job.samples_per_pixel = samples;

@@ -6,7 +6,7 @@
 #include "plate/views.h"
 #include "scene/scene.h"
 #include "specimen/specimen.h"
-#include "trace/embree_solid.h"
+#include "trace/united_solid.h"
 #include "transport/camera.h"
 #include "transport/film.h"
 #include "transport/materials.h"
@@ -43,6 +43,7 @@ class Studio {
   const scene::Scene& scene() const { return *scene_; }
   const field::Field& field() const { return *field_; }
   const trace::EmbreeSolid& solid() const { return *solid_; }
+  const trace::AttachedSolids* attached() const { return attached_.get(); }
   /// Points on the outer surface, for framing; frame of the dextral solid, mm.
   const std::vector<Vec3>& surface_points() const { return points_; }
   /// Rays start this far from the pole.
@@ -58,7 +59,9 @@ class Studio {
   std::unique_ptr<scene::Scene> scene_;
   std::unique_ptr<field::Field> field_;
   std::unique_ptr<trace::EmbreeSolid> solid_;
+  std::unique_ptr<trace::AttachedSolids> attached_;  // none where nothing stands on the shell
   std::vector<Vec3> points_;
+  Box3 bounds_;  // of shell and attached solids
   transport::Materials materials_, whitened_;
   double front_mm_ = 0.0, compile_seconds_ = 0.0;
 };

@@ -5,6 +5,7 @@
 #include "growth/coiling_law.h"
 #include "growth/outline.h"
 #include "growth/sculpture.h"
+#include "scene/attached.h"
 #include "scene/edge_pattern.h"
 
 #include <algorithm>
@@ -65,6 +66,11 @@ struct Front {
   double rim_radius = 0.0;  // half of the lip's thickness; the rim stands this far beyond theta_lip
 };
 
+/// The mouth as a rectangle in space: centre, halves of its sides, and the way out.
+struct Mouth {
+  Vec3 centre{0.0}, half_u{1.0, 0.0, 0.0}, half_v{0.0, 0.0, 1.0}, outwards{0.0, 1.0, 0.0};
+};
+
 struct Lamp {
   Vec3 centre;
   double radius = 0.0, strength = 0.0, temperature_k = 6500.0;
@@ -86,7 +92,9 @@ struct Scene {
   Front front;
   growth::WallLaw wall;
   std::vector<Lamp> lamps;
+  Mouth mouth;
   std::vector<EdgePattern> edge_patterns;  // in the order in which they were stated
+  Attached attached;
   Box3 bounds;              // of the solid, with a little room
   double height_mm = 0.0;   // along the axis, from the growth law
   bool start_raised = false;  // whorls too small to draw were left to the embryonic cap

@@ -191,13 +191,16 @@ Translucence SceneReader::read_translucence() {
 
 Light SceneReader::read_light() {
   const TableReader t = table("light");
-  return {t.number("azimuth"), t.number("elevation"), t.number("softness"), t.number("fill")};
+  return {t.number("azimuth"), t.number("elevation"), t.number("softness"), t.number("fill"), t.number("stops")};
 }
 
 std::vector<Lamp> SceneReader::read_lamps() {
   std::vector<Lamp> lamps;
   for (const TableReader& t : list("lamp", &root_)) {
-    lamps.push_back({t.number("behind_lip"), t.number("radius"), t.number("strength"), t.number("temperature")});
+    const Stated<double> radius = t.number("radius");
+    constexpr double kUsualRing = 2.0;  // radii of a bulb
+    lamps.push_back({t.number("behind_lip"), radius, t.number("strength"), t.number("temperature"), t.number("offset"), t.number("at"),
+                     t.word<LampShape>("shape"), t.number("ring", kUsualRing * radius), t.whole("bulbs")});
   }
   return lamps;
 }
@@ -281,6 +284,7 @@ Specimen SceneReader::read() {
   specimen.translucence = read_translucence();
   specimen.colouring = read_colouring();
   specimen.sculpture = read_sculpture();
+  specimen.attachments = read_attachments();
   specimen.light = read_light();
   specimen.lamps = read_lamps();
   specimen.radiograph = read_radiograph();

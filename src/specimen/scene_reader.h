@@ -37,6 +37,7 @@ class SceneReader {
   std::vector<Preserved> read_preserved();
   Colouring read_colouring();
   Sculpture read_sculpture();
+  Attachments read_attachments();
   Light read_light();
   std::vector<Lamp> read_lamps();
   Radiograph read_radiograph();

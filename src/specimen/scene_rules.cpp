@@ -15,6 +15,7 @@ namespace {
 constexpr double kShortestGrowth = 0.25;     // whorls between the embryonic shell and the lip
 constexpr double kMostPixelsAcross = 30000;  // beyond it image viewers and printers give up
 constexpr double kNarrowestColumn = 2.0;     // mm
+constexpr double kSharpestBend = 0.5;        // foot radius / radius of the bend
 
 void check_growth(const Specimen& s, ProblemList& problems) {
   const double last_start = s.growth.whorls - kShortestGrowth;
@@ -64,21 +65,44 @@ void check_page(const Plate& plate, ProblemList& problems) {
   }
 }
 
-void check_span(const char* table, const Pigment& pigment, const Specimen& s, ProblemList& problems) {
-  if (pigment.onset >= pigment.end)
-    problems.add(pigment.onset.given ? pigment.onset.where : pigment.end.where,
-                 fmt::format("[[{}]] onset = {}: must be less than end = {}", table, pigment.onset.value,
-                             pigment.end.value));
-  else if (pigment.onset >= s.growth.whorls)
-    problems.add(pigment.onset.where, fmt::format("[[{}]] onset = {}: lies beyond the lip; must be less than whorls = {}",
-                                                  table, pigment.onset.value, s.growth.whorls.value));
+void check_spans(const Specimen& s, ProblemList& problems) {
+  // `what` states onset and end, in whorls.
+  const auto check = [&](const char* table, const auto& what) {
+    if (what.onset >= what.end)
+      problems.add(what.onset.given ? what.onset.where : what.end.where,
+                   fmt::format("[[{}]] onset = {}: must be less than end = {}", table, what.onset.value, what.end.value));
+    else if (what.onset >= s.growth.whorls)
+      problems.add(what.onset.where, fmt::format("[[{}]] onset = {}: lies beyond the lip; must be less than whorls = {}", table,
+                                                 what.onset.value, s.growth.whorls.value));
+  };
+  for (const Band& band : s.colouring.bands) check("band", band.pigment);
+  for (const Flame& flame : s.colouring.flames) check("flame", flame.pigment);
+  for (const Spot& spot : s.colouring.spots) check("spot", spot.pigment);
+  for (const EdgePattern& pattern : s.colouring.patterns) check("pattern", pattern.pigment);
+  for (const Cord& cord : s.sculpture.cords) check("cord", cord);
+  for (const Rib& rib : s.sculpture.ribs) check("rib", rib);
+  for (const Nodule& nodule : s.sculpture.nodules) check("nodule", nodule);
+  for (const Stripe& stripe : s.attachments.stripes) check("stripe", stripe);
+  for (const Lamella& lamella : s.attachments.lamellae) check("lamella", lamella.series);
+  for (const Spine& spine : s.attachments.spines) check("spine", spine.series);
+  for (const Attached& attached : s.attachments.attached) check("attached", attached.series);
+}
+
+void check_spines(const Specimen& s, ProblemList& problems) {
+  for (const Spine& spine : s.attachments.spines) {
+    const double sharp = std::abs(radians(spine.bend_deg)) * 0.5 * spine.breadth_mm / spine.length_mm;
+    if (sharp > kSharpestBend)
+      problems.add(spine.bend_deg.where,
+                   fmt::format("[[spine]] bend = {:g} degrees over a length of {:g} mm: too sharp for a foot {:g} mm across, which would "
+                               "fold; bend it by at most {:.3g} degrees, or make it longer or thinner",
+                               spine.bend_deg.value, spine.length_mm.value, spine.breadth_mm.value,
+                               std::abs(spine.bend_deg.value) * kSharpestBend / sharp));
+    if (spine.open_deg > 0.0 && !(spine.hollow > 0.0))
+      problems.add(spine.open_deg.where, "[[spine]] open: only a hollow spine can be open along its front; state hollow as well");
+  }
 }
 
 void check_colouring(const Specimen& s, ProblemList& problems) {
-  for (const Band& band : s.colouring.bands) check_span("band", band.pigment, s, problems);
-  for (const Flame& flame : s.colouring.flames) check_span("flame", flame.pigment, s, problems);
-  for (const Spot& spot : s.colouring.spots) check_span("spot", spot.pigment, s, problems);
-  for (const EdgePattern& pattern : s.colouring.patterns) check_span("pattern", pattern.pigment, s, problems);
   if (s.look.callus_breadth_mm.given && !s.look.callus)
     problems.add(s.look.callus_breadth_mm.where,
                  "[look] callus_breadth is stated without callus: state the colour of the callus as well");
@@ -138,6 +162,8 @@ void check_rules(const Specimen& specimen, ProblemList& problems) {
   check_thickness("[wall] thickness", specimen.wall.thickness_mm, specimen, problems);
   if (specimen.lip.thickness_mm.given)
     check_thickness("[lip] thickness", specimen.lip.thickness_mm, specimen, problems);
+  check_spans(specimen, problems);
+  check_spines(specimen, problems);
   check_colouring(specimen, problems);
   check_looks(specimen.plate, problems);
   check_preserved(specimen.preserved, specimen.growth.whorls.value, problems);

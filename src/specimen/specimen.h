@@ -174,12 +174,54 @@ struct Sculpture {
   std::vector<Nodule> nodules;
 };
 
-struct Light {
-  Stated<double> azimuth_deg, elevation_deg, softness_deg, fill;
+/// Where like things stand in growth: how many a whorl, one of them `behind_lip` whorls behind the lip.
+struct Recurrence {
+  Stated<double> per_whorl, behind_lip, irregularity, onset, end;
+  Stated<int> seed;
 };
 
+/// Solids that stand on the shell, each of its own colour; sizes in mm at the lip, growing with the whorl.
+struct Stripe {
+  Stated<double> at_deg, width_deg, height_mm, onset, end;
+  Stated<Colour> colour;
+};
+struct Lamella {
+  Recurrence series;
+  Stated<double> height_mm, thickness_mm, at_deg, width_deg, lean_deg;
+  std::optional<Stated<Colour>> colour;  // none: that of the outside
+};
+struct Spine {
+  Recurrence series;
+  Stated<double> length_mm, breadth_mm, at_deg, tip, bend_deg, lean_deg, hollow, open_deg;
+  std::optional<Stated<Colour>> colour;
+};
+enum class AttachedShape { kBead, kCone, kTube };
+struct Attached {
+  Stated<AttachedShape> shape;
+  Recurrence series;
+  Stated<int> rows;
+  Stated<double> height_mm, breadth_mm, at_deg, width_deg, stagger, lean_deg;
+  Stated<Colour> colour;
+};
+struct Attachments {
+  std::vector<Stripe> stripes;
+  std::vector<Lamella> lamellae;
+  std::vector<Spine> spines;
+  std::vector<Attached> attached;
+};
+
+struct Light {
+  Stated<double> azimuth_deg, elevation_deg, softness_deg, fill;
+  Stated<double> stops;  // brightness of key and fill against the lamps
+};
+
+enum class LampShape { kBall, kRing };
 struct Lamp {
   Stated<double> behind_lip, radius_mm, strength, temperature_k;
+  Stated<double> offset_mm, at_deg;  // from the lumen's centre line, and towards where
+  Stated<LampShape> shape;
+  Stated<double> ring_mm;            // radius of a ring round that place
+  Stated<int> bulbs;                 // balls on the ring
 };
 
 struct Panel {
@@ -233,6 +275,7 @@ struct Specimen {
   Translucence translucence;
   Colouring colouring;
   Sculpture sculpture;
+  Attachments attachments;
   Light light;
   std::vector<Lamp> lamps;
   Radiograph radiograph;

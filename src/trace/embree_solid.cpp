@@ -4,7 +4,7 @@
 
 #include "diagnostics/error.h"
 #include "trace/cell_march.h"
-#include "trace/embree_shim.h"
+#include "trace/embree_ray.h"
 
 #include <algorithm>
 #include <atomic>
@@ -25,21 +25,6 @@ struct Query : embree::Payload {
   CellRay ray;
   std::vector<std::uint32_t>* visited = nullptr;  // gather cells instead of looking for a hit
 };
-
-void fill(RTCRay& r, const Ray& ray) {
-  r.org_x = ray.origin.x;
-  r.org_y = ray.origin.y;
-  r.org_z = ray.origin.z;
-  r.dir_x = ray.direction.x;
-  r.dir_y = ray.direction.y;
-  r.dir_z = ray.direction.z;
-  r.tnear = ray.t_min;
-  r.tfar = ray.t_max;
-  r.time = 0.0f;
-  r.mask = 0xFFFFFFFFu;
-  r.id = 0;
-  r.flags = 0;
-}
 
 }  // namespace
 
@@ -178,10 +163,7 @@ EmbreeSolid::EmbreeSolid(const field::Field& field, const SolidOptions& options)
 EmbreeSolid::~EmbreeSolid() = default;
 
 bool EmbreeSolid::closest(const Ray& ray, Hit& hit) const noexcept {
-  RTCRayHit query;
-  fill(query.ray, ray);
-  query.hit.geomID = RTC_INVALID_GEOMETRY_ID;
-  query.hit.instID[0] = RTC_INVALID_GEOMETRY_ID;
+  RTCRayHit query = embree::query_of(ray);
   Query payload(ray);
   embree::trace_closest(impl_->scene, query, payload);
   if (query.hit.geomID == RTC_INVALID_GEOMETRY_ID) return false;
@@ -193,8 +175,7 @@ bool EmbreeSolid::closest(const Ray& ray, Hit& hit) const noexcept {
 }
 
 bool EmbreeSolid::occluded(const Ray& ray) const noexcept {
-  RTCRay query;
-  fill(query, ray);
+  RTCRay query = embree::ray_of(ray);
   Query payload(ray);
   embree::trace_any(impl_->scene, query, payload);
   return query.tfar < 0.0f;
@@ -210,8 +191,7 @@ void EmbreeSolid::crossings(const Ray& ray, State start, std::vector<Crossing>& 
   out.clear();
   thread_local std::vector<std::uint32_t> visited;
   visited.clear();
-  RTCRay query;
-  fill(query, ray);
+  RTCRay query = embree::ray_of(ray);
   Query payload(ray);
   payload.visited = &visited;
   embree::trace_any(impl_->scene, query, payload);

@@ -20,24 +20,19 @@ bool SectionedSolid::clip(Ray& ray, bool& enters) const noexcept {
   return ray.t_min <= ray.t_max;
 }
 
-bool SectionedSolid::solid_at(const Ray& ray, float t) const noexcept {
-  return solid_.field().place_at(Vec3(ray.origin) + static_cast<double>(t) * Vec3(ray.direction)).state ==
-         field::State::kSolid;
-}
-
 bool SectionedSolid::closest(const Ray& ray, Hit& hit) const noexcept {
   Ray kept = ray;
   bool enters;
   if (!clip(kept, enters)) return false;
-  if (!enters || !solid_at(kept, kept.t_min)) return solid_.closest(kept, hit);
-  const Vec3 p = Vec3(kept.origin) + static_cast<double>(kept.t_min) * Vec3(kept.direction);
-  const field::Place place = solid_.field().place_at(p);
+  const Vec3 p = along(kept, kept.t_min);
+  double passage;
+  if (!enters || !solid_.solid_at(p, passage)) return solid_.closest(kept, hit);
   hit = {};
   hit.t = kept.t_min;
   hit.position = Vec3f(p);
   hit.normal = Vec3f(normal_);
   hit.part = Part::kCutFace;
-  hit.passage = place.owner.part == field::Part::kWhorl ? place.owner.theta : solid_.field().scene().law.theta_start;
+  hit.passage = passage;
   hit.safe_offset = static_cast<float>(1e-6 * solid_.field().scene().height_mm);
   return true;
 }
@@ -46,7 +41,8 @@ bool SectionedSolid::occluded(const Ray& ray) const noexcept {
   Ray kept = ray;
   bool enters;
   if (!clip(kept, enters)) return false;
-  return (enters && solid_at(kept, kept.t_min)) || solid_.occluded(kept);
+  double passage;
+  return (enters && solid_.solid_at(along(kept, kept.t_min), passage)) || solid_.occluded(kept);
 }
 
 }  // namespace whorl::trace

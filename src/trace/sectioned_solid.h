@@ -2,7 +2,7 @@
 // A shell cut open by a plane: the half on the reader's side is taken away, the cut face can be hit.
 #pragma once
 
-#include "trace/embree_solid.h"
+#include "trace/united_solid.h"
 
 namespace whorl::trace {
 
@@ -10,7 +10,7 @@ class SectionedSolid final : public Surfaces {
  public:
   /// Keeps the half in which `normal` . p <= 0: the plane goes through the pole. `normal` is a unit vector towards the reader. The solid
   /// must outlive this.
-  SectionedSolid(const EmbreeSolid& solid, const Vec3& normal) : solid_(solid), normal_(normal) {}
+  SectionedSolid(const UnitedSolid& solid, const Vec3& normal) : solid_(solid), normal_(normal) {}
 
   bool closest(const Ray& ray, Hit& hit) const noexcept override;
   bool occluded(const Ray& ray) const noexcept override;
@@ -19,9 +19,9 @@ class SectionedSolid final : public Surfaces {
  private:
   // Narrows the ray to the half that is kept; false where it misses it. `enters` where it comes in through the plane.
   bool clip(Ray& ray, bool& enters) const noexcept;
-  bool solid_at(const Ray& ray, float t) const noexcept;
+  static Vec3 along(const Ray& ray, float t) noexcept { return Vec3(ray.origin) + static_cast<double>(t) * Vec3(ray.direction); }
 
-  const EmbreeSolid& solid_;
+  const UnitedSolid& solid_;
   Vec3 normal_;
 };
 

@@ -27,6 +27,7 @@ struct Hit {
   Part part = Part::kNothing;
   bool parietal = false;    // outside of earlier shell or of the columella, met within a later lumen
   float safe_offset = 0.0f; // a new ray must start this far along the normal to be clear of this surface, mm
+  std::uint32_t series = 0; // of kOrnament: index of scene::Attached::series
   double passage = 0.0;     // growth angle, within half a turn, of the tube's passage whose surface this is
 };
 

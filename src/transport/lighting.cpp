@@ -12,7 +12,7 @@ Lighting light_page(const specimen::Light& light, std::span<const PlacedLamp> la
   const double azimuth = radians(light.azimuth_deg), elevation = radians(light.elevation_deg);
   const Vec3 on_page(std::cos(elevation) * std::cos(azimuth), std::cos(elevation) * std::sin(azimuth), std::sin(elevation));
   const double fill = light.fill;
-  const double key_irradiance = kPi / (1.0 + fill);
+  const double key_irradiance = std::exp2(light.stops) * kPi / (1.0 + fill);
 
   Lighting lighting;
   lighting.key.cone = shaders_cpu::key_cone(page_in_shell.to_world(on_page), light.softness_deg);

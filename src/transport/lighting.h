@@ -5,9 +5,11 @@
 #include "math/vec.h"
 #include "shaders_cpu/light/dome.h"
 #include "shaders_cpu/light/key_light.h"
+#include "shaders_cpu/light/portal.h"
 #include "shaders_cpu/light/sphere_lamp.h"
 #include "specimen/specimen.h"
 
+#include <optional>
 #include <span>
 #include <vector>
 
@@ -18,6 +20,7 @@ struct Lighting {
   shaders_cpu::KeyLight key;
   shaders_cpu::Dome dome;
   std::vector<shaders_cpu::SphereLamp> lamps;
+  std::optional<shaders_cpu::Portal> portal;  // the shell's mouth
 };
 
 /// A lamp of the scene file with the place that the growth law gives it.
@@ -29,7 +32,7 @@ struct PlacedLamp {
 };
 
 /// Light for one view. The key comes from `azimuth_deg` (on the page, anticlockwise from right) and `elevation_deg` (out
-/// of the page); key and fill irradiances on the card sum to pi and stand as 1 to `fill`.
+/// of the page); key and fill irradiances on the card sum to pi, less the stated stops, and stand as 1 to `fill`.
 Lighting light_page(const specimen::Light& light, std::span<const PlacedLamp> lamps, const Frame& page_in_shell);
 
 }  // namespace whorl::transport

@@ -46,7 +46,9 @@ shaders_cpu::CoatedDiffuse Materials::surface(const trace::Hit& hit) const noexc
   const bool inside = hit.part == trace::Part::kInterior;
   const Finish* finish = inside ? &inner : &outer;
   if (inside && inner.nacre && paint && paint->on_lip(hit)) finish = &rim;
-  const Vec3f body = paint ? paint->albedo(hit) : inside ? interior : hit.part == trace::Part::kOrnament ? ornament : exterior;
+  if (hit.part == trace::Part::kOrnament)
+    return {(hit.series < attached.size() ? attached[hit.series] : exterior) * finish->tint, finish->coat.get(), finish->nacre.get()};
+  const Vec3f body = paint ? paint->albedo(hit) : inside ? interior : exterior;
   shaders_cpu::CoatedDiffuse surface{body * finish->tint, finish->coat.get(), finish->nacre.get()};
   if (finish->nacre && paint && nacre_drift > 0.0f) surface.nacre_scale = 1.0f + nacre_drift * paint->drift(hit);
   return surface;
@@ -61,7 +63,7 @@ std::shared_ptr<const shaders_cpu::CoatAlbedo> make_coat(specimen::Mineral miner
 Materials make_materials(const field::Field& field, const specimen::Specimen& specimen) {
   const specimen::Look& look = specimen.look;
   Materials m;
-  m.exterior = m.ornament = linear(look.exterior.value);
+  m.exterior = linear(look.exterior.value);
   m.interior = linear(look.interior.value);
   m.section_display = linear(look.section.value);
   m.mould = linear(look.mould.value);
@@ -69,6 +71,8 @@ Materials make_materials(const field::Field& field, const specimen::Specimen& sp
   m.inner = look.interior_finish.value == look.exterior_finish.value ? m.outer : make_finish(look.interior_finish, specimen);
   m.rim = make_finish(specimen::Finish::kPlain, specimen);
   m.nacre_drift = static_cast<float>(specimen.nacre.drift.value);
+  for (const scene::AttachedSeries& series : field.scene().attached.series)
+    m.attached.push_back(series.colour ? linear(*series.colour) : m.exterior);
   m.paint = std::make_shared<const Paint>(field, look, specimen.colouring);
   return m;
 }

@@ -10,6 +10,7 @@
 #include "transport/whitening.h"
 
 #include <memory>
+#include <vector>
 
 namespace whorl::transport {
 
@@ -22,7 +23,8 @@ struct Finish {
 
 /// Colours are linear, with sRGB primaries.
 struct Materials {
-  Vec3f exterior{0.8f}, interior{0.8f}, ornament{0.8f};  // albedo of the matt body
+  Vec3f exterior{0.8f}, interior{0.8f};                  // albedo of the matt body
+  std::vector<Vec3f> attached;                           // of each series of attached elements; others have the outside's
   Vec3f mould{0.5f};                                     // albedo of the internal mould, which is matt
   Vec3f section_display{0.5f};                           // a cut face prints as exactly this, unlit
   Finish outer, inner;
@@ -45,7 +47,7 @@ inline constexpr double kPeriostracumIndex = 1.54;
 /// A coat of the mineral's index with the roughness of a gloss (0 matt .. 1 polished).
 std::shared_ptr<const shaders_cpu::CoatAlbedo> make_coat(specimen::Mineral mineral, double gloss);
 
-/// Materials as a scene file states them; ornament takes the colour of the outside. The field must outlive them.
+/// Materials as a scene file states them. The field must outlive them.
 Materials make_materials(const field::Field& field, const specimen::Specimen& specimen);
 /// The same shell coated for relief; cut faces keep their lightness.
 Materials whitened(Materials materials, const field::Field& field);

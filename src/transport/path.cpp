@@ -6,10 +6,12 @@
 #include "math/hash.h"
 #include "shaders_cpu/tone/curve.h"
 #include "transport/encounter.h"
+#include "transport/lamp_choice.h"
 
 #include <algorithm>
 #include <bit>
 #include <cmath>
+#include <optional>
 
 namespace whorl::transport {
 namespace {
@@ -24,8 +26,8 @@ constexpr float kRouletteBelow = 0.2f;
 /// Smallest cosine between a shading normal and the direction back along the ray.
 constexpr float kLeastFacing = 1e-3f;
 
-/// Block layout of one bounce: scattering, then the lights in pairs: key and lamp 0, lamps 1 and 2, ..
-constexpr std::uint32_t kScatterBlock = 0, kLightBlock = 1;
+/// Block layout of one bounce: scattering; key and a lamp; the portal.
+constexpr std::uint32_t kScatterBlock = 0, kLightBlock = 1, kPortalBlock = 2, kBlocks = 3;
 
 /// Weight of the technique with density `own` where another could have drawn the same with density `other`.
 float power_weight(float own, float other) noexcept {
@@ -54,19 +56,29 @@ struct PathTracer::Vertex {
   Vec3f outward;  // true normal
   Basis3f basis;  // round the shading normal
   shaders_cpu::SurfaceView surface;
+  std::optional<shaders_cpu::PortalView> seen_portal;  // from within the lumen
 
-  Vertex(const trace::Hit& hit, const Vec3f& to_viewer, const Materials& materials) noexcept
+  Vertex(const trace::Hit& hit, const Vec3f& to_viewer, const Materials& materials, const shaders_cpu::Portal* portal) noexcept
       : start(hit.position + hit.normal * hit.safe_offset),
         outward(hit.normal),
         basis(facing(hit.normal, to_viewer)),
-        surface(materials.wall ? shaders_cpu::SurfaceView::face(materials.surface(hit), basis.to_local(to_viewer))
-                               : shaders_cpu::SurfaceView(materials.surface(hit), basis.to_local(to_viewer))) {}
+        surface(materials.wall && hit.part != trace::Part::kOrnament ? shaders_cpu::SurfaceView::face(materials.surface(hit), basis.to_local(to_viewer))
+                               : shaders_cpu::SurfaceView(materials.surface(hit), basis.to_local(to_viewer))) {
+    look_out(hit, portal);
+  }
   /// Where light comes out of a translucent wall.
-  Vertex(const trace::Hit& hit, const Materials& materials) noexcept
+  Vertex(const trace::Hit& hit, const Materials& materials, const shaders_cpu::Portal* portal) noexcept
       : start(hit.position + hit.normal * hit.safe_offset),
         outward(hit.normal),
         basis(hit.normal),
-        surface(shaders_cpu::SurfaceView::leaving(materials.surface(hit))) {}
+        surface(shaders_cpu::SurfaceView::leaving(materials.surface(hit))) {
+    look_out(hit, portal);
+  }
+  void look_out(const trace::Hit& hit, const shaders_cpu::Portal* portal) noexcept {
+    if (!portal || hit.part != trace::Part::kInterior || !portal->behind(start)) return;
+    seen_portal.emplace(*portal, start);
+    if (!seen_portal->usable()) seen_portal.reset();
+  }
 
   /// Light can only come from above both normals: the shell is opaque.
   bool open_to(const Vec3f& direction, const Vec3f& wi) const noexcept { return wi.z > 0.0f && direction.dot(outward) > 0.0f; }
@@ -83,7 +95,7 @@ PathTracer::PathTracer(const trace::Surfaces& shell, const Lighting& lighting, c
       lighting_(lighting),
       materials_(materials),
       section_radiance_(Vec3f(shaders_cpu::inverse_tone(Vec3(materials.section_display)))),
-      blocks_per_vertex_(kLightBlock + static_cast<std::uint32_t>((lighting.lamps.size() + 2) / 2)) {}
+      portal_(lighting.portal && max_component(lighting.dome.radiance) > 0.0f ? &*lighting.portal : nullptr) {}
 
 Vec3f PathTracer::direct(const Vertex& v, const SobolStream& stream, std::uint32_t block,
                          RayCounts& counts) const noexcept {
@@ -106,21 +118,28 @@ Vec3f PathTracer::direct(const Vertex& v, const SobolStream& stream, std::uint32
     const Vec3f direction = lighting_.key.cone.sample(u[0], u[1]);
     gather(direction, v.basis.to_local(direction), lighting_.key.cone.pdf(), lighting_.key.radiance, kFar, nullptr);
   }
-  for (std::size_t k = 0; k < lighting_.lamps.size(); ++k) {
-    const std::size_t place = k + 1, half = 2 * (place % 2);
-    if (half == 0) u = stream.block(block + kLightBlock + static_cast<std::uint32_t>(place / 2));
-    const SphereLamp& lamp = lighting_.lamps[k];
-    const shaders_cpu::LampView view(lamp, v.start);
-    const Vec3f direction = view.cone.sample(u[half], u[half + 1]);
-    float distance = shaders_cpu::lamp_distance(lamp, v.start, direction);
-    if (!(distance < kFar)) distance = (lamp.centre - v.start).length();  // rounding at the lamp's rim
-    gather(direction, v.basis.to_local(direction), view.cone.pdf(), lamp.radiance, distance, &lamp);
+  if (!lighting_.lamps.empty()) {
+    const LampChoice choice(lighting_.lamps, v.start);
+    const std::size_t k = choice.choose(u[2]);
+    if (k < lighting_.lamps.size()) {
+      const SphereLamp& lamp = lighting_.lamps[k];
+      const Vec3f direction = shaders_cpu::LampView(lamp, v.start).cone.sample(u[2], u[3]);
+      float distance = shaders_cpu::lamp_distance(lamp, v.start, direction);
+      if (!(distance < kFar)) distance = (lamp.centre - v.start).length();  // rounding at the lamp's rim
+      gather(direction, v.basis.to_local(direction), choice.pdf(lamp), lamp.radiance, distance, &lamp);
+    }
+  }
+  if (v.seen_portal) {
+    u = stream.block(block + kPortalBlock);
+    const Vec3f direction = v.seen_portal->sample(u[0], u[1]);
+    gather(direction, v.basis.to_local(direction), v.seen_portal->pdf(), lighting_.dome.radiance, kFar, nullptr);
   }
   return total;
 }
 
-Vec3f PathTracer::sky(const Vec3f& direction, float scatter_pdf) const noexcept {
+Vec3f PathTracer::sky(const Vertex& v, const Vec3f& direction, float scatter_pdf) const noexcept {
   Vec3f total = lighting_.dome.radiance;
+  if (v.seen_portal && v.seen_portal->contains(direction)) total *= power_weight(scatter_pdf, v.seen_portal->pdf());
   if (lighting_.key.cone.contains(direction))
     total += lighting_.key.radiance * power_weight(scatter_pdf, lighting_.key.cone.pdf());
   return total;
@@ -139,20 +158,20 @@ Glimpse PathTracer::look(const trace::Ray& camera_ray, const SobolStream& stream
   Vec3f throughput(1.0f);
   std::uint32_t block = first_block;
   for (int bounce = 1; bounce <= kMaxBounces; ++bounce) {
-    Vertex v(met.hit, -ray.direction, materials_);
+    Vertex v(met.hit, -ray.direction, materials_, portal_);
     seen.radiance += throughput * direct(v, stream, block, counts);
 
     auto u = stream.block(block + kScatterBlock);
-    block += blocks_per_vertex_;
+    block += kBlocks;
     if (v.surface.enters(u[0])) {
       const auto way = stream.block(block++);
       const auto out = materials_.wall->follow(met.hit, u[1], u[2], key_of(way));
       if (!out) break;
       throughput *= v.surface.entering() * out->weight;
-      v = Vertex(out->hit, materials_);
+      v = Vertex(out->hit, materials_, portal_);
       seen.radiance += throughput * direct(v, stream, block, counts);
       u = stream.block(block + kScatterBlock);
-      block += blocks_per_vertex_;
+      block += kBlocks;
     }
     const shaders_cpu::Scatter next = v.surface.scatter(u[0], u[1], u[2]);
     const Vec3f direction = v.basis.to_world(next.direction);
@@ -167,11 +186,11 @@ Glimpse PathTracer::look(const trace::Ray& camera_ray, const SobolStream& stream
     met = first_met(shell_, lighting_.lamps, ray);
     ++counts.scattered;
     if (met.nothing()) {
-      seen.radiance += throughput * sky(direction, next.reflection.pdf);
+      seen.radiance += throughput * sky(v, direction, next.reflection.pdf);
       break;
     }
     if (met.lamp) {
-      const float lamp_pdf = shaders_cpu::LampView(*met.lamp, ray.origin).cone.pdf();
+      const float lamp_pdf = LampChoice(lighting_.lamps, ray.origin).pdf(*met.lamp);
       seen.radiance += throughput * met.lamp->radiance * power_weight(next.reflection.pdf, lamp_pdf);
       break;
     }

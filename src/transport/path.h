@@ -27,7 +27,7 @@ struct Glimpse {
 /// Unidirectional path tracing with next-event estimation to key and lamps, joined with BSDF sampling by multiple
 /// importance sampling (power heuristic, exponent 2; Veach & Guibas 1995, SIGGRAPH). The dome is even, so scattered rays
 /// sample it perfectly as they are: shadow rays to it as well raised the noise by 2 to 9 % and the time by 15 % (measured
-/// on an open sphere, with and without a lamp in it). Unbiased. Keeps references: shell, lighting and materials must
+/// on an open sphere, with and without a lamp in it). Within the lumen it is seen through the mouth alone, which is sampled as a portal. Unbiased. Keeps references: shell, lighting and materials must
 /// outlive it.
 class PathTracer {
  public:
@@ -40,13 +40,13 @@ class PathTracer {
  private:
   struct Vertex;
   Vec3f direct(const Vertex& v, const SobolStream& stream, std::uint32_t block, RayCounts& counts) const noexcept;
-  Vec3f sky(const Vec3f& direction, float scatter_pdf) const noexcept;
+  Vec3f sky(const Vertex& v, const Vec3f& direction, float scatter_pdf) const noexcept;
 
   const trace::Surfaces& shell_;
   const Lighting& lighting_;
   const Materials& materials_;
   Vec3f section_radiance_;
-  std::uint32_t blocks_per_vertex_;
+  const shaders_cpu::Portal* portal_;  // none where nothing comes through it
 };
 
 }  // namespace whorl::transport

@@ -19,10 +19,12 @@ struct Tally {
   double squared_error = 0.0;
 };
 
+trace::UnitedSolid all_of(const RadiographJob& job) { return {*job.solid, job.attached}; }
+
 PixelFacts first_surface(const RadiographJob& job, int x, int y) {
   PixelFacts facts;
   trace::Hit hit;
-  if (!job.solid->closest(job.camera.ray(x + 0.5, y + 0.5), hit)) return facts;
+  if (!all_of(job).closest(job.camera.ray(x + 0.5, y + 0.5), hit)) return facts;
   facts.depth_mm = hit.t;
   facts.normal = Vec3f(job.camera.page.to_frame(Vec3(hit.normal)));
   const trace::GrowthPlace grown = job.solid->growth_place(hit);
@@ -32,7 +34,7 @@ PixelFacts first_surface(const RadiographJob& job, int x, int y) {
   return facts;
 }
 
-void pixel(const RadiographJob& job, int samples, int x, int y, std::vector<trace::Crossing>& scratch, Film& film,
+void pixel(const RadiographJob& job, int samples, int x, int y, RayScratch& scratch, Film& film,
            Tally& tally) {
   SobolStream stream({static_cast<std::uint32_t>(x), static_cast<std::uint32_t>(y), job.panel, 0, job.seed});
   double sum = 0.0, squares = 0.0;
@@ -41,7 +43,7 @@ void pixel(const RadiographJob& job, int samples, int x, int y, std::vector<trac
     stream.set_point(static_cast<std::uint32_t>(i));
     const auto u = stream.block(0);
     const Vec2 offset = filter_offset(u[0], u[1]);
-    const double length = wall_length(*job.solid, job.camera.ray(x + 0.5 + offset.x, y + 0.5 + offset.y), scratch);
+    const double length = wall_length(all_of(job), job.camera.ray(x + 0.5 + offset.x, y + 0.5 + offset.y), scratch);
     if (!(length > 0.0)) continue;
     const double passed = std::exp(-job.attenuation_per_mm * length);
     const double shown = job.bright_shell ? 1.0 - passed : passed;
@@ -63,11 +65,21 @@ void pixel(const RadiographJob& job, int samples, int x, int y, std::vector<trac
 
 }  // namespace
 
-double wall_length(const trace::EmbreeSolid& solid, const trace::Ray& ray, std::vector<trace::Crossing>& scratch) {
-  solid.crossings(ray, field::State::kOutside, scratch);
+double wall_length(const trace::UnitedSolid& solid, const trace::Ray& ray, RayScratch& scratch) {
+  std::vector<trace::Crossing>& met = scratch.crossings;
+  solid.shell().crossings(ray, field::State::kOutside, met);
   double length = 0.0;
-  for (std::size_t i = 0; i + 1 < scratch.size(); ++i)
-    if (scratch[i].after == field::State::kSolid) length += static_cast<double>(scratch[i + 1].t - scratch[i].t);
+  for (std::size_t i = 0; i + 1 < met.size(); ++i)
+    if (met[i].after == field::State::kSolid) length += static_cast<double>(met[i + 1].t - met[i].t);
+  if (!solid.attached()) return length;
+  // Where an element reaches into the wall, matter counts once.
+  solid.attached()->stretches(ray, scratch.within);
+  for (const trace::AttachedSolids::Within& w : scratch.within) {
+    length += w.out - w.in;
+    for (std::size_t i = 0; i + 1 < met.size(); ++i)
+      if (met[i].after == field::State::kSolid)
+        length -= std::max(0.0, std::min(w.out, static_cast<double>(met[i + 1].t)) - std::max(w.in, static_cast<double>(met[i].t)));
+  }
   return length;
 }
 
@@ -78,7 +90,7 @@ Film radiograph(const RadiographJob& job, const Progress& progress) {
   std::vector<Tally> tallies(static_cast<std::size_t>(film.height));
   std::atomic<int> finished{0};
   parallel_for(tallies.size(), 1, [&](std::size_t row) {
-    std::vector<trace::Crossing> scratch;
+    RayScratch scratch;
     const int y = static_cast<int>(row);
     for (int x = 0; x < film.width; ++x)
       if (rect.contains(x, y)) pixel(job, samples, x, y, scratch, film, tallies[row]);

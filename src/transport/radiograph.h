@@ -2,7 +2,7 @@
 // The look of a radiograph: what parallel rays leave behind the shell.
 #pragma once
 
-#include "trace/embree_solid.h"
+#include "trace/united_solid.h"
 #include "transport/camera.h"
 #include "transport/film.h"
 #include "transport/progress.h"
@@ -12,11 +12,16 @@
 
 namespace whorl::transport {
 
-/// Length of a ray within the wall, mm, over all crossings. The ray starts outside the shell.
-double wall_length(const trace::EmbreeSolid& solid, const trace::Ray& ray, std::vector<trace::Crossing>& scratch);
+/// Length of a ray within the wall and all that stands on it, mm, over all crossings. The ray starts outside the shell.
+struct RayScratch {
+  std::vector<trace::Crossing> crossings;
+  std::vector<trace::AttachedSolids::Within> within;
+};
+double wall_length(const trace::UnitedSolid& solid, const trace::Ray& ray, RayScratch& scratch);
 
 struct RadiographJob {
-  const trace::EmbreeSolid* solid = nullptr;
+  const trace::EmbreeSolid* solid = nullptr;         // required
+  const trace::AttachedSolids* attached = nullptr;  // what stands on it, if anything
   Box3 bounds_mm;  // holds all of the shell; empty: unknown
   Camera camera;
   double attenuation_per_mm = 0.0;

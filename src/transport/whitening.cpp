@@ -84,8 +84,10 @@ double Whitening::relief(const Vec3& p, bool from_inside) const noexcept {
 
 Vec3f Whitening::albedo(const trace::Hit& hit) const noexcept {
   const Vec3 p(hit.position);
-  // What is a crest to the mould is a hollow to the shell's inside.
-  const double stands_out = hit.part == trace::Part::kMould ? -relief(p, true) : relief(p, hit.part == trace::Part::kInterior);
+  // What is a crest to the mould is a hollow to the shell's inside. What stands on the shell is coated as a plane is.
+  const double stands_out = hit.part == trace::Part::kOrnament ? 0.0
+                            : hit.part == trace::Part::kMould  ? -relief(p, true)
+                                                               : relief(p, hit.part == trace::Part::kInterior);
   const double thickness = std::clamp(kPlain * std::exp(kGain * stands_out), kThinnest, kThickest);
   const auto bare = static_cast<float>(std::exp(-thickness));
   return Vec3f(kCoat + (kGround - kCoat) * bare);

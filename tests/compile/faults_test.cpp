@@ -118,3 +118,36 @@ TEST_CASE("Scenes that only geometry finds wrong are refused with the message th
   }
   CHECK(replayed >= 8);
 }
+
+namespace {
+
+// What compiling a scene says whose other tables are sound.
+std::string complaint_of_scene(const std::string& tables) {
+  return complaint(specimen::parse_scene("format = 1\n[specimen]\nname = \"Fracta mala\"\ncoiling = \"dextral\"\n[growth]\nwhorls = 4.0\n"
+                                         "W = 1.6\nD = 0.05\nT = 2.0\n[size]\naperture_height = 10.0\n[wall]\nthickness = 0.4\n" + tables,
+                                         "scene"));
+}
+
+}  // namespace
+
+TEST_CASE("Elements that the whorl cannot carry are refused, with what to do", "[compile][attached]") {
+  CHECK(complaint_of_scene("[[spine]]\nper_whorl = 8\nlength = 3\nbreadth = 0.6\nat = 60\n").empty());
+  const std::string broad = complaint_of_scene("[[spine]]\nper_whorl = 8\nlength = 9\nbreadth = 6\nat = 60\n");
+  CHECK(says(broad, "scene:17:11"));
+  CHECK(says(broad, "[[spine]] breadth = 6 mm: the whorl curves away under so broad a foot"));
+  CHECK(says(broad, "make the foot narrower"));
+  const std::string many = complaint_of_scene(
+      "[[attached]]\nshape = \"bead\"\nper_whorl = 20000\nrows = 1000\nwidth = 360\nheight = 0.01\nbreadth = 0.01\nat = 0\ncolour = \"#804020\"\n");
+  CHECK(says(many, "[[attached]] per_whorl = 20000 in 1000 rows: 6.5e+07 elements in all; at most 4000000 are allowed"));
+}
+
+TEST_CASE("A lamp or a ring in the wall is refused with the room that there is", "[compile]") {
+  CHECK(complaint_of_scene("[[lamp]]\nradius = 0.2\noffset = 2\nat = 0\n").empty());
+  CHECK(complaint_of_scene("[[lamp]]\nradius = 0.2\nshape = \"ring\"\nring = 2\n").empty());
+  const std::string lamp = complaint_of_scene("[[lamp]]\nradius = 0.2\noffset = 30\nat = 0\n");
+  CHECK(says(lamp, "[[lamp]]: the lamp lies in the wall 0.12 whorls behind the lip"));
+  CHECK(says(lamp, "give a smaller offset"));
+  const std::string ring = complaint_of_scene("[[lamp]]\nradius = 0.2\nshape = \"ring\"\nring = 40\n");
+  CHECK(says(ring, "[[lamp]]: the ring lies in the wall 0.12 whorls behind the lip"));
+  CHECK(says(complaint_of_scene("[[lamp]]\nradius = 3.9\noffset = 2\nat = 180\n"), "room for a radius of "));
+}

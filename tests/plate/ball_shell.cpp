@@ -80,7 +80,7 @@ specimen::Specimen demo_specimen(double resolution_ppi) {
   s.size = {stated(specimen::SizeKind::kShellHeight), stated(24.0)};
   s.wall = {stated(0.45), assumed(specimen::WallGrowth::kProportional), assumed(0.18)};
   s.lip = {assumed(12.0), assumed(0.8)};
-  s.light = {assumed(135.0), assumed(45.0), assumed(12.0), assumed(0.35)};
+  s.light = {assumed(135.0), assumed(45.0), assumed(12.0), assumed(0.35), assumed(0.0)};
   s.plate.width_mm = stated(180.0);
   s.plate.resolution_ppi = stated(resolution_ppi);
   s.plate.background = assumed(specimen::Background::kWhite);

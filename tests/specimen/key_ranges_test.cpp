@@ -17,6 +17,7 @@ namespace {
 std::string sound_value(const KeyRow& row) {
   if (row.type == KeyType::kColour) return "\"#112233\"";
   if (row.type == KeyType::kView) return "\"apertural\"";
+  if (row.key == "shape") return "\"bead\"";
   return row.key == "reach" ? "0.1" : "1";
 }
 
@@ -27,10 +28,12 @@ SceneText scene_with(const KeyRow& row, const std::string& value) {
   const std::string table(row.table), key(row.key);
   if (table == "size") scene.drop("size", "shell_height").set("wall", "thickness", "0.001");
   if (key == "unobserved") scene.set("preserved", "parts", "\"whole\"");
+  if (key == "bend") scene.set("spine", "length", "1000");  // bends as sharply as may be
+  if (key == "open") scene.set("spine", "hollow", "0.5");
   if (key == "callus_breadth") scene.set("look", "callus", "\"#000000\"");
   if (table != "panel.view" && is_list(table))
     for (const KeyRow& other : key_table())
-      if (other.table == table && other.fallback == kRequired) scene.set(table, std::string(other.key), sound_value(other));
+      if (other.table == table && other.fallback == kRequired && !(key == "bend" && other.key == "length")) scene.set(table, std::string(other.key), sound_value(other));
   if (table == "panel.view") {
     const std::string other = key == "azimuth" ? "elevation" : "azimuth";
     return scene.set("panel", "view", fmt::format("{{ {} = {}, {} = 0 }}", key, value, other));

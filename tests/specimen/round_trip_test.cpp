@@ -127,12 +127,35 @@ TEST_CASE("Every key of a scene arrives with its value", "[specimen]") {
   CHECK(s.light.elevation_deg == 30.0);
   CHECK(s.light.softness_deg == 5.0);
   CHECK(s.light.fill == 0.5);
+  CHECK(s.light.stops == -2.5);
+
+  REQUIRE((s.attachments.stripes.size() == 1 && s.attachments.lamellae.size() == 1));
+  REQUIRE((s.attachments.spines.size() == 1 && s.attachments.attached.size() == 1));
+  const Stripe& stripe = s.attachments.stripes[0];
+  CHECK((stripe.at_deg == 20.0 && stripe.width_deg == 7.0 && stripe.height_mm == 0.4 && stripe.onset == 1.75 && stripe.end == 6.0));
+  CHECK(same(stripe.colour, 0x21, 10, 11));
+  const auto recurs = [](const Recurrence& r, int seed) {
+    return r.per_whorl == 13.0 && r.behind_lip == 0.03 && r.irregularity == 0.3 && r.seed == seed && r.onset == 1.25 && r.end == 6.25;
+  };
+  const Lamella& lamella = s.attachments.lamellae[0];
+  CHECK((recurs(lamella.series, 10) && lamella.height_mm == 0.0625 && lamella.thickness_mm == 0.2 && lamella.lean_deg == 15.0));
+  CHECK((lamella.at_deg == -25.0 && lamella.width_deg == 75.0 && lamella.colour && same(*lamella.colour, 0x22, 10, 11)));
+  const Spine& spine = s.attachments.spines[0];
+  CHECK((recurs(spine.series, 11) && spine.length_mm == 4.0 && spine.breadth_mm == 0.9 && spine.at_deg == -25.0));
+  CHECK((spine.tip == 0.125 && spine.bend_deg == 35.0 && spine.lean_deg == -12.0 && spine.hollow == 0.6 && spine.open_deg == 70.0));
+  CHECK((spine.colour && same(*spine.colour, 0x23, 10, 11)));
+  const Attached& attached = s.attachments.attached[0];
+  CHECK((attached.shape == AttachedShape::kTube && recurs(attached.series, 12) && attached.rows == 3 && attached.stagger == 0.5));
+  CHECK((attached.height_mm == 0.0625 && attached.breadth_mm == 0.6 && attached.width_deg == 75.0 && attached.lean_deg == 9.0));
+  CHECK(same(attached.colour, 0x24, 10, 11));
 
   REQUIRE(s.lamps.size() == 1);
   CHECK(s.lamps[0].behind_lip == 0.25);
   CHECK(s.lamps[0].radius_mm == 0.5);
   CHECK(s.lamps[0].strength == 70.0);
   CHECK(s.lamps[0].temperature_k == 2700.0);
+  CHECK((s.lamps[0].offset_mm == 0.75 && s.lamps[0].at_deg == 200.0 && s.lamps[0].shape == LampShape::kRing));
+  CHECK((s.lamps[0].ring_mm == 1.5 && s.lamps[0].bulbs == 9));
 
   CHECK(s.plate.width_mm == 85.0);
   CHECK(s.plate.resolution_ppi == 300.0);
@@ -237,7 +260,10 @@ TEST_CASE("A scene of only what is required has the defaults of the format, none
   CHECK(s.light.elevation_deg == 45.0);
   CHECK(s.light.softness_deg == 12.0);
   CHECK(s.light.fill == 0.35);
+  CHECK(s.light.stops == 0.0);
   CHECK(s.lamps.empty());
+  CHECK((s.attachments.stripes.empty() && s.attachments.lamellae.empty()));
+  CHECK((s.attachments.spines.empty() && s.attachments.attached.empty()));
   CHECK(s.radiograph.energy_kev == 20.0);
   CHECK((s.stereo.angle_deg == 6.0 && s.stereo.spacing_mm == 60.0));
   CHECK(s.plate.width_mm == 180.0);

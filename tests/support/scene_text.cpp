@@ -79,11 +79,28 @@ SceneText SceneText::with_every_key() {
   scene.set("rib", "breadth", "0.7");
   series("nodule", "9");
   scene.set("nodule", "length", "0.8");
+  scene.set("stripe", "at", "20").set("stripe", "width", "7").set("stripe", "height", "0.4").set("stripe", "onset", "1.75");
+  scene.set("stripe", "end", "6").set("stripe", "colour", "\"#210a0b\"");
+  series("lamella", "10");
+  scene.set("lamella", "thickness", "0.2").set("lamella", "lean", "15").set("lamella", "colour", "\"#220a0b\"");
+  series("spine", "11");
+  scene.drop("spine", "height").drop("spine", "width").set("spine", "length", "4").set("spine", "breadth", "0.9");
+  scene.set("spine", "tip", "0.125").set("spine", "bend", "35").set("spine", "lean", "-12").set("spine", "hollow", "0.6");
+  scene.set("spine", "open", "70").set("spine", "colour", "\"#230a0b\"");
+  series("attached", "12");
+  scene.set("attached", "shape", "\"tube\"").set("attached", "breadth", "0.6").set("attached", "rows", "3");
+  scene.set("attached", "stagger", "0.5").set("attached", "lean", "9").set("attached", "colour", "\"#240a0b\"");
   scene.set("light", "azimuth", "90")
+      .set("light", "stops", "-2.5")
       .set("light", "elevation", "30")
       .set("light", "softness", "5")
       .set("light", "fill", "0.5");
   scene.set("lamp", "behind_lip", "0.25")
+      .set("lamp", "offset", "0.75")
+      .set("lamp", "at", "200")
+      .set("lamp", "shape", "\"ring\"")
+      .set("lamp", "ring", "1.5")
+      .set("lamp", "bulbs", "9")
       .set("lamp", "radius", "0.5")
       .set("lamp", "strength", "70")
       .set("lamp", "temperature", "2700");

@@ -36,7 +36,7 @@ inline specimen::Light page_light(double azimuth_deg, double elevation_deg, doub
 /// Everything of one albedo, matt unless a gloss is given.
 inline transport::Materials of_albedo(float albedo, double gloss = -1.0) {
   transport::Materials materials;
-  materials.exterior = materials.interior = materials.ornament = Vec3f(albedo);
+  materials.exterior = materials.interior = Vec3f(albedo);
   if (gloss >= 0.0)
     materials.outer.coat = materials.inner.coat = transport::make_coat(specimen::Mineral::kAragonite, gloss);
   return materials;
