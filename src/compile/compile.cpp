@@ -102,8 +102,9 @@ scene::Scene compile_scene(const specimen::Specimen& specimen) {
   if (!faults.any()) build_axis(scene, specimen, reach, faults);
   if (!faults.any()) build_lamps(scene, specimen, faults);
   if (!faults.any()) build_edge_patterns(scene, specimen, reach, faults);
+  faults.raise(specimen.source);
   const growth::Exterior shell = exterior_of(scene);
-  if (!faults.any()) build_attached(scene, specimen, shell, faults);
+  build_attached(scene, specimen, shell, faults);
   faults.raise(specimen.source);
 
   scene.mouth = mouth_of(scene);

@@ -143,7 +143,7 @@ TEST_CASE("Elements that the whorl cannot carry are refused, with what to do", "
 
 TEST_CASE("A lamp or a ring in the wall is refused with the room that there is", "[compile]") {
   CHECK(complaint_of_scene("[[lamp]]\nradius = 0.2\noffset = 2\nat = 0\n").empty());
-  CHECK(complaint_of_scene("[[lamp]]\nradius = 0.2\nshape = \"ring\"\nring = 2\n").empty());
+  CHECK(complaint_of_scene("[[lamp]]\nradius = 0.2\nshape = \"ring\"\nring = 1\n").empty());
   const std::string lamp = complaint_of_scene("[[lamp]]\nradius = 0.2\noffset = 30\nat = 0\n");
   CHECK(says(lamp, "[[lamp]]: the lamp lies in the wall 0.12 whorls behind the lip"));
   CHECK(says(lamp, "give a smaller offset"));

@@ -92,7 +92,7 @@ TEST_CASE("A lamp inside shows through a thin wall more than through a thick one
     const double place = law.theta_lip - 3.0;  // on the side that is seen
     lighting.lamps.push_back({Vec3f(test::in_tube(law, place, 0.0, 0.0)), 0.5f, Vec3f(50.0f)});
     const transport::Materials materials = test::of_albedo(0.9f, 0.3);
-    if (!opaque) return test::mean_of_covered(pictured.film(materials, medium, lighting, 24, 64)).value();
+    if (!opaque) return test::mean_of_covered(pictured.film(materials, medium, lighting, 24, 256)).value();
     transport::RenderJob job;
     job.shell = &pictured.solid;
     job.camera = from_behind(pictured.shell, 24);
@@ -102,7 +102,9 @@ TEST_CASE("A lamp inside shows through a thin wall more than through a thick one
     return test::mean_of_covered(render(job, transport::Silent())).value();
   };
   const double thin = glow(0.2, false), thick = glow(0.9, false);
-  CHECK(thin > 1.5 * thick);
+  // The ratio of all light that comes out is 1.47 (both with 1024 samples), 1 were walls alike: what a thin wall lets through at once
+  // a thick one, in a closed cavity, lets through in part later. At 256 samples the ratio errs by about 0.05.
+  CHECK(thin > 1.3 * thick);
   CHECK(thick > 0.0);
   CHECK(glow(0.2, true) < 0.02 * thin);
 }
