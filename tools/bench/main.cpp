@@ -1,7 +1,9 @@
 // SPDX-License-Identifier: Apache-2.0
 // The benchmark's program; tools/bench/run builds and calls it.
+#include "attached_bench.h"
 #include "cells_contender.h"
 #include "fit_time.h"
+#include "portal_bench.h"
 #include "race.h"
 #include "report.h"
 #include "triangles_contender.h"
@@ -91,20 +93,26 @@ nlohmann::ordered_json run_shape(const ShapeName& name, const Settings& settings
 
 int usage() {
   std::fputs(
-      "usage: tools/bench/run [--shape tall|globose|planispiral] [--json] [--no-mesh] [--no-exact] [--pixels N] [--rounds N]\n"
-      "                       [--triangles N] [--fit-only]\n",
+      "usage: tools/bench/run [race] [--shape tall|globose|planispiral] [--json] [--no-mesh] [--no-exact] [--pixels N] [--rounds N]\n"
+      "                             [--triangles N]\n"
+      "       tools/bench/run fit [--json] [--rounds N]            one specimen with ten measurements\n"
+      "       tools/bench/run attached [--pixels N] [--rounds N]   a hundred thousand and a million elements against the bare shell\n"
+      "       tools/bench/run portal                               the mouth as a portal: error at equal time\n",
       stderr);
   return 2;
 }
 
 int run(int argc, char** argv) {
   Settings settings;
-  for (int i = 1; i < argc; ++i) {
+  std::string what = "race";
+  int first = 1;
+  if (argc > 1 && argv[1][0] != '-') what = argv[first++];
+  if (what != "race" && what != "fit" && what != "attached" && what != "portal") return usage();
+  for (int i = first; i < argc; ++i) {
     const std::string word = argv[i];
     const char* value = i + 1 < argc ? argv[i + 1] : nullptr;
     if (word == "--json") settings.json = true;
     else if (word == "--no-mesh") settings.mesh = false;
-    else if (word == "--fit-only") settings.rays = false;
     else if (word == "--no-exact") settings.exact = false;
     else if (value == nullptr) return usage();
     else if (word == "--shape") settings.shape = value, ++i;
@@ -114,12 +122,12 @@ int run(int argc, char** argv) {
     else return usage();
   }
   if (settings.pixels < 10'000 || settings.rounds < 1 || !(settings.most_triangles >= 1e5)) return usage();
+  if (what == "attached") return run_attached(settings.pixels, settings.rounds), 0;
+  if (what == "portal") return run_portal(), 0;
   nlohmann::ordered_json all = {{"threads", thread_count()}, {"shapes", nlohmann::ordered_json::array()}};
-  say("fit");
-  all["fit"] = time_fit(settings.rounds);
-  if (!settings.json) std::printf("%s\n", fit_text(all["fit"]).c_str());
-  if (!settings.rays) {
-    if (settings.json) std::printf("%s\n", all.dump(2).c_str());
+  if (what == "fit") {
+    all["fit"] = time_fit(settings.rounds);
+    std::printf("%s\n", settings.json ? all.dump(2).c_str() : fit_text(all["fit"]).c_str());
     return 0;
   }
   if (!settings.json)
