@@ -144,7 +144,7 @@ transport::Film Studio::exposed(const View& view, specimen::PanelLook look, spec
   job.shell = half ? static_cast<const trace::Surfaces*>(&*half) : &all;
   std::optional<trace::MouldSolid> mould;
   if (shows == specimen::Shows::kMould) mould.emplace(*solid_);
-  if (shows == specimen::Shows::kBoth) mould.emplace(*solid_, beside_axis(view.fixed_page.z));
+  if (shows == specimen::Shows::kBoth) mould.emplace(all, beside_axis(view.fixed_page.z));
   if (mould) job.shell = &*mould;
   job.bounds_mm = bounds_;
   job.camera = camera;

@@ -12,8 +12,9 @@ class MouldSolid final : public Surfaces {
  public:
   /// The mould alone. The shell must outlive it.
   explicit MouldSolid(const EmbreeSolid& shell) : shell_(shell) {}
-  /// The mould, and behind the plane through the pole the shell: what lies on the side of `open_towards` (unit) is taken away.
-  MouldSolid(const EmbreeSolid& shell, const Vec3& open_towards) : shell_(shell) { rest_.emplace(shell, open_towards); }
+  /// The mould, and behind the plane through the pole the shell with all that stands on it: what lies on the side of `open_towards`
+  /// (unit) is taken away.
+  MouldSolid(const UnitedSolid& shell, const Vec3& open_towards) : shell_(shell.shell()) { rest_.emplace(shell, open_towards); }
 
   bool closest(const Ray& ray, Hit& hit) const noexcept override;
   bool occluded(const Ray& ray) const noexcept override;

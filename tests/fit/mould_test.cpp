@@ -172,7 +172,8 @@ TEST_CASE("the mould within the shell cut open shows shell behind the cut and mo
   const test::Shell shell(walled(1.6));
   const trace::EmbreeSolid solid(shell.field, {2e-5 * shell.height(), false});
   const Vec3 to_reader(1.0, 0.0, 0.0);
-  const trace::MouldSolid both(solid, to_reader), alone(solid);
+  const trace::UnitedSolid all(solid, nullptr);
+  const trace::MouldSolid both(all, to_reader), alone(solid);
   int mould = 0, cut = 0, wrong = 0;
   const Box3& box = shell.scene.bounds;
   for (int i = 0; i < 80; ++i)

@@ -25,8 +25,8 @@ struct Crowd {
   const char* name;
   int rows, per_whorl;
 };
-// 4 whorls stand behind the embryonic shell of the demo shell.
-constexpr Crowd kCrowds[] = {{"bare", 0, 0}, {"100,000 beads", 125, 200}, {"1,000,000 beads", 400, 625}};
+// Of four whorls; two in five of so many stand where the next whorl has its lumen, and are left out.
+constexpr Crowd kCrowds[] = {{"bare", 0, 0}, {"100,000 beads", 220, 200}, {"1,000,000 beads", 700, 625}};
 
 Shape shape_of(const Crowd& crowd) {
   std::ifstream file(std::string(WHORL_SCENE_DIR) + "/globose.toml");

@@ -5,6 +5,7 @@
 #include "compile/compile.h"
 #include "plate/views.h"
 #include "specimen/scene_file.h"
+#include "shaders_cpu/tone/srgb.h"
 #include "stopwatch.h"
 #include "trace/embree_solid.h"
 #include "transport/materials.h"
@@ -17,16 +18,17 @@
 namespace whorl::bench {
 namespace {
 
-constexpr int kPixels = 96, kSamples = 64, kRepeats = 6, kReference = 8192;
+constexpr int kPixels = 48, kSamples = 64, kRepeats = 4, kReference = 2048;
 
 struct Case {
   const char *file, *name;
-  bool lamps, page;
+  bool lamps;
+  float interior;  // albedo of the inside
 };
-constexpr Case kCases[] = {{"lit_within", "lit within: lamp and page", true, true},
-                           {"lit_within", "the same by the page alone", false, true},
-                           {"globose", "globose by the page", false, true},
-                           {"tall", "tall by the page", false, true}};
+constexpr Case kCases[] = {{"lit_within", "lamp and page, inside 0.8", true, 0.8f}, {"lit_within", "page, inside 0.8", false, 0.8f},
+                           {"lit_within", "page, inside 0.4", false, 0.4f},         {"lit_within", "page, inside 0.2", false, 0.2f},
+                           {"lit_within", "page, inside 0.05", false, 0.05f},       {"tall", "tall, page, inside 0.2", false, 0.2f},
+                           {"tall", "tall, page, inside 0.05", false, 0.05f}};
 
 double squared_error(const transport::Film& film, const transport::Film& reference) {
   double sum = 0.0;
@@ -56,7 +58,10 @@ void run_portal() {
     transport::RenderJob job;
     job.shell = &solid;
     job.lighting = transport::light_page(specimen.light, lamps, view.fixed_page);
-    job.materials = transport::make_materials(field, specimen);
+    specimen::Specimen coloured = specimen;
+    const auto grey = static_cast<unsigned char>(std::lround(255.0 * shaders_cpu::srgb_encode(static_cast<double>(c.interior))));
+    coloured.look.interior.value = {grey, grey, grey};
+    job.materials = transport::make_materials(field, coloured);
     job.camera.page = view.page_to_shell;
     job.camera.width_px = job.camera.height_px = kPixels;
     job.camera.mm_per_px = 1.6 * std::max(scene.mouth.half_u.length(), scene.mouth.half_v.length()) / kPixels;
