@@ -149,8 +149,6 @@ transport::Film Studio::exposed(const View& view, specimen::PanelLook look, spec
   job.bounds_mm = bounds_;
   job.camera = camera;
   job.lighting = transport::light_page(specimen_.light, lamps, view.fixed_page);
-  const scene::Mouth& mouth = scene_->mouth;
-  job.lighting.portal = shaders_cpu::Portal{mouth.centre, mouth.half_u, mouth.half_v, mouth.outwards};
   job.materials = look == specimen::PanelLook::kWhitened ? whitened_ : materials_;
   if (view.cut || mould) job.materials.wall.reset();
   job.samples_per_pixel = samples;

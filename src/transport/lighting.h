@@ -20,7 +20,9 @@ struct Lighting {
   shaders_cpu::KeyLight key;
   shaders_cpu::Dome dome;
   std::vector<shaders_cpu::SphereLamp> lamps;
-  std::optional<shaders_cpu::Portal> portal;  // the shell's mouth
+  /// The shell's mouth: places in the lumen send shadow rays through it as well. Plates leave it out: under an even dome scattered rays
+  /// find the mouth as well in less time (tools/bench/run portal).
+  std::optional<shaders_cpu::Portal> portal;
 };
 
 /// A lamp of the scene file with the place that the growth law gives it.

@@ -27,7 +27,8 @@ struct Glimpse {
 /// Unidirectional path tracing with next-event estimation to key and lamps, joined with BSDF sampling by multiple
 /// importance sampling (power heuristic, exponent 2; Veach & Guibas 1995, SIGGRAPH). The dome is even, so scattered rays
 /// sample it perfectly as they are: shadow rays to it as well raised the noise by 2 to 9 % and the time by 15 % (measured
-/// on an open sphere, with and without a lamp in it). Within the lumen it is seen through the mouth alone, which is sampled as a portal. Unbiased. Keeps references: shell, lighting and materials must
+/// on an open sphere, with and without a lamp in it). The mouth as a portal does no better:
+/// a scattered ray that finds it takes the place of one that gathers light from pale walls, and each makes up for the other. Unbiased. Keeps references: shell, lighting and materials must
 /// outlive it.
 class PathTracer {
  public:

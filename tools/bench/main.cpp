@@ -32,7 +32,7 @@ constexpr std::size_t kExactEvery = 16;
 
 struct Settings {
   std::string shape;       // "" for all
-  bool json = false, mesh = true, exact = true, rays = true;
+  bool json = false, mesh = true, exact = true;
   std::size_t pixels = 700'000;  // a view, of three
   int rounds = 3;
   double most_triangles = 12e6;  // what limits time and memory
