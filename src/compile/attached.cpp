@@ -102,6 +102,7 @@ struct HornForm {
 scene::Horn horn(const scene::Scene& scene, const SurfaceFrame& f, const HornForm& form, double scale, std::uint32_t series) {
   scene::Horn h;
   h.base = f.point;
+  h.up = f.normal;
   h.axis = leaned(f, form.lean);
   h.front = (f.forward - h.axis * h.axis.dot(f.forward)).normalized();
   h.bend = form.bend;
@@ -123,7 +124,8 @@ bool foot_holds(const growth::Exterior& shell, const scene::Horn& h) {
   constexpr int kRound = 16;
   for (int i = 0; i < kRound; ++i) {
     const double a = kTwoPi * i / kRound;
-    const Vec3 p = h.base - h.sunk * h.axis + h.foot_radius * (std::cos(a) * h.front + std::sin(a) * side);
+    const Vec3 off = h.foot_radius * (std::cos(a) * h.front + std::sin(a) * side);
+    const Vec3 p = h.base + off - (h.sunk + h.up.dot(off)) / h.up.dot(h.axis) * h.axis;  // on the cut
     const double theta = static_cast<double>(h.passage) +
                          std::remainder(std::atan2(p.y, p.x) - static_cast<double>(h.passage), kTwoPi);
     const growth::SectionPoint q = shell.law.to_section(shell.law.at(theta), {std::hypot(p.x, p.y), p.z});

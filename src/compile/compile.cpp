@@ -5,6 +5,7 @@
 #include "compile/attached.h"
 #include "compile/axis.h"
 #include "compile/edge_patterns.h"
+#include "compile/encrusters.h"
 #include "compile/lamps.h"
 #include "compile/mouth.h"
 #include "compile/sculpture.h"
@@ -105,6 +106,7 @@ scene::Scene compile_scene(const specimen::Specimen& specimen) {
   faults.raise(specimen.source);
   const growth::Exterior shell = exterior_of(scene);
   build_attached(scene, specimen, shell, faults);
+  build_encrusters(scene, specimen, shell, faults);
   faults.raise(specimen.source);
 
   scene.mouth = mouth_of(scene);

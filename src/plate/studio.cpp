@@ -40,6 +40,10 @@ void add_attached(const scene::Scene& scene, std::vector<Vec3>& points, Box3& bo
     box.extendBy(scene::box_of(b));
     points.push_back(Vec3(b.centre) + Vec3(b.rows[2]) / Vec3(b.rows[2]).length2());
   }
+  for (const scene::Guest& g : scene.attached.guests) {
+    box.extendBy(scene::box_of(g));
+    for (const Vec3& p : growth::surface_points(compile::exterior_of(*g.shell), 60, 24)) points.push_back(g.origin + g.frame.to_world(p));
+  }
   const growth::Exterior shell = compile::exterior_of(scene);
   for (const scene::Ledge& l : scene.attached.ledges)
     for (int i = 0; i <= kPlaces; ++i) {

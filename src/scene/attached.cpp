@@ -2,6 +2,8 @@
 // Boxes round attached solids, and the arc that a horn follows.
 #include "scene/attached.h"
 
+#include "scene/scene.h"
+
 #include <algorithm>
 #include <cmath>
 
@@ -28,6 +30,11 @@ AxisPlace axis_at(const Horn& horn, double s) {
           n * horn.axis + c * horn.front};
 }
 
+double axis_start(const Horn& horn) {
+  const double cosine = std::max(0.1, horn.axis.dot(horn.up)), sine = std::sqrt(std::max(0.0, 1.0 - cosine * cosine));
+  return -(horn.sunk + horn.foot_radius * sine) / cosine;
+}
+
 Box3 box_of(const Horn& horn) {
   Box3 box;
   constexpr int kPieces = 12;
@@ -35,12 +42,20 @@ Box3 box_of(const Horn& horn) {
   // Between two places the arc stands off its chord by at most the sagitta.
   const double sagitta = horn.length / kPieces * std::abs(horn.bend) / kPieces / 8.0;
   for (int i = -1; i <= kPieces; ++i) {
-    const double s = i < 0 ? -horn.sunk : horn.length * i / kPieces;
+    const double s = i < 0 ? axis_start(horn) : horn.length * i / kPieces;
     const Vec3 p = axis_at(horn, s).point;
     const Vec3 room(widest + sagitta);
     box.extendBy(p - room);
     box.extendBy(p + room);
   }
+  return box;
+}
+
+Box3 box_of(const Guest& guest) {
+  const Box3& own = guest.shell->bounds;
+  Box3 box;
+  for (int i = 0; i < 8; ++i)
+    box.extendBy(guest.origin + guest.frame.to_world({i & 1 ? own.max.x : own.min.x, i & 2 ? own.max.y : own.min.y, i & 4 ? own.max.z : own.min.z}));
   return box;
 }
 

@@ -7,6 +7,7 @@
 
 #include <cstddef>
 #include <cstdint>
+#include <memory>
 #include <optional>
 #include <vector>
 
@@ -25,12 +26,13 @@ struct Bead {
 /// A cone or tube round a circular arc that starts at `base` along `axis` and turns towards -`front` (away from the lip).
 struct Horn {
   Vec3 base, axis, front;             // axis and front: unit, perpendicular
+  Vec3 up;                            // of the surface, unit: its foot is cut level with it
   double length = 0.0;                // of the arc
   double bend = 0.0;                  // angle between its ends; below 0 towards the front
   double foot_radius = 0.0, tip_radius = 0.0;
   double bore = 0.0;                  // radius of the bore / radius there; 0: solid
   double half_opening = 0.0;          // half of the angle over which a bore is open along its front
-  double sunk = 0.0;                  // how far the foot reaches back along the axis, into the wall
+  double sunk = 0.0;                  // depth of the foot's cut under the surface, in the wall
   float passage = 0.0f;
   std::uint32_t series = 0;
 };
@@ -54,19 +56,35 @@ struct AttachedSeries {
   std::optional<specimen::Colour> colour;  // none: that of the outside
 };
 
+struct Scene;
+/// Another shell on this one: a place of this shell's frame is origin + frame.to_world(place of its own). The frame is left-handed where
+/// one coils the other way. Its outside has the colour of `series`, its inside of the next one.
+struct Guest {
+  std::shared_ptr<const Scene> shell;
+  Frame frame;
+  Vec3 origin{0.0};
+  double passage = 0.0;
+  std::uint32_t series = 0;
+};
+
 struct Attached {
+  std::vector<Guest> guests;
   std::vector<AttachedSeries> series;
   std::vector<Bead> beads;
   std::vector<Horn> horns;
   std::vector<Ledge> ledges;
 
-  bool empty() const { return beads.empty() && horns.empty() && ledges.empty(); }
-  std::size_t size() const { return beads.size() + horns.size() + ledges.size(); }
+  bool empty() const { return beads.empty() && horns.empty() && ledges.empty() && guests.empty(); }
+  std::size_t size() const { return beads.size() + horns.size() + ledges.size() + guests.size(); }
 };
 
 /// A box that holds all of it.
 Box3 box_of(const Bead& bead);
 Box3 box_of(const Horn& horn);
+Box3 box_of(const Guest& guest);
+
+/// Where the horn's axis begins, at the latest: the cut foot lies beyond it. At most 0.
+double axis_start(const Horn& horn);
 
 /// The horn's axis at a length from the foot (below 0: straight on into the wall).
 struct AxisPlace {

@@ -1,5 +1,5 @@
 // SPDX-License-Identifier: Apache-2.0
-// Stripes, lamellae, spines and attached elements of a scene file.
+// Stripes, lamellae, spines, attached elements and encrusters of a scene file.
 #include "specimen/scene_reader.h"
 
 namespace whorl::specimen {
@@ -24,6 +24,8 @@ Attachments SceneReader::read_attachments() {
   for (const TableReader& t : list("attached", &root_))
     a.attached.push_back({t.word<AttachedShape>("shape"), series_of(t), t.whole("rows"), t.number("height"), t.number("breadth"),
                           t.number("at"), t.number("width"), t.number("stagger"), t.number("lean"), t.colour("colour")});
+  for (const TableReader& t : list("encruster", &root_))
+    a.encrusters.push_back({t.text("scene"), t.number("behind_lip"), t.number("at"), t.number("turn"), t.number("sunk"), t.word<Pose>("pose")});
   return a;
 }
 

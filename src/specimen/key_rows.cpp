@@ -219,6 +219,13 @@ constexpr KeyRow kRows[] = {
     {"attached", "onset", kNumber, kOnset, "whorls", "", "0.0", "none stands before, nor on the embryonic shell"},
     {"attached", "end", kNumber, kEnd, "whorls", "", "40.0", "none stands after"},
 
+    {"encruster", "scene", kText, kLine, "", "", kRequired, "scene file of the other shell, relative to the folder of this one"},
+    {"encruster", "behind_lip", kNumber, {0.0, 40.0}, "whorls", "", kRequired, "place along growth, counted back from the lip"},
+    {"encruster", "at", kNumber, kAround, "degrees", "", kRequired, "place round the section"},
+    {"encruster", "pose", kWord, kNothing, "", "upright|lying", "\"upright\"", "its axis off the surface, apex outwards, or along the surface"},
+    {"encruster", "turn", kNumber, kAnyTurn, "degrees", "", "0.0", "turn about the surface's normal"},
+    {"encruster", "sunk", kNumber, {0.0, 100.0}, "mm", "", "0.0", "how far it is let into the wall"},
+
     {"light", "azimuth", kNumber, kAnyTurn, "degrees", "", "135.0", "direction on the page, anticlockwise from the right"},
     {"light", "elevation", kNumber, {0.0, 90.0}, "degrees", "", "45.0", "angle out of the page, towards the reader"},
     {"light", "softness", kNumber, {0.0, 60.0}, "degrees", "", "12.0", "angular radius of the key light"},

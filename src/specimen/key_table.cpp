@@ -53,7 +53,7 @@ std::vector<std::string> tables_with(std::string_view key, std::span<const KeyRo
 
 bool is_list(std::string_view table) {
   constexpr std::string_view kLists[] = {"section.lobe", "band",  "flame",       "spot",  "pattern",
-                                         "cord",         "rib",   "nodule",      "stripe", "lamella", "spine", "attached",
+                                         "cord",         "rib",   "nodule",      "stripe", "lamella", "spine", "attached", "encruster",
                                          "lamp",         "panel", "measurement", "series", "outline", "preserved"};
   return std::find(std::begin(kLists), std::end(kLists), table) != std::end(kLists);
 }

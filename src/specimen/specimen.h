@@ -203,11 +203,19 @@ struct Attached {
   Stated<double> height_mm, breadth_mm, at_deg, width_deg, stagger, lean_deg;
   Stated<Colour> colour;
 };
+/// Another scene's shell at its own size, set down on this one.
+enum class Pose { kUpright, kLying };  // axis of coiling along the surface's normal, or in the surface
+struct Encruster {
+  Stated<std::string> scene;  // its file, relative to this one's folder
+  Stated<double> behind_lip, at_deg, turn_deg, sunk_mm;
+  Stated<Pose> pose;
+};
 struct Attachments {
   std::vector<Stripe> stripes;
   std::vector<Lamella> lamellae;
   std::vector<Spine> spines;
   std::vector<Attached> attached;
+  std::vector<Encruster> encrusters;
 };
 
 struct Light {

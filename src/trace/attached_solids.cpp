@@ -6,14 +6,17 @@
 #include "math/parallel.h"
 #include "trace/bead.h"
 #include "trace/embree_ray.h"
+#include "trace/guest_solid.h"
 #include "trace/horn.h"
 #include "trace/ledge.h"
+#include "trace/ray_box.h"
 #include "trace/sphere_march.h"
 
 #include <algorithm>
 #include <array>
 #include <atomic>
 #include <cmath>
+#include <memory>
 
 namespace whorl::trace {
 namespace {
@@ -86,21 +89,6 @@ struct Query : embree::Payload {
 
 Vec3 along(const Ray& ray, double t) { return Vec3(ray.origin) + t * Vec3(ray.direction); }
 
-// The part of the ray within a box.
-bool clip(const Ray& ray, const Box3& box, double& t0, double& t1) {
-  for (int i = 0; i < 3; ++i) {
-    const double o = static_cast<double>(ray.origin[i]), d = static_cast<double>(ray.direction[i]);
-    if (d == 0.0) {
-      if (o < box.min[i] || o > box.max[i]) return false;
-      continue;
-    }
-    const double a = (box.min[i] - o) / d, b = (box.max[i] - o) / d;
-    t0 = std::max(t0, std::min(a, b));
-    t1 = std::min(t1, std::max(a, b));
-  }
-  return t0 <= t1;
-}
-
 }  // namespace
 
 struct AttachedSolids::Impl {
@@ -109,6 +97,7 @@ struct AttachedSolids::Impl {
   std::vector<scene::Horn> horns;
   std::vector<scene::Ledge> ledges;
   std::vector<Box3> ledge_boxes;
+  std::vector<std::unique_ptr<GuestSolid>> guests;
   std::size_t left_out = 0;
   double resolution;  // mm
   std::atomic<std::ptrdiff_t> hierarchy_bytes{0};
@@ -121,6 +110,14 @@ struct AttachedSolids::Impl {
     horns = standing(f, all.horns, left_out);
     ledges = standing(f, all.ledges, left_out);
     for (const scene::Ledge& l : ledges) ledge_boxes.push_back(trace::box_of(l, f));
+    for (const scene::Guest& g : all.guests) {
+      // The middle of it stands clear of the shell, or it would be in a later whorl.
+      const Box3 own = scene::box_of(g);
+      if (in_lumen(f, 0.5 * (own.min + own.max)))
+        ++left_out;
+      else
+        guests.push_back(std::make_unique<GuestSolid>(g));
+    }
   }
   ~Impl() {
     if (scene) rtcReleaseScene(scene);
@@ -270,11 +267,18 @@ struct AttachedSolids::Impl {
 AttachedSolids::AttachedSolids(const field::Field& field) : impl_(std::make_unique<Impl>(field)) { impl_->build(); }
 AttachedSolids::~AttachedSolids() = default;
 
-bool AttachedSolids::closest(const Ray& ray, Hit& hit) const noexcept {
+bool AttachedSolids::closest(const Ray& whole, Hit& hit) const noexcept {
+  Ray ray = whole;
+  bool guest = false;
+  for (const auto& g : impl_->guests)
+    if (g->closest(ray, hit)) {
+      guest = true;
+      ray.t_max = hit.t;
+    }
   RTCRayHit query = embree::query_of(ray);
   Query payload(ray);
   embree::trace_closest(impl_->scene, query, payload);
-  if (query.hit.geomID == RTC_INVALID_GEOMETRY_ID) return false;
+  if (query.hit.geomID == RTC_INVALID_GEOMETRY_ID) return guest;
   const Element e{static_cast<Kind>(query.hit.geomID), query.hit.primID};
   hit = {};
   hit.t = query.ray.tfar;
@@ -298,6 +302,8 @@ bool AttachedSolids::closest(const Ray& ray, Hit& hit) const noexcept {
 }
 
 bool AttachedSolids::occluded(const Ray& ray) const noexcept {
+  for (const auto& g : impl_->guests)
+    if (g->occluded(ray)) return true;
   RTCRay query = embree::ray_of(ray);
   Query payload(ray);
   embree::trace_any(impl_->scene, query, payload);
@@ -311,6 +317,8 @@ GrowthPlace AttachedSolids::growth_place(const Hit& hit) const noexcept {
 }
 
 bool AttachedSolids::holds(const Vec3& p) const noexcept {
+  for (const auto& g : impl_->guests)
+    if (g->holds(p)) return true;
   thread_local std::vector<Element> visited;
   Ray ray;
   ray.origin = Vec3f(p);
@@ -339,6 +347,7 @@ void AttachedSolids::stretches(const Ray& ray, std::vector<Within>& out) const {
       if (e.kind == kBeads || !(t < end)) break;
     }
   }
+  for (const auto& g : impl_->guests) g->add_stretches(ray, found);
   std::sort(found.begin(), found.end(), [](const Within& a, const Within& b) { return a.in < b.in; });
   for (const Within& w : found) {
     if (!out.empty() && w.in <= out.back().out)
@@ -348,10 +357,12 @@ void AttachedSolids::stretches(const Ray& ray, std::vector<Within>& out) const {
   }
 }
 
-std::size_t AttachedSolids::size() const { return impl_->beads.size() + impl_->horns.size() + impl_->ledges.size(); }
+std::size_t AttachedSolids::size() const { return impl_->beads.size() + impl_->horns.size() + impl_->ledges.size() + impl_->guests.size(); }
 std::size_t AttachedSolids::left_out() const { return impl_->left_out; }
 std::size_t AttachedSolids::bytes() const {
-  return impl_->beads.size() * sizeof(scene::Bead) + impl_->horns.size() * sizeof(scene::Horn) +
+  std::size_t of_guests = 0;
+  for (const auto& g : impl_->guests) of_guests += g->bytes();
+  return of_guests + impl_->beads.size() * sizeof(scene::Bead) + impl_->horns.size() * sizeof(scene::Horn) +
          impl_->ledges.size() * (sizeof(scene::Ledge) + sizeof(Box3)) + static_cast<std::size_t>(impl_->hierarchy_bytes.load());
 }
 

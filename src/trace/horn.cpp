@@ -40,17 +40,17 @@ double value_of(const scene::Horn& h, const Vec3& p) noexcept {
   const double across = std::hypot(at.front, at.side);
   const double along = std::clamp(at.along, 0.0, h.length);
   const double radius = h.foot_radius - taper(h) * along;
-  const double past_foot = at.along + h.sunk;
+  const double over_surface = h.up.dot(p - h.base), past_foot = over_surface + h.sunk;
   if (h.bore <= 0.0) {
     // Rounded tip: a ball of the tip's radius.
     const double past_tip = std::max(0.0, at.along - h.length);
     return std::min(radius - std::hypot(across, past_tip), past_foot);
   }
   // Bore and opening end at the shell.
-  double value = std::min({radius - across, std::max(across - h.bore * radius, -at.along), h.length - at.along, past_foot});
+  double value = std::min({radius - across, std::max(across - h.bore * radius, -over_surface), h.length - at.along, past_foot});
   if (h.half_opening > 0.0) {
     const double in_opening = at.front * std::sin(h.half_opening) - std::abs(at.side) * std::cos(h.half_opening);
-    value = std::min(value, std::max(-in_opening, -at.along));
+    value = std::min(value, std::max(-in_opening, -over_surface));
   }
   return value;
 }

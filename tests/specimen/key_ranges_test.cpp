@@ -17,6 +17,7 @@ namespace {
 std::string sound_value(const KeyRow& row) {
   if (row.type == KeyType::kColour) return "\"#112233\"";
   if (row.type == KeyType::kView) return "\"apertural\"";
+  if (row.type == KeyType::kText) return "\"words\"";
   if (row.key == "shape") return "\"bead\"";
   return row.key == "reach" ? "0.1" : "1";
 }

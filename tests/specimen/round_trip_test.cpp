@@ -129,6 +129,10 @@ TEST_CASE("Every key of a scene arrives with its value", "[specimen]") {
   CHECK(s.light.fill == 0.5);
   CHECK(s.light.stops == -2.5);
 
+  REQUIRE(s.attachments.encrusters.size() == 1);
+  const Encruster& encruster = s.attachments.encrusters[0];
+  CHECK((encruster.scene.value == "other.toml" && encruster.behind_lip == 0.5 && encruster.at_deg == 75.0));
+  CHECK((encruster.pose == Pose::kLying && encruster.turn_deg == 45.0 && encruster.sunk_mm == 0.1));
   REQUIRE((s.attachments.stripes.size() == 1 && s.attachments.lamellae.size() == 1));
   REQUIRE((s.attachments.spines.size() == 1 && s.attachments.attached.size() == 1));
   const Stripe& stripe = s.attachments.stripes[0];

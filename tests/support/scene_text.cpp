@@ -90,6 +90,8 @@ SceneText SceneText::with_every_key() {
   series("attached", "12");
   scene.set("attached", "shape", "\"tube\"").set("attached", "breadth", "0.6").set("attached", "rows", "3");
   scene.set("attached", "stagger", "0.5").set("attached", "lean", "9").set("attached", "colour", "\"#240a0b\"");
+  scene.set("encruster", "scene", "\"other.toml\"").set("encruster", "behind_lip", "0.5").set("encruster", "at", "75");
+  scene.set("encruster", "pose", "\"lying\"").set("encruster", "turn", "45").set("encruster", "sunk", "0.1");
   scene.set("light", "azimuth", "90")
       .set("light", "stops", "-2.5")
       .set("light", "elevation", "30")

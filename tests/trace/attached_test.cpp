@@ -8,6 +8,7 @@
 #include <algorithm>
 #include <cmath>
 #include <random>
+#include <string>
 
 using namespace whorl;
 using test::AttachedShell;
@@ -252,4 +253,24 @@ TEST_CASE("Nothing attached stands in a lumen", "[attached]") {
   }
   CHECK(lumen > 100);  // feet in the wall
   CHECK(in_it == 0);
+}
+
+TEST_CASE("A leaning spine stands on the surface all round its foot", "[attached]") {
+  for (const double lean : {-50.0, 0.0, 50.0}) {
+    const AttachedShell shell(test::open_coil_scene() + "[[spine]]\nper_whorl = 3\nlength = 8\nbreadth = 1.5\ntip = 1\nat = 75\nbehind_lip = 0.2\nlean = " + std::to_string(lean) + "\n");
+    const growth::SurfaceFrame f = frame_at(shell, 0.2, 75.0);
+    const Vec3 axis = std::cos(radians(lean)) * f.normal + std::sin(radians(lean)) * f.forward;
+    CAPTURE(lean);
+    CHECK(farthest_held(shell.attached, f.point, axis, 10.0) == Approx(8.0 * f.scale).epsilon(0.01));
+    // Down its side: where the spine ends it is within the wall, never in the air or the lumen.
+    const Vec3 front = (f.forward - axis * axis.dot(f.forward)).normalized(), side = axis.cross(front);
+    for (int i = 0; i < 24; ++i) {
+      const double turn = kTwoPi * i / 24;
+      const Vec3 edge = f.point + 0.73 * f.scale * (std::cos(turn) * front + std::sin(turn) * side) + 2.0 * f.scale * axis;
+      double s = 0.0;
+      while (s < 6.0 && (shell.attached.holds(edge - s * axis) || s < 0.6 * f.scale)) s += 1e-3;
+      CAPTURE(turn);
+      CHECK(shell.field.place_at(edge - s * axis).state == field::State::kSolid);
+    }
+  }
 }
