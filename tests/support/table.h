@@ -1,5 +1,5 @@
 // SPDX-License-Identifier: Apache-2.0
-// Reads the small comma-separated tables of tests/data.
+// Reads the small comma-separated tables of tests/data and tests/reference.
 #pragma once
 
 #include <fstream>
@@ -11,9 +11,9 @@
 namespace whorl::test {
 
 /// The rows below the heading, split at commas; the tables read with this have no quoted cells.
-inline std::vector<std::vector<std::string>> read_table(const std::string& name) {
-  std::ifstream file(std::string(WHORL_TEST_DIR) + "/data/" + name);
-  if (!file) throw std::runtime_error("tests/data/" + name + " is missing");
+inline std::vector<std::vector<std::string>> read_table(const std::string& name, const std::string& folder = "data") {
+  std::ifstream file(std::string(WHORL_TEST_DIR) + "/" + folder + "/" + name);
+  if (!file) throw std::runtime_error("tests/" + folder + "/" + name + " is missing");
   std::vector<std::vector<std::string>> rows;
   std::string line, cell;
   std::getline(file, line);
