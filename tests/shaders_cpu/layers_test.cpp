@@ -1,34 +1,14 @@
 // SPDX-License-Identifier: Apache-2.0
-// Transfer matrices against closed forms: Fresnel, Airy's formula for one film, the quarter-wave stack.
+// Transfer matrices against closed forms: Fresnel, Airy's formula, the quarter-wave stack.
 #include "shaders_cpu/surface/layers.h"
+#include "support/airy.h"
 #include "support/catch.h"
-
-#include "math/vec.h"
 
 #include <array>
 #include <cmath>
-#include <vector>
 
 using namespace whorl;
 using namespace whorl::shaders_cpu;
-
-namespace {
-
-using Complex = std::complex<double>;
-
-/// Airy's sum for one film, index n + i k: |r12 + r23 e^(2i delta)|^2 / |1 + r12 r23 e^(2i delta)|^2.
-double airy(double n1, Complex n2, double n3, double thickness, double wavelength, double cosine, bool across) {
-  const double s = n1 * std::sqrt(1.0 - cosine * cosine);
-  const Complex c1 = cosine, c2 = std::sqrt(1.0 - s * s / (n2 * n2)), c3 = std::sqrt(1.0 - s * s / (n3 * n3));
-  const auto fresnel = [across](Complex na, Complex ca, Complex nb, Complex cb) {
-    return across ? (na * ca - nb * cb) / (na * ca + nb * cb) : (nb * ca - na * cb) / (nb * ca + na * cb);
-  };
-  const Complex r12 = fresnel(n1, c1, n2, c2), r23 = fresnel(n2, c2, n3, c3);
-  const Complex turn = std::exp(Complex(0.0, 2.0) * kTwoPi * n2 * thickness * c2 / wavelength);
-  return std::norm((r12 + r23 * turn) / (1.0 + r12 * r23 * turn));
-}
-
-}  // namespace
 
 TEST_CASE("A stack of no thickness, or of no layers, reflects as Fresnel says", "[shaders]") {
   const std::array<Layer, 2> thin = {Layer{1.5, 0.0}, Layer{1.9, 0.0}};
@@ -41,14 +21,43 @@ TEST_CASE("A stack of no thickness, or of no layers, reflects as Fresnel says", 
   }
 }
 
-TEST_CASE("One layer equals Airy's formula at every angle, thickness and absorption", "[shaders]") {
-  for (const double thickness : {0.0, 35.0, 300.0, 1234.0})
-    for (const double cosine : {1.0, 0.7, 0.25})
-      for (const double k : {0.0, 0.05}) {
-        const std::array<Layer, 1> film = {Layer{{1.5, -k}, thickness}};
-        const StackResponse r = stack_response(1.0, film, 1, 1.7, 550.0, cosine);
-        CHECK(r.reflectance.s == Approx(airy(1.0, {1.5, k}, 1.7, thickness, 550.0, cosine, true)).epsilon(1e-10));
-        CHECK(r.reflectance.p == Approx(airy(1.0, {1.5, k}, 1.7, thickness, 550.0, cosine, false)).epsilon(1e-10));
+TEST_CASE("One layer equals Airy's formula at every angle, thickness and absorption, swinging across and in the plane", "[shaders]") {
+  for (const double outer : {1.0, 1.68})  // from the denser side as well: beyond the critical angle light tunnels
+    for (const double index : {1.0, 1.5, 2.2})
+      for (const double thickness : {0.0, 35.0, 300.0, 1234.0})
+        for (const double cosine : {1.0, 0.9, 0.7, 0.5, 0.25, 0.05, 0.002})
+          for (const double k : {0.0, 0.05, 0.8})
+            for (const double substrate : {1.0, 1.7}) {
+              if (k == 0.0 && outer * std::sqrt(1.0 - cosine * cosine) == index) continue;  // light along the layer
+              const std::array<Layer, 1> film = {Layer{{index, -k}, thickness}};
+              const std::array<test::AiryLayer, 1> same = {test::AiryLayer{{index, k}, thickness}};
+              const StackResponse r = stack_response(outer, film, 1, substrate, 550.0, cosine);
+              const auto s = test::airy(outer, same, 1, substrate, 550.0, cosine, true);
+              const auto p = test::airy(outer, same, 1, substrate, 550.0, cosine, false);
+              INFO("outer " << outer << " index " << index << " - i " << k << " thickness " << thickness << " cosine " << cosine
+                            << " substrate " << substrate);
+              // The angle is known by its cosine: at 0.002 half of a double's digits are left in what the sine tells of it.
+              CHECK(r.reflectance.s == Approx(s.first).epsilon(1e-9).margin(1e-14));
+              CHECK(r.reflectance.p == Approx(p.first).epsilon(1e-9).margin(1e-14));
+              CHECK(r.transmittance.s == Approx(s.second).epsilon(1e-9).margin(1e-14));
+              CHECK(r.transmittance.p == Approx(p.second).epsilon(1e-9).margin(1e-14));
+            }
+}
+
+TEST_CASE("Many layers equal Airy's formula taken layer by layer from the last face upwards", "[shaders]") {
+  const std::array<Layer, 3> layers = {Layer{1.5, 8.0}, Layer{{1.683, -0.002}, 440.0}, Layer{1.33, 90.0}};
+  const std::array<test::AiryLayer, 3> same = {test::AiryLayer{1.5, 8.0}, test::AiryLayer{{1.683, 0.002}, 440.0},
+                                               test::AiryLayer{1.33, 90.0}};
+  for (const int repeats : {1, 2, 7, 30})
+    for (double nm = 380.0; nm <= 780.0; nm += 37.0)
+      for (const double cosine : {1.0, 0.6, 0.2, 0.05}) {
+        const StackResponse r = stack_response(1.0, layers, repeats, 1.683, nm, cosine);
+        const auto s = test::airy(1.0, same, repeats, 1.683, nm, cosine, true);
+        const auto p = test::airy(1.0, same, repeats, 1.683, nm, cosine, false);
+        CHECK(r.reflectance.s == Approx(s.first).epsilon(1e-9));
+        CHECK(r.reflectance.p == Approx(p.first).epsilon(1e-9));
+        CHECK(r.transmittance.s == Approx(s.second).epsilon(1e-9));
+        CHECK(r.transmittance.p == Approx(p.second).epsilon(1e-9));
       }
 }
 
