@@ -83,7 +83,7 @@ int plate_command(const Options& options, Progress& progress) {
     note_on_shell(studios[0]->scene(), progress);
   }
 
-  const int samples = plate::quality_steps(specimen.plate.quality.value).samples;
+  const plate::QualitySteps steps = plate::quality_steps(specimen.plate.quality.value);
   double area = 0.0, before = 0.0;
   for (const FigurePanel& panel : plan.panels) area += static_cast<double>(panel.rect.width) * panel.rect.height;
   progress.step(fmt::format("rendering {} panel{}, {} x {} pixels", plan.panels.size(),
@@ -96,7 +96,7 @@ int plate_command(const Options& options, Progress& progress) {
     const double share = static_cast<double>(panel.rect.width) * panel.rect.height / area;
     plate::Studio& studio = *studios[sheet ? i : 0];
     if (sheet) studio.set_up(finest, options.exact);
-    films.push_back(studio.picture(panel.view, panel.look, panel.shows, panel.camera(studio.front_mm()), samples, options.seed,
+    films.push_back(studio.picture(panel.view, panel.look, panel.shows, panel.camera(studio.front_mm()), steps, options.seed,
                                    static_cast<std::uint32_t>(i), PictureProgress(progress, before, share)));
     before += share;
     if (!sheet) continue;

@@ -63,11 +63,11 @@ double now() {
 
 QualitySteps quality_steps(specimen::Quality quality) {
   switch (quality) {
-    case specimen::Quality::kDraft: return {0.25, 16};
-    case specimen::Quality::kProof: return {0.5, 64};
-    case specimen::Quality::kPrint: return {1.0, 128};
+    case specimen::Quality::kDraft: return {0.25, 16, 16};
+    case specimen::Quality::kProof: return {0.5, 64, 64};
+    case specimen::Quality::kPrint: break;
   }
-  return {1.0, 128};
+  return {1.0, 128, 1024};
 }
 
 specimen::Specimen at_quality(specimen::Specimen specimen, specimen::Quality quality) {
@@ -112,15 +112,15 @@ void Studio::set_up(double mm_per_pixel, bool exact) {
   compile_seconds_ += now() - start;
 }
 
-transport::Film Studio::picture(const View& view, specimen::PanelLook look, specimen::Shows shows, const transport::Camera& camera, int samples,
+transport::Film Studio::picture(const View& view, specimen::PanelLook look, specimen::Shows shows, const transport::Camera& camera, const QualitySteps& steps,
                                 std::uint64_t seed, std::uint32_t number, const transport::Progress& progress) const {
-  transport::Film film = exposed(view, look, shows, camera, samples, seed, number, progress);
+  transport::Film film = exposed(view, look, shows, camera, steps, seed, number, progress);
   const specimen::Preservation preservation(specimen_);
   if (preservation.stated()) add_provenance(preservation, *field_, camera, film);
   return film;
 }
 
-transport::Film Studio::exposed(const View& view, specimen::PanelLook look, specimen::Shows shows, const transport::Camera& camera, int samples,
+transport::Film Studio::exposed(const View& view, specimen::PanelLook look, specimen::Shows shows, const transport::Camera& camera, const QualitySteps& steps,
                                 std::uint64_t seed, std::uint32_t number, const transport::Progress& progress) const {
   const trace::UnitedSolid all(*solid_, attached_.get());
   if (look == specimen::PanelLook::kRadiograph) {
@@ -132,7 +132,7 @@ transport::Film Studio::exposed(const View& view, specimen::PanelLook look, spec
     job.attenuation_per_mm = shaders_cpu::carbonate_attenuation_per_mm(
         specimen_.radiograph.energy_kev, specimen::mineral_density(specimen_.identity.mineral));
     job.bright_shell = specimen_.plate.background == specimen::Background::kBlack;
-    job.samples_per_pixel = std::min(samples, kRadiographSamples);
+    job.samples_per_pixel = std::min(steps.samples, kRadiographSamples);
     job.seed = seed;
     job.panel = number;
     return transport::radiograph(job, progress);
@@ -155,7 +155,8 @@ transport::Film Studio::exposed(const View& view, specimen::PanelLook look, spec
   job.lighting = transport::light_page(specimen_.light, lamps, view.fixed_page);
   job.materials = look == specimen::PanelLook::kWhitened ? whitened_ : materials_;
   if (view.cut || mould) job.materials.wall.reset();
-  job.samples_per_pixel = samples;
+  job.samples_per_pixel = steps.samples;
+  job.most_samples = steps.most_samples;
   job.seed = seed;
   job.panel = number;
   return transport::render(job, progress);

@@ -18,10 +18,10 @@
 
 namespace whorl::plate {
 
-/// What a quality means: how much of the stated resolution is drawn, and samples a pixel.
+/// What a quality means: how much of the stated resolution is drawn, and samples a pixel, up to the most where noise would be seen.
 struct QualitySteps {
   double resolution;  // times the stated pixels per inch
-  int samples;
+  int samples, most_samples;
 };
 QualitySteps quality_steps(specimen::Quality quality);
 
@@ -37,7 +37,7 @@ class Studio {
   void set_up(double mm_per_pixel, bool exact);
 
   /// One picture. Not for several threads at once: it uses all of them itself.
-  transport::Film picture(const View& view, specimen::PanelLook look, specimen::Shows shows, const transport::Camera& camera, int samples,
+  transport::Film picture(const View& view, specimen::PanelLook look, specimen::Shows shows, const transport::Camera& camera, const QualitySteps& steps,
                           std::uint64_t seed, std::uint32_t number, const transport::Progress& progress) const;
 
   const scene::Scene& scene() const { return *scene_; }
@@ -52,7 +52,7 @@ class Studio {
 
  private:
   /// The picture without its layer of provenance.
-  transport::Film exposed(const View& view, specimen::PanelLook look, specimen::Shows shows, const transport::Camera& camera, int samples, std::uint64_t seed,
+  transport::Film exposed(const View& view, specimen::PanelLook look, specimen::Shows shows, const transport::Camera& camera, const QualitySteps& steps, std::uint64_t seed,
                           std::uint32_t number, const transport::Progress& progress) const;
 
   specimen::Specimen specimen_;

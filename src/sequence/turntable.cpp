@@ -50,7 +50,7 @@ std::vector<std::filesystem::path> Turntable::render(const transport::Progress& 
   std::vector<std::filesystem::path> written;
   if (missing_.empty()) return written;
   studio_.set_up(plan_.mm_per_pixel, job_.run.exact);
-  const int samples = plate::quality_steps(job_.run.quality).samples;
+  const plate::QualitySteps steps = plate::quality_steps(job_.run.quality);
   plate::RunFacts facts = job_.run;
   facts.seconds_compile = studio_.compile_seconds();
   for (std::size_t i = 0; i < missing_.size(); ++i) {
@@ -59,7 +59,7 @@ std::vector<std::filesystem::path> Turntable::render(const transport::Progress& 
     const plate::FigurePanel& panel = figure.panels[0];
     const auto start = std::chrono::steady_clock::now();
     const transport::Film film =
-        studio_.picture(panel.view, panel.look, panel.shows, panel.camera(studio_.front_mm()), samples, facts.seed, static_cast<std::uint32_t>(frame),
+        studio_.picture(panel.view, panel.look, panel.shows, panel.camera(studio_.front_mm()), steps, facts.seed, static_cast<std::uint32_t>(frame),
                         FrameProgress(progress, i, missing_.size()));
     facts.seconds_render = std::chrono::duration<double>(std::chrono::steady_clock::now() - start).count();
     const FrameFiles files = frame_files(job_.folder, job_.stem, frame);

@@ -28,7 +28,7 @@ struct Film {
   std::vector<Vec3f> radiance;
   std::vector<float> coverage;     // 0 .. 1
   std::vector<PixelFacts> facts;
-  double mean_samples = 0.0;       // samples a pixel
+  double mean_samples = 0.0;       // samples a pixel that shows anything
   double max_samples = 0.0;
   double noise = 0.0;              // standard error of the radiance's mean over covered pixels, card = 1
   std::uint64_t rays_camera = 0, rays_scattered = 0, rays_shadow = 0;

@@ -5,6 +5,8 @@
 #include "math/basis3f.h"
 #include "math/parallel.h"
 #include "math/sobol.h"
+#include "shaders_cpu/tone/curve.h"
+#include "shaders_cpu/tone/srgb.h"
 #include "transport/encounter.h"
 #include "transport/path.h"
 
@@ -23,7 +25,8 @@ constexpr std::uint32_t kFilterBlock = 0, kFirstPathBlock = 1;
 /// What a tile counts; summed over tiles in their order, so that the sums do not depend on threads.
 struct Tally {
   RayCounts rays;
-  std::uint64_t non_finite = 0, covered = 0;
+  std::uint64_t non_finite = 0, covered = 0, samples = 0;  // samples of covered pixels
+  int most_samples = 0;
   double squared_error = 0.0;
 
   void add(const Tally& t) {
@@ -32,6 +35,8 @@ struct Tally {
     rays.shadow += t.rays.shadow;
     non_finite += t.non_finite;
     covered += t.covered;
+    samples += t.samples;
+    most_samples = std::max(most_samples, t.most_samples);
     squared_error += t.squared_error;
   }
 };
@@ -61,6 +66,7 @@ class Panel {
       : job_(job),
         paths_(*job.shell, job.lighting, job.materials),
         half_(samples_taken(job.samples_per_pixel) / kReplicates),
+        most_half_(std::max(half_, job.most_samples / kReplicates)),
         rect_(reachable(job)) {}
 
   Tally tile(int tile_x, int tile_y, Film& film) const {
@@ -78,14 +84,15 @@ class Panel {
  private:
   struct Sum {
     Vec3 radiance{0.0};
+    double squares = 0.0;  // of the luminance
     int hits = 0, valid = 0;
-    double mean_luminance() const { return valid ? luminance(Vec3f(radiance / valid)) : 0.0; }
+    double mean_luminance() const { return valid ? static_cast<double>(luminance(Vec3f(radiance / valid))) : 0.0; }
   };
 
-  Sum replicate(int x, int y, std::uint32_t number, Tally& tally) const {
+  /// Adds the samples [from, to) of one of the pixel's nets.
+  void replicate(int x, int y, std::uint32_t number, int from, int to, Sum& sum, Tally& tally) const {
     SobolStream stream({static_cast<std::uint32_t>(x), static_cast<std::uint32_t>(y), job_.panel, number, job_.seed});
-    Sum sum;
-    for (int i = 0; i < half_; ++i) {
+    for (int i = from; i < to; ++i) {
       stream.set_point(static_cast<std::uint32_t>(i));
       const auto u = stream.block(kFilterBlock);
       const Vec2 offset = filter_offset(u[0], u[1]);
@@ -96,14 +103,31 @@ class Panel {
         continue;
       }
       sum.radiance += Vec3(seen.radiance);
+      sum.squares += std::pow(static_cast<double>(luminance(seen.radiance)), 2);
       sum.hits += seen.hit;
       ++sum.valid;
     }
-    return sum;
+  }
+
+  /// Whether the pixel's noise would be seen in print.
+  static bool noisy(const Sum& a, const Sum& b) {
+    const double hits = a.hits + b.hits;
+    if (hits < 2.0) return false;
+    const double mean = static_cast<double>(luminance(Vec3f((a.radiance + b.radiance) / hits)));
+    const double error = std::sqrt(std::max(0.0, (a.squares + b.squares) / hits - mean * mean) / hits);
+    const auto printed = [](double light) { return shaders_cpu::srgb_encode(shaders_cpu::tone(std::max(0.0, light))); };
+    return printed(mean + error) - printed(mean - error) > 2.0 * kSeenNoise;
   }
 
   void pixel(int x, int y, Film& film, Tally& tally) const {
-    const Sum a = replicate(x, y, 0, tally), b = replicate(x, y, 1, tally);
+    Sum a, b;
+    int taken = 0;
+    for (int wanted = half_; wanted <= most_half_; wanted *= 2) {
+      replicate(x, y, 0, taken, wanted, a, tally);
+      replicate(x, y, 1, taken, wanted, b, tally);
+      taken = wanted;
+      if (!noisy(a, b)) break;
+    }
     const int valid = a.valid + b.valid, hits = a.hits + b.hits;
     if (hits == 0) return;
     film.radiance[film.index(x, y)] = Vec3f((a.radiance + b.radiance) / valid);
@@ -111,6 +135,8 @@ class Panel {
     const double half_difference = 0.5 * (a.mean_luminance() - b.mean_luminance());
     tally.squared_error += half_difference * half_difference;
     ++tally.covered;
+    tally.samples += static_cast<std::uint64_t>(kReplicates * taken);
+    tally.most_samples = std::max(tally.most_samples, kReplicates * taken);
   }
 
   PixelFacts facts(int x, int y, Tally& tally) const {
@@ -137,7 +163,7 @@ class Panel {
 
   const RenderJob& job_;
   PathTracer paths_;
-  int half_;
+  int half_, most_half_;  // samples of each replicate
   PixelRect rect_;
 };
 
@@ -166,7 +192,9 @@ Film render(const RenderJob& job, const Progress& progress) {
   film.rays_shadow = sum.rays.shadow;
   film.non_finite = sum.non_finite;
   film.noise = sum.covered ? std::sqrt(sum.squared_error / static_cast<double>(sum.covered)) : 0.0;
-  film.mean_samples = film.max_samples = samples_taken(job.samples_per_pixel);
+  const double least = samples_taken(job.samples_per_pixel);
+  film.mean_samples = sum.covered ? static_cast<double>(sum.samples) / static_cast<double>(sum.covered) : least;
+  film.max_samples = sum.covered ? sum.most_samples : least;
   return film;
 }
 

@@ -6,6 +6,8 @@
 #include "shaders_cpu/tone/srgb.h"
 #include "support/analytic_solids.h"
 #include "support/catch.h"
+#include "shaders_cpu/tone/curve.h"
+#include "shaders_cpu/tone/srgb.h"
 #include "support/studio_light.h"
 
 #include <algorithm>
@@ -251,4 +253,44 @@ TEST_CASE("An empty scene or an empty picture is no error", "[render]") {
   CHECK(std::all_of(film.radiance.begin(), film.radiance.end(), [](const Vec3f& c) { return c == Vec3f(0.0f); }));
   job.camera.width_px = job.camera.height_px = 0;
   CHECK(render(job, Silent()).size() == 0);
+}
+
+TEST_CASE("Pixels whose noise would be seen take more samples, others do not, and the light stays the same", "[render]") {
+  // A pale ball within reach of a small strong lamp: even where the whole lamp is seen, noisy in the half shadow.
+  const test::Ball ball(Vec3f(0.0f), 1.0f);
+  RenderJob job;
+  job.shell = &ball;
+  job.camera = test::camera_from_above(24, 2.4);
+  job.lighting = test::white_dome();
+  job.materials = test::of_albedo(0.8f);
+  job.samples_per_pixel = 16;
+  job.most_samples = 1024;
+  const Film even = render(job, Silent());  // no noise under an even dome but at the outline, which does not count
+  CHECK(even.mean_samples == 16.0);
+  CHECK(even.max_samples == 16.0);
+
+  job.lighting.dome.radiance = Vec3f(0.0f);
+  job.lighting.lamps.push_back({Vec3f(2.4f, 0.0f, 1.2f), 1.0f, Vec3f(3.0f)});  // beside the picture
+  const Film more = render(job, Silent());
+  CHECK(more.max_samples > 64.0);
+  CHECK(more.mean_samples > 16.0);
+  CHECK(more.mean_samples < 0.7 * more.max_samples);
+  job.most_samples = 0;
+  const Film base = render(job, Silent());
+  CHECK(base.max_samples == 16.0);
+  // Against a picture of many samples: no pixel off by more than four times the noise that may be seen, on the scale of print.
+  job.samples_per_pixel = 8192;
+  const Film reference = render(job, Silent());
+  const auto printed = [](const Vec3f& c) { return shaders_cpu::srgb_encode(shaders_cpu::tone(static_cast<double>(c.y))); };
+  double bias = 0.0, error = 0.0, base_error = 0.0;
+  for (std::size_t i = 0; i < reference.size(); ++i) {
+    if (reference.coverage[i] < 1.0f) continue;
+    const double off = printed(more.radiance[i]) - printed(reference.radiance[i]);
+    CHECK(std::abs(off) < 4.0 * kSeenNoise);
+    bias += off / static_cast<double>(reference.size());
+    error += off * off;
+    base_error += std::pow(printed(base.radiance[i]) - printed(reference.radiance[i]), 2);
+  }
+  CHECK(error < 0.3 * base_error);
+  CHECK(std::abs(bias) < 0.1 * kSeenNoise);
 }
