@@ -26,6 +26,9 @@ struct Spot {
   double growth, psi, scale;
 };
 
+// How large an element is against one at the lip.
+double size_of(const SurfaceFrame& f, const Spot& spot, double power) { return spot.scale * std::pow(f.scale, power); }
+
 struct Row {
   double first, last;  // growth
 };
@@ -96,7 +99,7 @@ scene::Bead bead(const scene::Scene& scene, const SurfaceFrame& f, double height
 }
 
 struct HornForm {
-  double length, breadth, tip, bend, lean, bore, half_opening;  // bore in diameters
+  double length, breadth, tip, bend, lean, bore, half_opening, growth;  // bore in diameters
 };
 
 scene::Horn horn(const scene::Scene& scene, const SurfaceFrame& f, const HornForm& form, double scale, std::uint32_t series) {
@@ -152,7 +155,8 @@ class Builder {
       l.from = from - (i > 0 ? kOverlap * step : 0.0);
       l.to = from + step + (i + 1 < pieces ? kOverlap * step : 0.0);
       const SurfaceFrame f = growth::surface_frame(shell_, l.growth, l.psi);
-      l.height = f.scale * s.height_mm;
+      l.height = std::pow(f.scale, s.growth) * s.height_mm;
+      l.power = s.growth;
       l.sunk = sunk_at(scene_, f);
       l.series = series;
       scene_.attached.ledges.push_back(l);
@@ -174,8 +178,8 @@ class Builder {
         l.to = from + (1.0 + kOverlap) * step;
         const SurfaceFrame f = growth::surface_frame(shell_, spot.growth, from + 0.5 * step);
         if (past_rim(scene_, spot.growth, f, 0.0)) continue;
-        l.height = f.scale * spot.scale * s.height_mm;
-        l.half_thickness = 0.5 * f.scale * s.thickness_mm;
+        l.height = size_of(f, spot, s.series.growth) * s.height_mm;
+        l.half_thickness = 0.5 * std::pow(f.scale, s.series.growth) * s.thickness_mm;
         l.tan_lean = std::tan(radians(s.lean_deg));
         l.sunk = sunk_at(scene_, f);
         l.series = series;
@@ -186,7 +190,7 @@ class Builder {
 
   void add(const specimen::Spine& s) {
     add_horns("spine", s.breadth_mm, spots(scene_, s.series, s.at_deg),
-              {s.length_mm, s.breadth_mm, s.tip, radians(s.bend_deg), radians(s.lean_deg), s.hollow, radians(0.5 * s.open_deg)},
+              {s.length_mm, s.breadth_mm, s.tip, radians(s.bend_deg), radians(s.lean_deg), s.hollow, radians(0.5 * s.open_deg), s.series.growth},
               new_series(colour_of(s.colour)));
   }
 
@@ -197,7 +201,7 @@ class Builder {
     if (s.shape.value != specimen::AttachedShape::kBead) {
       const bool tube = s.shape.value == specimen::AttachedShape::kTube;
       add_horns("attached", s.breadth_mm, places,
-                {s.height_mm, s.breadth_mm, tube ? 1.0 : kConeTip, 0.0, lean, tube ? kTubeBore : 0.0, 0.0}, series);
+                {s.height_mm, s.breadth_mm, tube ? 1.0 : kConeTip, 0.0, lean, tube ? kTubeBore : 0.0, 0.0, s.series.growth}, series);
       return;
     }
     std::vector<scene::Bead>& beads = scene_.attached.beads;
@@ -205,7 +209,7 @@ class Builder {
     std::vector<char> kept(places.size());
     parallel_for(places.size(), 1024, [&](std::size_t i) {
       const SurfaceFrame f = growth::surface_frame(shell_, places[i].growth, places[i].psi);
-      const double scale = f.scale * places[i].scale;
+      const double scale = size_of(f, places[i], s.series.growth);
       kept[i] = !past_rim(scene_, places[i].growth, f, 0.5 * scale * s.breadth_mm);
       made[i] = bead(scene_, f, scale * s.height_mm, scale * s.breadth_mm, lean, series);
     });
@@ -229,14 +233,14 @@ class Builder {
     bool holds = true;
     for (const Spot& spot : places) {
       const SurfaceFrame f = growth::surface_frame(shell_, spot.growth, spot.psi);
-      const double scale = f.scale * spot.scale;
+      const double scale = size_of(f, spot, form.growth);
       if (past_rim(scene_, spot.growth, f, 0.5 * scale * form.breadth)) continue;
       scene_.attached.horns.push_back(horn(scene_, f, form, scale, series));
       holds = holds && foot_holds(shell_, scene_.attached.horns.back());
     }
     if (!holds)
       faults_.add(breadth.where, fmt::format("[[{}]] breadth = {:g} mm: the whorl curves away under so broad a foot, which would hang "
-                                             "over; make the foot narrower, lean it less, or give a thicker wall",
+                                             "over; make the foot narrower, lean it less, begin it later or give a thicker wall",
                                              table, breadth.value));
   }
 

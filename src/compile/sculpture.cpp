@@ -16,17 +16,19 @@ constexpr double kDeepest = 0.8;        // of the wall
 constexpr double kPastLip = kTwoPi;     // sculpture that is not ended runs on past the lip, where the front cuts it
 
 Relief spread(const specimen::Stated<double>& height, const specimen::Stated<double>& onset, const specimen::Stated<double>& end,
-              const growth::CoilingLaw& law, double half_breadth_mm) {
+              double power, const growth::CoilingLaw& law, double half_breadth_mm) {
   Relief r;
   r.height = height / half_breadth_mm;
   r.onset = std::max(law.theta_start, kTwoPi * onset);
   r.end = kTwoPi * end >= law.theta_lip ? law.theta_lip + kPastLip : kTwoPi * end;
+  r.power = power;
+  r.least_scale = std::min(1.0, law.by_section.factor(r.onset));
   return r;
 }
 
 template <class Series>
 Relief repeated(const Series& series, double share, const growth::CoilingLaw& law, double half_breadth_mm) {
-  Relief r = spread(series.height_mm, series.onset, series.end, law, half_breadth_mm);
+  Relief r = spread(series.height_mm, series.onset, series.end, series.growth, law, half_breadth_mm);
   r.spacing = kTwoPi / series.per_whorl;
   r.crest = law.theta_lip - kTwoPi * series.behind_lip;
   r.growth_reach = 0.5 * share * r.spacing;
@@ -42,7 +44,7 @@ Relief repeated(const Series& series, double share, const growth::CoilingLaw& la
 growth::Sculpture sculpture_of(const specimen::Specimen& specimen, const growth::CoilingLaw& law, double half_breadth_mm) {
   growth::Sculpture sculpture;
   for (const specimen::Cord& cord : specimen.sculpture.cords) {
-    Relief r = spread(cord.height_mm, cord.onset, cord.end, law, half_breadth_mm);
+    Relief r = spread(cord.height_mm, cord.onset, cord.end, cord.growth, law, half_breadth_mm);
     r.psi = radians(cord.at_deg);
     r.psi_reach = radians(0.5 * cord.width_deg);
     sculpture.reliefs.push_back(r);
@@ -80,8 +82,8 @@ void build_sculpture(scene::Scene& scene, const specimen::Specimen& specimen, Fa
   if (highest > growth::kHighestRelief * scale) {
     const specimen::Stated<double> height = worst(table, 1.0);
     faults.add(height.where,
-               fmt::format("[[{}]] height = {:g} mm: all sculpture together rises {:.3g} mm in one direction; what is fused with "
-                           "this whorl may rise {:.3g} mm; make it lower, or spread it",
+               fmt::format("[[{}]] height = {:g} mm: all sculpture together rises {:.3g} mm in one direction, as at the lip; what is fused with "
+                           "this whorl may rise {:.3g} mm; make it lower, spread it, or let it begin later or grow with the whorl",
                            table, height.value, highest * half_breadth, growth::kHighestRelief * scale * half_breadth));
   }
   if (deepest * half_breadth > kDeepest * scene.wall.at_lip) {

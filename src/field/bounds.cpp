@@ -179,7 +179,7 @@ Interval Field::relief_bounds(const Box3& box, const Interval& theta, const Inte
   const Interval fade = relief_fade(t2);
   if (fade.hi == 0.0) return Interval(0.0);
   const Interval growth = growth_range(scene_, theta, rho, box);
-  const Interval h = half_breadth * scene_.sculpture.range(growth, psi_from, psi_span);
+  const Interval h = half_breadth * scene_.sculpture.range(growth, psi_from, psi_span, (1.0 / scene_.law.half_breadth) * half_breadth);
   return fade * (h + over_positive(0.5 * square(h), unit));
 }
 
@@ -322,14 +322,14 @@ double Field::steepness(const Term& term, const Box3& box) const noexcept {
                             near * scene::Pillar::kFillet * of_unit);
   }
   if (!scene_.sculpture.empty() && term.part == Part::kWhorl) {
-    const Interval growth = growth_range(scene_, s.at.theta, s.at.rho, box);
-    const growth::Sculpture::Slopes slope = scene_.sculpture.slopes(growth, s.psi_from, s.psi_span);
-    const Interval h = s.r * scene_.sculpture.range(growth, s.psi_from, s.psi_span);
+    const Interval growth = growth_range(scene_, s.at.theta, s.at.rho, box), scale = (1.0 / law.half_breadth) * s.r;
+    const growth::Sculpture::Slopes slope = scene_.sculpture.slopes(growth, s.psi_from, s.psi_span, scale);
+    const Interval h = s.r * scene_.sculpture.range(growth, s.psi_from, s.psi_span, scale);
     const Interval unit = s.r * o.normal_scale;
     const double rho_lo = std::max(s.at.rho.lo, 1e-3 * s.r.lo), tan = std::abs(scene_.front.tan_inclination);
     const double by_growth = (1.0 + tan * k * s.h.magnitude() / rho_lo + std::max(1.0, tan)) / rho_lo;
     const double by_psi = squeeze / (q_lo * s.r.lo) * std::hypot(1.0, drift * s.r.hi / rho_lo);
-    const double of_h = s.r.hi * (slope.by_growth * by_growth + slope.by_psi * by_psi) + k * h.magnitude() / rho_lo;
+    const double of_h = s.r.hi * (slope.by_growth * by_growth + slope.by_psi * by_psi) + k * (h.magnitude() + s.r.hi * slope.by_log_scale) / rho_lo;
     const double added = h.magnitude() * (1.0 + 0.5 * h.magnitude() / unit.lo);
     steep += of_h * (1.0 + h.magnitude() / unit.lo) + 0.5 * square(h).hi / unit.lo * (k / rho_lo + o.scale_slope * by_psi / o.normal_scale.lo);
     if (t2.lo < kInnerFull || t2.hi > kOuterFull)

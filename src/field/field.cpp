@@ -95,7 +95,7 @@ double Field::relief(const InSection& at, double plain, double unit) const noexc
   const double fade = relief_fade(1.0 - 2.0 * plain / unit);
   if (fade == 0.0) return 0.0;
   const double lead = growth::front_lead(scene_.front.tan_inclination, at.s.depth, {at.rho, at.z});
-  const double h = at.s.half_breadth * scene_.sculpture.height(at.theta - lead, at.psi);
+  const double h = at.s.half_breadth * scene_.sculpture.height(at.theta - lead, at.psi, at.s.half_breadth / scene_.law.half_breadth);
   return fade * (h + 0.5 * h * h / unit);
 }
 

@@ -1,9 +1,9 @@
 // SPDX-License-Identifier: Apache-2.0
 // The mouth: the last whorl's outline where earlier whorls leave it bare.
-#include "fit/bracketed_root.h"
 #include "fit/extents.h"
 #include "fit/whorl_ellipse.h"
 #include "growth/outline.h"
+#include "math/bracketed_root.h"
 
 #include <algorithm>
 #include <limits>

@@ -2,9 +2,9 @@
 // One small function a definition.
 #include "fit/predict.h"
 
-#include "fit/bracketed_root.h"
 #include "fit/extents.h"
 #include "fit/whorl_ellipse.h"
+#include "math/bracketed_root.h"
 
 #include <cmath>
 

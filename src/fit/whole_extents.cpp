@@ -1,10 +1,10 @@
 // SPDX-License-Identifier: Apache-2.0
 // Height and width of the whole shell: supports of spirals, with the growth front as their end.
-#include "fit/bracketed_root.h"
 #include "fit/extents.h"
 #include "fit/whorl_ellipse.h"
 #include "growth/extents.h"
 #include "growth/outline.h"
+#include "math/bracketed_root.h"
 
 #include <algorithm>
 #include <array>

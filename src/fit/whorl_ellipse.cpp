@@ -2,7 +2,7 @@
 // Supports and flanks of an ellipse; sutures by bracketing on its outline.
 #include "fit/whorl_ellipse.h"
 
-#include "fit/bracketed_root.h"
+#include "math/bracketed_root.h"
 
 #include <cmath>
 

@@ -24,7 +24,7 @@ HalfPlanePoint raised_point(const Exterior& shell, double theta, double psi) {
   const double along_rho = b.rho - a.rho, along_z = b.z - a.z, length = std::hypot(along_rho, along_z);
   const Station s = shell.law.at(theta);
   const double growth = theta - front_lead(shell.tan_inclination, s.depth, p);
-  const double height = s.half_breadth * shell.sculpture.height(growth, psi);
+  const double height = s.half_breadth * shell.sculpture.height(growth, psi, s.half_breadth / shell.law.half_breadth);
   // Section angles run from outwards to the apex, against the sense of (rho, z): the normal is to the left of their way.
   p.rho += -along_z / length * height;
   p.z += along_rho / length * height;

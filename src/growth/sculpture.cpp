@@ -23,6 +23,10 @@ Interval ramp_range(const Relief& r, Interval growth) {
   return {std::min(a, b), std::max({a, b, ramp(r, top)})};
 }
 
+// What the height, in half-breadths, is on a whorl of that size against the one at the lip.
+double of_size(const Relief& r, double scale) { return r.power == 1.0 ? 1.0 : std::pow(scale, r.power - 1.0); }
+Interval of_size(const Relief& r, Interval scale) { return hull(Interval(of_size(r, scale.lo)), Interval(of_size(r, scale.hi))); }
+
 struct Crest {
   double at, scale;
 };
@@ -56,7 +60,7 @@ bool reaches(const Relief& r, Interval growth, double psi_from, double psi_span)
 
 }  // namespace
 
-double Sculpture::height(double growth, double psi) const noexcept {
+double Sculpture::height(double growth, double psi, double scale) const noexcept {
   double sum = 0.0;
   for (const Relief& r : reliefs) {
     if (growth <= r.onset || growth >= r.end) continue;
@@ -72,12 +76,12 @@ double Sculpture::height(double growth, double psi) const noexcept {
         profile += c.scale * wyvill(v2 + squared_share(growth - c.at, r.growth_reach));
       }
     }
-    sum += r.height * ramp(r, growth) * profile;
+    sum += r.height * of_size(r, scale) * ramp(r, growth) * profile;
   }
   return sum;
 }
 
-Interval Sculpture::range(Interval growth, double psi_from, double psi_span) const noexcept {
+Interval Sculpture::range(Interval growth, double psi_from, double psi_span, Interval scale) const noexcept {
   Interval sum(0.0);
   for (const Relief& r : reliefs) {
     if (!reaches(r, growth, psi_from, psi_span)) continue;
@@ -103,18 +107,19 @@ Interval Sculpture::range(Interval growth, double psi_from, double psi_span) con
         }
       }
     }
-    sum = sum + r.height * (ramp_range(r, growth) * profile);
+    sum = sum + r.height * (of_size(r, scale) * (ramp_range(r, growth) * profile));
   }
   return sum;
 }
 
-Sculpture::Slopes Sculpture::slopes(Interval growth, double psi_from, double psi_span) const noexcept {
+Sculpture::Slopes Sculpture::slopes(Interval growth, double psi_from, double psi_span, Interval scale) const noexcept {
   Slopes sum;
   for (const Relief& r : reliefs) {
     if (!reaches(r, growth, psi_from, psi_span)) continue;
     const bool unbroken = r.spacing == 0.0;
     const double together = unbroken ? 1.0 : 1.0 + std::ceil(2.0 * (r.growth_reach / r.spacing + kMostShift * r.irregularity));
-    const double most = std::abs(r.height) * (1.0 + kMostVariation * r.irregularity) * together;
+    const double most = std::abs(r.height) * (1.0 + kMostVariation * r.irregularity) * together * of_size(r, scale).hi;
+    sum.by_log_scale += std::abs(r.power - 1.0) * most;
     sum.by_growth += most * (kSteepestSmoothStep / kRamp + (unbroken ? 0.0 : kSteepestWyvill / r.growth_reach));
     if (r.psi_reach > 0.0) sum.by_psi += most * kSteepestWyvill / r.psi_reach;
   }
@@ -124,7 +129,7 @@ Sculpture::Slopes Sculpture::slopes(Interval growth, double psi_from, double psi
 Interval Sculpture::extremes(double psi) const noexcept {
   Interval sum(0.0);
   for (const Relief& r : reliefs) {
-    const double most = r.height * (1.0 + kMostVariation * r.irregularity) *
+    const double most = r.height * (1.0 + kMostVariation * r.irregularity) * of_size(r, Interval(r.least_scale, 1.0)).hi *
                         wyvill(squared_share(std::remainder(psi - r.psi, kTwoPi), r.psi_reach));
     (most > 0.0 ? sum.hi : sum.lo) += most;
   }

@@ -21,6 +21,8 @@ struct Relief {
   double onset = 0.0, end = 0.0;
   double irregularity = 0.0;  // 0 .. 1: crests shift by up to a quarter of their spacing and vary by half in height
   std::uint64_t seed = 0;
+  double power = 1.0;         // of the whorl's size with which it grows: 1 in proportion, 0 alike on every whorl
+  double least_scale = 1.0;   // size of the whorl at the onset / at the lip
 };
 
 /// Sculpture fused with a whorl rises to at most this share of the outline's own scale: farther out the field no longer has a
@@ -33,14 +35,15 @@ class Sculpture {
   std::vector<Relief> reliefs;
 
   bool empty() const { return reliefs.empty(); }
-  double height(double growth, double psi) const noexcept;
+  /// `scale`: size of the whorl there / at the lip.
+  double height(double growth, double psi, double scale) const noexcept;
   /// Bounds over a range of growth and the section angles [psi_from, psi_from + psi_span]; never too narrow.
-  Interval range(Interval growth, double psi_from, double psi_span) const noexcept;
-  /// Upper bounds of the derivatives' absolute values by growth and by section angle, over the same.
+  Interval range(Interval growth, double psi_from, double psi_span, Interval scale) const noexcept;
+  /// Upper bounds of the derivatives' absolute values by growth, by section angle and by the logarithm of the scale, over the same.
   struct Slopes {
-    double by_growth = 0.0, by_psi = 0.0;
+    double by_growth = 0.0, by_psi = 0.0, by_log_scale = 0.0;
   };
-  Slopes slopes(Interval growth, double psi_from, double psi_span) const noexcept;
+  Slopes slopes(Interval growth, double psi_from, double psi_span, Interval scale) const noexcept;
   /// Bounds of the height in one direction over all of growth.
   Interval extremes(double psi) const noexcept;
   /// The same over all directions; holds 0.

@@ -49,7 +49,7 @@ SurfaceFrame surface_frame(const Exterior& shell, double growth, double psi) {
   const Vec3 on = on_growth_line(shell, growth + kStep, psi) - on_growth_line(shell, growth - kStep, psi);
   if (f.forward.dot(on) < 0.0) f.forward = -f.forward;
   f.point = in_space(plain_point(shell, f.theta, psi), f.theta);
-  if (!shell.sculpture.empty()) f.point += f.normal * (s.half_breadth * shell.sculpture.height(growth, psi));
+  if (!shell.sculpture.empty()) f.point += f.normal * (s.half_breadth * shell.sculpture.height(growth, psi, f.scale));
   return f;
 }
 

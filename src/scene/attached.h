@@ -45,6 +45,7 @@ struct Ledge {
   double growth = 0.0, psi = 0.0;     // of the middle; growth along growth lines
   double reach = 0.0;                 // half-width: round the section, radians; 0: all round
   double height = 0.0, half_thickness = 0.0;  // mm at `growth`, growing with the whorl; half_thickness of lamellae only
+  double power = 1.0;                 // of the whorl's size, with which the height goes along a stripe
   double tan_lean = 0.0;              // of lamellae, out of the growth front towards the lip
   double sunk = 0.0;                  // how far it reaches into the wall
   double from = 0.0, to = 0.0;        // of the piece, along its run: section angle or growth

@@ -6,7 +6,7 @@ namespace whorl::specimen {
 namespace {
 
 Recurrence series_of(const TableReader& t) {
-  return {t.number("per_whorl"), t.number("behind_lip"), t.number("irregularity"), t.number("onset"), t.number("end"), t.whole("seed")};
+  return {t.number("per_whorl"), t.number("behind_lip"), t.number("irregularity"), t.number("onset"), t.number("end"), t.whole("seed"), t.number("growth")};
 }
 
 }  // namespace
@@ -14,7 +14,7 @@ Recurrence series_of(const TableReader& t) {
 Attachments SceneReader::read_attachments() {
   Attachments a;
   for (const TableReader& t : list("stripe", &root_))
-    a.stripes.push_back({t.number("at"), t.number("width"), t.number("height"), t.number("onset"), t.number("end"), t.colour("colour")});
+    a.stripes.push_back({t.number("at"), t.number("width"), t.number("height"), t.number("onset"), t.number("end"), t.number("growth"), t.colour("colour")});
   for (const TableReader& t : list("lamella", &root_))
     a.lamellae.push_back({series_of(t), t.number("height"), t.number("thickness"), t.number("at"), t.number("width"), t.number("lean"),
                           t.optional_colour("colour")});

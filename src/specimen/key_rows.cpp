@@ -146,6 +146,7 @@ constexpr KeyRow kRows[] = {
     {"cord", "height", kNumber, kRelief, "mm", "", kRequired, "height at the lip; a negative one cuts a groove"},
     {"cord", "onset", kNumber, kOnset, "whorls", "", "0.0", "where it begins to rise, the embryonic shell's end at the earliest"},
     {"cord", "end", kNumber, kEnd, "whorls", "", "40.0", "where it has ended, counted from the pole"},
+    {"cord", "growth", kNumber, {0.0, 2.0}, "", "", "1.0", "power of the whorl's size that its size goes with: 1 in proportion, 0 alike on every whorl"},
     {"rib", "per_whorl", kNumber, {0.1, 1000.0}, "", "", kRequired, "number in a whorl"},
     {"rib", "height", kNumber, kRelief, "mm", "", kRequired, "height at the lip; a negative one cuts"},
     {"rib", "breadth", kNumber, {0.02, 1.0}, "", "", "0.6", "breadth of the foot / spacing"},
@@ -156,6 +157,7 @@ constexpr KeyRow kRows[] = {
     {"rib", "seed", kWhole, kSeed, "", "", "1", "of the irregularity"},
     {"rib", "onset", kNumber, kOnset, "whorls", "", "0.0", "where ribs begin to rise, the embryonic shell's end at the earliest"},
     {"rib", "end", kNumber, kEnd, "whorls", "", "40.0", "where they have ended, counted from the pole"},
+    {"rib", "growth", kNumber, {0.0, 2.0}, "", "", "1.0", "power of the whorl's size that its size goes with: 1 in proportion, 0 alike on every whorl"},
     {"nodule", "per_whorl", kNumber, {0.1, 1000.0}, "", "", kRequired, "number in a whorl"},
     {"nodule", "height", kNumber, kRelief, "mm", "", kRequired, "height at the lip; a negative one is a pit"},
     {"nodule", "length", kNumber, {0.02, 1.0}, "", "", "0.6", "length of the foot along growth / spacing"},
@@ -166,6 +168,7 @@ constexpr KeyRow kRows[] = {
     {"nodule", "seed", kWhole, kSeed, "", "", "1", "of the irregularity"},
     {"nodule", "onset", kNumber, kOnset, "whorls", "", "0.0", "where nodules begin to rise, the embryonic shell's end at the earliest"},
     {"nodule", "end", kNumber, kEnd, "whorls", "", "40.0", "where they have ended, counted from the pole"},
+    {"nodule", "growth", kNumber, {0.0, 2.0}, "", "", "1.0", "power of the whorl's size that its size goes with: 1 in proportion, 0 alike on every whorl"},
 
     {"stripe", "at", kNumber, kAround, "degrees", "", kRequired, "direction of the stripe's middle"},
     {"stripe", "width", kNumber, {0.5, 180.0}, "degrees", "", kRequired, "width round the section"},
@@ -173,6 +176,7 @@ constexpr KeyRow kRows[] = {
     {"stripe", "colour", kColour, kNothing, "", "", kRequired, "its colour"},
     {"stripe", "onset", kNumber, kOnset, "whorls", "", "0.0", "where it begins, the embryonic shell's end at the earliest"},
     {"stripe", "end", kNumber, kEnd, "whorls", "", "40.0", "where it ends, the lip at the latest"},
+    {"stripe", "growth", kNumber, {0.0, 2.0}, "", "", "1.0", "power of the whorl's size that its size goes with: 1 in proportion, 0 alike on every whorl"},
 
     {"lamella", "per_whorl", kNumber, {0.1, 1000.0}, "", "", kRequired, "number in a whorl"},
     {"lamella", "height", kNumber, kStanding, "mm", "", kRequired, "height over the surface at the lip"},
@@ -185,6 +189,7 @@ constexpr KeyRow kRows[] = {
     {"lamella", "seed", kWhole, kSeed, "", "", "1", "of the irregularity"},
     {"lamella", "onset", kNumber, kOnset, "whorls", "", "0.0", "none stands before, nor on the embryonic shell"},
     {"lamella", "end", kNumber, kEnd, "whorls", "", "40.0", "none stands after"},
+    {"lamella", "growth", kNumber, {0.0, 2.0}, "", "", "1.0", "power of the whorl's size that its size goes with: 1 in proportion, 0 alike on every whorl"},
     {"lamella", "colour", kColour, kNothing, "", "", kNoDefault, "its colour; without it that of the outside"},
 
     {"spine", "per_whorl", kNumber, {0.1, 1000.0}, "", "", kRequired, "number in a whorl"},
@@ -201,6 +206,7 @@ constexpr KeyRow kRows[] = {
     {"spine", "seed", kWhole, kSeed, "", "", "1", "of the irregularity"},
     {"spine", "onset", kNumber, kOnset, "whorls", "", "0.0", "none stands before, nor on the embryonic shell"},
     {"spine", "end", kNumber, kEnd, "whorls", "", "40.0", "none stands after"},
+    {"spine", "growth", kNumber, {0.0, 2.0}, "", "", "1.0", "power of the whorl's size that its size goes with: 1 in proportion, 0 alike on every whorl"},
     {"spine", "colour", kColour, kNothing, "", "", kNoDefault, "its colour; without it that of the outside"},
 
     {"attached", "shape", kWord, kNothing, "", "bead|cone|tube", kRequired, "a rounded knob, a pointed cone, an open tube"},
@@ -218,6 +224,7 @@ constexpr KeyRow kRows[] = {
     {"attached", "seed", kWhole, kSeed, "", "", "1", "of the irregularity"},
     {"attached", "onset", kNumber, kOnset, "whorls", "", "0.0", "none stands before, nor on the embryonic shell"},
     {"attached", "end", kNumber, kEnd, "whorls", "", "40.0", "none stands after"},
+    {"attached", "growth", kNumber, {0.0, 2.0}, "", "", "1.0", "power of the whorl's size that its size goes with: 1 in proportion, 0 alike on every whorl"},
 
     {"encruster", "scene", kText, kLine, "", "", kRequired, "scene file of the other shell, relative to the folder of this one"},
     {"encruster", "behind_lip", kNumber, {0.0, 40.0}, "whorls", "", kRequired, "place along growth, counted back from the lip"},

@@ -2,6 +2,7 @@
 // Measurement files in TOML.
 #include "specimen/measurement_toml.h"
 
+#include "specimen/identity_reader.h"
 #include "specimen/measurement_rows.h"
 #include "specimen/outline_points.h"
 #include "specimen/preserved.h"
@@ -30,7 +31,7 @@ class Reader {
     defaults_.unit = std::string(words_of(units).at(static_cast<std::size_t>(top.word<Unit>("unit").value)));
     if (const auto step = optional(top, "step")) defaults_.step = step->value;
     specimen_.tolerance = 0.01 * top.number("tolerance").value;
-    read_identity();
+    read_specimen();
     read_held();
     read_wall();
     for (const TableReader& t : list("preserved")) specimen_.preserved.push_back(preserved_of(t));
@@ -94,18 +95,10 @@ class Reader {
     return value ? std::optional(value->value) : std::nullopt;
   }
 
-  void read_identity() {
+  void read_specimen() {
     const TableReader t = table("specimen");
     specimen_.where = t.where();
-    Identity& identity = specimen_.identity;
-    identity.name = t.text("name");
-    identity.coiling = t.word<Coiling>("coiling");
-    identity.catalogue = t.text("catalogue");
-    identity.author = t.text("author");
-    identity.locality = t.text("locality");
-    identity.note = t.text("note");
-    identity.licence = t.text("licence");
-    identity.mineral = t.word<Mineral>("mineral");
+    specimen_.identity = read_identity(t);
     specimen_.mould = t.word<int>("measured").value == 1;
   }
 

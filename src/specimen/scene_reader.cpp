@@ -2,6 +2,7 @@
 // The specimen, table by table.
 #include "specimen/scene_reader.h"
 
+#include "specimen/identity_reader.h"
 #include "specimen/preserved.h"
 
 #include <fmt/format.h>
@@ -80,20 +81,6 @@ std::vector<TableReader> SceneReader::list(std::string_view name, const toml::ta
     }
   }
   return readers;
-}
-
-Identity SceneReader::read_identity() {
-  const TableReader t = table("specimen");
-  Identity identity;
-  identity.name = t.text("name");
-  identity.coiling = t.word<Coiling>("coiling");
-  identity.catalogue = t.text("catalogue");
-  identity.author = t.text("author");
-  identity.locality = t.text("locality");
-  identity.note = t.text("note");
-  identity.licence = t.text("licence");
-  identity.mineral = t.word<Mineral>("mineral");
-  return identity;
 }
 
 Growth SceneReader::read_growth() {
@@ -272,7 +259,7 @@ Specimen SceneReader::read() {
   top.refuse_unknown_keys();
   top.whole("format");
   Specimen specimen;
-  specimen.identity = read_identity();
+  specimen.identity = read_identity(table("specimen"));
   specimen.growth = read_growth();
   specimen.section = read_section();
   specimen.size = read_size();

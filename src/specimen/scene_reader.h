@@ -25,7 +25,6 @@ class SceneReader {
   TableReader table(std::string_view name);
   /// The tables of a list in double brackets.
   std::vector<TableReader> list(std::string_view name, const toml::table* parent);
-  Identity read_identity();
   Growth read_growth();
   Section read_section();
   Size read_size();

@@ -7,15 +7,15 @@ namespace whorl::specimen {
 Sculpture SceneReader::read_sculpture() {
   Sculpture sculpture;
   for (const TableReader& t : list("cord", &root_))
-    sculpture.cords.push_back({t.number("at"), t.number("width"), t.number("height"), t.number("onset"), t.number("end")});
+    sculpture.cords.push_back({t.number("at"), t.number("width"), t.number("height"), t.number("onset"), t.number("end"), t.number("growth")});
   for (const TableReader& t : list("rib", &root_))
     sculpture.ribs.push_back({t.number("per_whorl"), t.number("height"), t.number("breadth"), t.number("at"), t.number("width"),
                               t.number("behind_lip"), t.number("irregularity"), t.number("onset"), t.number("end"),
-                              t.whole("seed")});
+                              t.whole("seed"), t.number("growth")});
   for (const TableReader& t : list("nodule", &root_))
     sculpture.nodules.push_back({t.number("per_whorl"), t.number("height"), t.number("length"), t.number("at"), t.number("width"),
                                  t.number("behind_lip"), t.number("irregularity"), t.number("onset"), t.number("end"),
-                                 t.whole("seed")});
+                                 t.whole("seed"), t.number("growth")});
   return sculpture;
 }
 

@@ -156,17 +156,19 @@ struct Colouring {
   std::vector<EdgePattern> patterns;
 };
 
-/// Raised places fused with the wall; heights in mm at the lip (negative cuts), growing with the whorl.
+/// Raised places fused with the wall; heights in mm at the lip (negative cuts), which go with a power of the whorl's size: `growth`.
 struct Cord {
-  Stated<double> at_deg, width_deg, height_mm, onset, end;
+  Stated<double> at_deg, width_deg, height_mm, onset, end, growth;
 };
 struct Rib {
   Stated<double> per_whorl, height_mm, breadth, at_deg, width_deg, behind_lip, irregularity, onset, end;
   Stated<int> seed;
+  Stated<double> growth;
 };
 struct Nodule {
   Stated<double> per_whorl, height_mm, length, at_deg, width_deg, behind_lip, irregularity, onset, end;
   Stated<int> seed;
+  Stated<double> growth;
 };
 struct Sculpture {
   std::vector<Cord> cords;
@@ -178,11 +180,12 @@ struct Sculpture {
 struct Recurrence {
   Stated<double> per_whorl, behind_lip, irregularity, onset, end;
   Stated<int> seed;
+  Stated<double> growth;
 };
 
-/// Solids that stand on the shell, each of its own colour; sizes in mm at the lip, growing with the whorl.
+/// Solids that stand on the shell, each of its own colour; sizes in mm at the lip, which go with a power of the whorl's size: `growth`.
 struct Stripe {
-  Stated<double> at_deg, width_deg, height_mm, onset, end;
+  Stated<double> at_deg, width_deg, height_mm, onset, end, growth;
   Stated<Colour> colour;
 };
 struct Lamella {

@@ -26,7 +26,7 @@ double lamella(const scene::Ledge& l, const field::Field::OnTube& at) noexcept {
 }
 
 double stripe(const scene::Ledge& l, double scale_there, const field::Field::OnTube& at) noexcept {
-  const double height = l.height * at.scale / scale_there;
+  const double height = l.height * (l.power == 1.0 ? at.scale / scale_there : std::pow(at.scale / scale_there, l.power));
   const double v = std::remainder(at.psi - l.psi, kTwoPi) / l.reach, e = std::max(0.0, at.elevation) / height;
   // An upright half ellipse; its lesser half-axis makes a length of it.
   return std::min(height, 0.5 * l.reach * at.rho) * (1.0 - std::hypot(v, e));
@@ -55,9 +55,9 @@ Box3 box_of(const scene::Ledge& l, const field::Field& field) {
   const growth::Outline& outline = scene.outlines[scene.stations.front().outer];
   Box3 box;
   constexpr int kAlong = 8, kUp = 2;
-  const double scale = scene.law.at(l.to > l.from && l.run == scene::Ledge::Run::kAlongGrowth ? l.to : l.growth).half_breadth /
+  const double whorl = scene.law.at(l.to > l.from && l.run == scene::Ledge::Run::kAlongGrowth ? l.to : l.growth).half_breadth /
                        scene.law.at(l.growth).half_breadth;
-  const double top = l.height * scale;
+  const double top = l.height * std::max(1.0, std::pow(whorl, l.power));
   const bool round_section = l.run == scene::Ledge::Run::kRoundSection;
   // Corners of a grid over the piece, from its foot to its top.
   const auto take = [&](double growth, double psi, double up) {

@@ -164,7 +164,9 @@ TEST_CASE("Bounds and steepness hold with sculpture, raised and cut, regular and
         {-0.04, -0.9, 0.15, 0.0, 0.0, 0.0, start + 3.0, lip - 2.0, 0.0, 0},                // a groove that begins and ends
         {0.08, 0.5, 1.4, kTwoPi / 13.0, lip, 0.35 * kTwoPi / 13.0, start, lip + kTwoPi, 0.0, 0},
         {0.01, 0.0, 0.0, kTwoPi / 90.0, lip, 0.5 * kTwoPi / 90.0, start, lip + kTwoPi, 0.7, 5},
-        {0.05, 0.4, 0.3, kTwoPi / 13.0, lip, 0.4 * kTwoPi / 13.0, start, lip + kTwoPi, 0.5, 6}};
+        {0.05, 0.4, 0.3, kTwoPi / 13.0, lip, 0.4 * kTwoPi / 13.0, start, lip + kTwoPi, 0.5, 6},
+        {0.02, 1.5, 0.4, 0.0, 0.0, 0.0, lip - 2.2 * kTwoPi, lip + kTwoPi, 0.0, 0, 0.0},    // alike on every whorl
+        {0.02, 2.6, 0.4, kTwoPi / 7.0, lip, 0.4 * kTwoPi / 7.0, lip - 2.2 * kTwoPi, lip + kTwoPi, 0.4, 7, 1.8}};
   };
   test::ShellPlan tall = test::tall_plan(), lobed = test::globose_plan();
   lobed.inclination_deg = 25.0;

@@ -153,6 +153,27 @@ TEST_CASE("Self-similar sculpture on a self-similar shell scales by W a turn", "
   CHECK(worst < 1e-6);  // check value C26: f(W x) = W f(x)
 }
 
+TEST_CASE("Sculpture grows with the stated power of the whorl's size", "[field][sculpture]") {
+  for (const double power : {0.0, 0.5, 1.6}) {
+    const test::Shell shell(open_coil(14.0), [&](scene::Scene& scene) {
+      growth::Relief cord;
+      cord.height = 0.04;
+      cord.psi = 0.6;
+      cord.psi_reach = 0.3;
+      cord.onset = scene.law.theta_start;
+      cord.end = scene.law.theta_lip + kTwoPi;
+      cord.power = power;
+      scene.sculpture.reliefs = {cord};
+    });
+    CAPTURE(power);
+    // W = 2: at each earlier whorl 2^-power of 0.04 half-breadths at the lip.
+    for (const double whorls : {0.6, 1.2, 1.9}) {
+      const double theta = shell.scene.law.theta_lip - kTwoPi * whorls;
+      CHECK(height_at(shell, theta, 0.6) == Approx(0.04 * shell.scene.law.half_breadth * std::pow(2.0, -power * whorls)).epsilon(0.01));
+    }
+  }
+}
+
 TEST_CASE("Stated sizes are measured over the sculpture", "[compile][sculpture]") {
   test::ShellPlan plan = open_coil(0.0);
   plan.size_kind = specimen::SizeKind::kShellWidth;
@@ -163,6 +184,7 @@ TEST_CASE("Stated sizes are measured over the sculpture", "[compile][sculpture]"
   cord.width_deg.value = 30.0;
   cord.height_mm.value = 1.0;
   cord.end.value = 40.0;
+  cord.growth.value = 1.0;
   specimen.sculpture.cords = {cord};
   const scene::Scene scene = compile::compile_scene(specimen);
   CHECK(scene.sculpture.reliefs[0].height * scene.law.half_breadth == Approx(1.0).epsilon(1e-4));

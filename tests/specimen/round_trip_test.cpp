@@ -95,10 +95,10 @@ TEST_CASE("Every key of a scene arrives with its value", "[specimen]") {
   };
   REQUIRE((s.sculpture.cords.size() == 1 && s.sculpture.ribs.size() == 1 && s.sculpture.nodules.size() == 1));
   const Cord& cord = s.sculpture.cords[0];
-  CHECK((cord.at_deg == 15.0 && cord.width_deg == 11.0 && cord.height_mm == 0.125 && cord.onset == 1.5 && cord.end == 6.5));
+  CHECK((cord.at_deg == 15.0 && cord.width_deg == 11.0 && cord.height_mm == 0.125 && cord.onset == 1.5 && cord.end == 6.5 && cord.growth == 0.75));
   const auto is_series = [](const auto& x, int seed) {
     return x.per_whorl == 13.0 && x.height_mm == 0.0625 && x.at_deg == -25.0 && x.width_deg == 75.0 && x.behind_lip == 0.03 &&
-           x.irregularity == 0.3 && x.seed == seed && x.onset == 1.25 && x.end == 6.25;
+           x.irregularity == 0.3 && x.seed == seed && x.onset == 1.25 && x.end == 6.25 && x.growth == 0.5;
   };
   CHECK((is_series(s.sculpture.ribs[0], 8) && s.sculpture.ribs[0].breadth == 0.7));
   CHECK((is_series(s.sculpture.nodules[0], 9) && s.sculpture.nodules[0].length == 0.8));
@@ -137,9 +137,10 @@ TEST_CASE("Every key of a scene arrives with its value", "[specimen]") {
   REQUIRE((s.attachments.spines.size() == 1 && s.attachments.attached.size() == 1));
   const Stripe& stripe = s.attachments.stripes[0];
   CHECK((stripe.at_deg == 20.0 && stripe.width_deg == 7.0 && stripe.height_mm == 0.4 && stripe.onset == 1.75 && stripe.end == 6.0));
+  CHECK(stripe.growth == 1.25);
   CHECK(same(stripe.colour, 0x21, 10, 11));
   const auto recurs = [](const Recurrence& r, int seed) {
-    return r.per_whorl == 13.0 && r.behind_lip == 0.03 && r.irregularity == 0.3 && r.seed == seed && r.onset == 1.25 && r.end == 6.25;
+    return r.per_whorl == 13.0 && r.behind_lip == 0.03 && r.irregularity == 0.3 && r.seed == seed && r.onset == 1.25 && r.end == 6.25 && r.growth == 0.5;
   };
   const Lamella& lamella = s.attachments.lamellae[0];
   CHECK((recurs(lamella.series, 10) && lamella.height_mm == 0.0625 && lamella.thickness_mm == 0.2 && lamella.lean_deg == 15.0));

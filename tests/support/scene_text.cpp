@@ -69,17 +69,18 @@ SceneText SceneText::with_every_key() {
   scene.set("pattern", "variation", "0.15").set("pattern", "threshold", "1.75");
   pigment("pattern", "14");
   scene.set("cord", "at", "15").set("cord", "width", "11").set("cord", "height", "0.125").set("cord", "onset", "1.5");
-  scene.set("cord", "end", "6.5");
+  scene.set("cord", "end", "6.5").set("cord", "growth", "0.75");
   const auto series = [&scene](const char* table, const char* seed) {
     scene.set(table, "per_whorl", "13").set(table, "height", "0.0625").set(table, "at", "-25").set(table, "width", "75");
     scene.set(table, "behind_lip", "0.03").set(table, "irregularity", "0.3").set(table, "seed", seed);
-    scene.set(table, "onset", "1.25").set(table, "end", "6.25");
+    scene.set(table, "onset", "1.25").set(table, "end", "6.25").set(table, "growth", "0.5");
   };
   series("rib", "8");
   scene.set("rib", "breadth", "0.7");
   series("nodule", "9");
   scene.set("nodule", "length", "0.8");
   scene.set("stripe", "at", "20").set("stripe", "width", "7").set("stripe", "height", "0.4").set("stripe", "onset", "1.75");
+  scene.set("stripe", "growth", "1.25");
   scene.set("stripe", "end", "6").set("stripe", "colour", "\"#210a0b\"");
   series("lamella", "10");
   scene.set("lamella", "thickness", "0.2").set("lamella", "lean", "15").set("lamella", "colour", "\"#220a0b\"");

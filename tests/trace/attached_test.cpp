@@ -152,6 +152,28 @@ TEST_CASE("A stripe runs from onset to lip without a gap, as high as stated", "[
   }
 }
 
+TEST_CASE("What stands on the shell grows with the stated power of the whorl's size", "[attached]") {
+  for (const double power : {0.0, 0.5, 1.5}) {
+    const std::string growth = "growth = " + std::to_string(power) + "\n";
+    const AttachedShell shell(test::open_coil_scene() + "[[spine]]\nper_whorl = 4\nlength = 3\nbreadth = 0.5\nat = 80\nbehind_lip = 0.1\nonset = 1.5\n" + growth +
+                              "[[attached]]\nshape = \"bead\"\nper_whorl = 4\nheight = 0.5\nbreadth = 0.7\nat = 30\nbehind_lip = 0.1\nonset = 1.5\n"
+                              "colour = \"#204060\"\n" + growth +
+                              "[[stripe]]\nat = -30\nwidth = 15\nheight = 0.6\nonset = 1.5\ncolour = \"#602010\"\n" + growth);
+    CAPTURE(power);
+    for (const double behind : {0.1, 1.1, 2.1}) {
+      const auto height = [&](double psi) {
+        const growth::SurfaceFrame f = frame_at(shell, behind, psi);
+        return farthest_held(shell.attached, f.point, f.normal, 5.0);
+      };
+      const double scale = std::pow(2.0, -power * behind);  // W = 2; no inclination
+      CAPTURE(behind);
+      CHECK(height(80.0) == Approx(3.0 * scale).epsilon(0.01));
+      CHECK(height(30.0) == Approx(0.5 * scale).epsilon(0.01));
+      CHECK(height(-30.0) == Approx(0.6 * scale).epsilon(0.012));
+    }
+  }
+}
+
 TEST_CASE("As many stand on a whorl as stated", "[attached]") {
   const AttachedShell shell(test::open_coil_scene() +
                             "[[attached]]\nshape = \"bead\"\nper_whorl = 17\nrows = 4\nwidth = 360\nheight = 0.3\nbreadth = 0.4\nat = 0\n"

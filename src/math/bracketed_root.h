@@ -4,7 +4,7 @@
 
 #include <cmath>
 
-namespace whorl::fit {
+namespace whorl {
 
 /// The place in [a, b] where f changes sign; fa = f(a), fb = f(b) differ in sign. Regula falsi with the Illinois step
 /// (Dowell & Jarratt 1971, BIT 11: 168-174), which keeps the bracket and converges faster than bisection.
@@ -59,4 +59,4 @@ double greatest_value(const F& f, double a, double b) {
   return std::fmax(fx, fy);
 }
 
-}  // namespace whorl::fit
+}  // namespace whorl
