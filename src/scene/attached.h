@@ -14,8 +14,8 @@
 namespace whorl::scene {
 
 /// A knob: the unit ball in the coordinates rows * (p - centre), rows being the semi-axes' directions over their lengths. The third
-/// points away from the shell; below the equator that axis is shorter, `below` times as steep. A million of them count: 60 bytes.
-struct Bead {
+/// points away from the shell; below the equator that axis is shorter, `below` times as steep. A million of them count: one line of the cache each.
+struct alignas(64) Bead {
   Vec3f centre;
   Vec3f rows[3];
   float below = 1.0f;

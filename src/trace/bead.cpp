@@ -22,11 +22,18 @@ bool through_bead(const scene::Bead& bead, const Ray& ray, Through& through) noe
     const double a = d.dot(d), middle = -o.dot(d) / a;
     const Vec3 nearest = o + middle * d;  // not b^2 - 4ac, which cancels from afar
     const double half2 = (1.0 - nearest.dot(nearest)) / a;
-    if (half2 < 0.0) continue;
+    if (half2 < 0.0) {
+      if (bead.below >= 1.0f) break;  // the lower half lies within the upper one's mirror image: a miss of that is a miss of both
+      continue;
+    }
     const double half = std::sqrt(half2);
+    if (bead.below == 1.0f) {
+      through = {middle - half, middle + half};
+      return true;
+    }
     for (const double t : {middle - half, middle + half}) {
       const bool above = from.z + t * along.z >= 0.0;
-      if (above != (z_scale == 1.0) && bead.below != 1.0f) continue;
+      if (above != (z_scale == 1.0)) continue;
       through.in = std::min(through.in, t);
       through.out = std::max(through.out, t);
     }
