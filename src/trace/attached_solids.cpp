@@ -207,14 +207,7 @@ struct AttachedSolids::Impl {
     const bool found = user.self->change({user.kind, a->primID}, query->ray, static_cast<double>(rayhit->ray.tnear),
                                          static_cast<double>(rayhit->ray.tfar), false, t);
     embree::report(a, found);
-    if (!found) return;
-    rayhit->ray.tfar = static_cast<float>(t);
-    rayhit->hit.geomID = a->geomID;
-    rayhit->hit.primID = a->primID;
-    rayhit->hit.instID[0] = a->context->instID[0];
-    rayhit->hit.u = rayhit->hit.v = 0.0f;
-    rayhit->hit.Ng_x = rayhit->hit.Ng_y = 0.0f;
-    rayhit->hit.Ng_z = 1.0f;
+    if (found) embree::keep_hit(a, static_cast<float>(t));
   }
 
   static void occluded(const RTCOccludedFunctionNArguments* a) {

@@ -32,4 +32,17 @@ inline RTCRayHit query_of(const Ray& ray) {
   return query;
 }
 
+/// Tells the library of a hit of a user primitive. `u` and `v` are the primitive's to use; its normal is found later.
+inline void keep_hit(const RTCIntersectFunctionNArguments* a, float t, float u = 0.0f, float v = 0.0f) {
+  auto* rayhit = reinterpret_cast<RTCRayHit*>(a->rayhit);
+  rayhit->ray.tfar = t;
+  rayhit->hit.geomID = a->geomID;
+  rayhit->hit.primID = a->primID;
+  rayhit->hit.instID[0] = a->context->instID[0];
+  rayhit->hit.u = u;
+  rayhit->hit.v = v;
+  rayhit->hit.Ng_x = rayhit->hit.Ng_y = 0.0f;
+  rayhit->hit.Ng_z = 1.0f;
+}
+
 }  // namespace whorl::trace::embree

@@ -76,15 +76,8 @@ struct EmbreeSolid::Impl {
     CellHit hit;
     const bool found = self.march(self.set.cell(a->primID), query->ray, rayhit->ray.tnear, rayhit->ray.tfar, hit);
     embree::report(a, found);
-    if (!found) return;
-    rayhit->ray.tfar = hit.t;
-    rayhit->hit.geomID = a->geomID;
-    rayhit->hit.primID = a->primID;
-    rayhit->hit.instID[0] = a->context->instID[0];
-    rayhit->hit.u = static_cast<float>(hit.function);  // which surface, and which air it was met from
-    rayhit->hit.v = static_cast<float>(static_cast<int>(hit.before));
-    rayhit->hit.Ng_x = rayhit->hit.Ng_y = 0.0f;
-    rayhit->hit.Ng_z = 1.0f;
+    // u and v: which surface, and which air it was met from.
+    if (found) embree::keep_hit(a, hit.t, static_cast<float>(hit.function), static_cast<float>(static_cast<int>(hit.before)));
   }
 
   static void occluded(const RTCOccludedFunctionNArguments* a) {

@@ -3,33 +3,14 @@
 #include "triangles_contender.h"
 
 #include "stopwatch.h"
-#include "trace/embree_shim.h"
+#include "trace/embree_ray.h"
 
 #include <atomic>
 #include <cmath>
 #include <limits>
 
 namespace whorl::bench {
-namespace {
-
 namespace embree = trace::embree;
-
-void fill(RTCRay& r, const trace::Ray& ray) {
-  r.org_x = ray.origin.x;
-  r.org_y = ray.origin.y;
-  r.org_z = ray.origin.z;
-  r.dir_x = ray.direction.x;
-  r.dir_y = ray.direction.y;
-  r.dir_z = ray.direction.z;
-  r.tnear = ray.t_min;
-  r.tfar = ray.t_max;
-  r.time = 0.0f;
-  r.mask = 0xFFFFFFFFu;
-  r.id = 0;
-  r.flags = 0;
-}
-
-}  // namespace
 
 struct TrianglesContender::Impl {
   Mesh mesh;
@@ -74,10 +55,7 @@ TrianglesContender::TrianglesContender(Mesh mesh) : impl_(std::make_unique<Impl>
 TrianglesContender::~TrianglesContender() = default;
 
 bool TrianglesContender::closest(const trace::Ray& ray, Found& found) const {
-  RTCRayHit query;
-  fill(query.ray, ray);
-  query.hit.geomID = RTC_INVALID_GEOMETRY_ID;
-  query.hit.instID[0] = RTC_INVALID_GEOMETRY_ID;
+  RTCRayHit query = embree::query_of(ray);
   embree::Payload payload;
   embree::prepare(payload);
   embree::trace_closest(impl_->scene, query, payload);
@@ -90,8 +68,7 @@ bool TrianglesContender::closest(const trace::Ray& ray, Found& found) const {
 }
 
 bool TrianglesContender::occluded(const trace::Ray& ray) const {
-  RTCRay query;
-  fill(query, ray);
+  RTCRay query = embree::ray_of(ray);
   embree::Payload payload;
   embree::prepare(payload);
   embree::trace_any(impl_->scene, query, payload);
